@@ -1,0 +1,225 @@
+"""From plain text data to models: every problem of every document, with its place."""
+
+import difflib
+import re
+from collections.abc import Mapping, Sequence
+from dataclasses import dataclass, replace
+from typing import Any, Protocol, TypeVar
+
+from pydantic import BaseModel, ValidationError
+from pydantic_core import ErrorDetails
+
+from specgen.core.diagnostic import Diagnostic, Path, Span
+from specgen.model.fields import shown
+
+M = TypeVar("M", bound=BaseModel)
+
+
+class Plain(Protocol):
+    """What the reader needs of a source document: plain nested text and where each path stands."""
+
+    @property
+    def file(self) -> str:
+        """Return the file's name as shown in messages."""
+        ...
+
+    @property
+    def line(self) -> int:
+        """Return the line the document starts on."""
+        ...
+
+    @property
+    def data(self) -> Any:  # noqa: ANN401  whatever YAML may hold
+        """Return nested dicts and lists of text."""
+        ...
+
+    @property
+    def spans(self) -> Mapping[Path, Span]:
+        """Return where each value stands."""
+        ...
+
+    @property
+    def key_spans(self) -> Mapping[Path, Span]:
+        """Return where each key stands."""
+        ...
+
+
+@dataclass(frozen=True, slots=True)
+class Problem:
+    """A problem by path, before its place is looked up."""
+
+    path: Path
+    code: str
+    text: str
+    hint: str = ""
+    at_key: bool = False
+
+
+def read_model(model: type[M], data: object, context: Mapping[str, Any] | None = None) -> tuple[M | None, list[Problem]]:
+    """Validate plain data; return the model, or None and every problem found."""
+    try:
+        return model.model_validate(data, context=dict(context or {})), []
+    except ValidationError as error:
+        return None, [_problem_of(model, data, details) for details in error.errors(include_url=False)]
+
+
+def place(document: Plain, problem: Problem, provenance: Mapping[Path, Plain] | None = None) -> Diagnostic:
+    """Turn a problem's path into a place: the value, its key, or the nearest section above it."""
+    path = problem.path
+    origin = document
+    for length in range(len(path), 0, -1):
+        if provenance and path[:length] in provenance:
+            origin = provenance[path[:length]]
+            break
+    for length in range(len(path), -1, -1):
+        at = path[:length]
+        key_first = problem.at_key or (length < len(path) and length > 0)
+        tables = (origin.key_spans, origin.spans) if key_first else (origin.spans, origin.key_spans)
+        for table in tables:
+            if at in table:
+                return Diagnostic(table[at], problem.code, problem.text, problem.hint)
+    return Diagnostic(Span(origin.file, origin.line, 1), problem.code, problem.text, problem.hint)
+
+
+def _problem_of(model: type[BaseModel], data: object, details: ErrorDetails) -> Problem:
+    path = _path_in(data, details["loc"])
+    kind = details["type"]
+    context = details.get("ctx") or {}
+    name = str(path[-1]) if path else "the document"
+    if kind == "specgen":
+        below = tuple(context["at"])
+        return Problem((*path, *below), str(context["code"]), str(context["text"]), str(context["hint"]))
+    if kind == "extra_forbidden":
+        known = _known_keys(model, path[:-1], data)
+        hint = _nearest(name, known, "known here: ")
+        if _AFTER_COMMA.match(name):
+            hint = "inside braces a decimal comma starts a new key: write the number with a point"
+        return Problem(path, "F101", f"'{shown(name)}' is not a key of {_section(path)}", hint, at_key=True)
+    if kind in ("missing", "union_tag_not_found"):
+        missing = name if kind == "missing" else "kind"
+        where = path if kind == "missing" else (*path, "kind")
+        return Problem(where, "F102", f"'{missing}' is missing in {_section(where)}", _missing_hint(model, where, data))
+    if kind in ("literal_error", "union_tag_invalid"):
+        where = path if kind == "literal_error" else (*path, "kind")
+        words = _words(str(context.get("expected") or context.get("expected_tags") or ""))
+        given = str(context.get("tag", details.get("input", "")))
+        return Problem(where, "F107", f"'{shown(given)}' is not one of the words of {where[-1]}", _nearest(given, words, "one of: "))
+    if kind in ("model_type", "model_attributes_type", "dict_type", "dataclass_type"):
+        return Problem(path, "F108", f"{name} is a section of keys, not a single value or list", _keys_hint(model, path, data))
+    if kind in ("tuple_type", "list_type"):
+        return Problem(path, "F109", f"{name} is a list", "write it with brackets or one item a line after a dash")
+    if kind == "too_long":
+        return Problem(path, "F111", f"{name} has more items than the {context.get('max_length')} that are read")
+    if kind == "too_short":
+        return Problem(path, "F111", f"{name} needs at least {context.get('min_length')} item")
+    if kind.startswith("date"):
+        return Problem(path, "F112", f"'{shown(str(details.get('input')))}' is no date", "write year-month-day, for example 2026-11-20")
+    if kind == "string_pattern_mismatch":
+        return Problem(path, "F113", f"'{shown(str(details.get('input')))}' cannot be used as {name}",
+                       "letters, digits, '-' and '.', ten at most, for example A or P2")
+    return Problem(path, "F199", f"{name}: {shown(details['msg'], 200)}")
+
+
+def _path_in(data: object, loc: Sequence[str | int]) -> Path:
+    """Drop from pydantic's location what is not in the data (names of union members, field names behind an alias)."""
+    path: list[str | int] = []
+    here: object = data
+    for index, step in enumerate(loc):
+        last = index == len(loc) - 1
+        if _has(here, step):
+            here = here[step]  # type: ignore[index]  # _has looked
+            path.append(step)
+        elif last and isinstance(here, dict):
+            if step in _TAGS:
+                continue
+            path.append(step)
+    return tuple(path)
+
+
+_AFTER_COMMA = re.compile(r"[0-9]+(\s|$)")
+_TAGS = frozenset({"function-after", "function-before"})
+
+
+def _section(path: Path) -> str:
+    names = [str(step) for step in path[:-1] if isinstance(step, str)]
+    return names[-1] if names else "the document"
+
+
+def _words(expected: str) -> list[str]:
+    return [word.strip().strip("'") for word in expected.replace(" or ", ", ").split(",") if word.strip()]
+
+
+def _nearest(name: str, known: Sequence[str], otherwise: str) -> str:
+    lowered = {word.lower(): word for word in known}
+    found = difflib.get_close_matches(str(name).lower().replace(" ", "_").replace("-", "_"), list(lowered), n=1, cutoff=0.6)
+    if found:
+        return f"did you mean {lowered[found[0]]}?"
+    return otherwise + ", ".join(known) if known else ""
+
+
+def _model_at(model: type[BaseModel], path: Path, data: object) -> type[BaseModel] | None:
+    """Return the model of a section, following unions by the section's own kind."""
+    here: type[BaseModel] | None = model
+    value: object = data
+    for step in path:
+        value = value[step] if _has(value, step) else None  # type: ignore[index]  # _has looked
+        if isinstance(step, int) or here is None:
+            continue
+        field = next((f for n, f in here.model_fields.items() if step in (n, f.alias)), None)
+        here = _member(field.annotation if field else None, value)
+    return here
+
+
+def _has(value: object, step: str | int) -> bool:
+    if isinstance(value, dict):
+        return step in value
+    return isinstance(value, list) and isinstance(step, int) and step < len(value)
+
+
+def _member(annotation: object, value: object) -> type[BaseModel] | None:
+    models = _models_in(annotation)
+    if len(models) < 2:  # noqa: PLR2004  one model needs no choice
+        return models[0] if models else None
+    kind = value.get("kind") if isinstance(value, dict) else None
+    for candidate in models:
+        field = candidate.model_fields.get("kind")
+        if field is not None and kind in getattr(field.annotation, "__args__", ()):
+            return candidate
+    return None
+
+
+def _models_in(annotation: object) -> list[type[BaseModel]]:
+    if isinstance(annotation, type) and issubclass(annotation, BaseModel):
+        return [annotation]
+    found: list[type[BaseModel]] = []
+    for part in getattr(annotation, "__args__", ()):
+        found += _models_in(part)
+    return found
+
+
+def _known_keys(model: type[BaseModel], path: Path, data: object) -> list[str]:
+    at = _model_at(model, path, data)
+    hidden = ("unit", "difference_unit") if at is model else ()
+    return [f.alias or name for name, f in at.model_fields.items() if name not in hidden] if at else []
+
+
+def _keys_hint(model: type[BaseModel], path: Path, data: object) -> str:
+    at = _model_at(model, path, data)
+    known = [f.alias or n for n, f in at.model_fields.items() if f.is_required()] if at else []
+    return f"it needs {', '.join(known)}" if known else ""
+
+
+def _missing_hint(model: type[BaseModel], path: Path, data: object) -> str:
+    at = _model_at(model, path[:-1], data)
+    field = next((f for n, f in at.model_fields.items() if path[-1] in (n, f.alias)), None) if at else None
+    for part in field.metadata if field else ():
+        example = getattr(part, "example", None)
+        if callable(example):
+            return f"for example {path[-1]}: {example({})}"
+    words = [w for w in getattr(field.annotation if field else None, "__args__", ()) if isinstance(w, str)]
+    return f"one of: {', '.join(words)}" if words else ""
+
+
+def renamed(problem: Problem, path: Path) -> Problem:
+    """Return the problem at another path."""
+    return replace(problem, path=path)
