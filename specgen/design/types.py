@@ -1,0 +1,113 @@
+"""What a decided loop and a whole design are."""
+
+from dataclasses import dataclass
+from typing import Literal
+
+from specgen.core.diagnostic import Diagnostic
+from specgen.core.figure import Figure
+from specgen.core.say import Speaker
+from specgen.model.loop import Loop
+from specgen.model.loops import ReadLoop
+from specgen.model.panel import Panel
+from specgen.model.traits import Traits
+from specgen.process.box import Box, Unmodelled
+from specgen.rules.base import Case, Finding
+from specgen.sizing.candidate import Assumption
+
+Verdict = Literal["meets", "deviates", "open", "held"]
+VERDICTS: tuple[Verdict, ...] = ("held", "open", "deviates", "meets")
+
+
+@dataclass(frozen=True, slots=True)
+class Examined:
+    """A candidate with everything computed for it and every rule's finding."""
+
+    case: Case
+    findings: tuple[Finding, ...]
+
+
+@dataclass(frozen=True, slots=True)
+class Rejected:
+    """A candidate that was not taken, with the rules that ended it (never empty) and the sentence that says so."""
+
+    examined: Examined
+    ruled_out_by: tuple[str, ...]
+    text: str
+
+
+@dataclass(frozen=True, slots=True)
+class Decision:
+    """The candidate taken, why it is the one, and every other that was considered."""
+
+    chosen: Examined
+    because: str
+    rejected: tuple[Rejected, ...]
+    by_designer: bool
+
+
+@dataclass(frozen=True, slots=True)
+class Missing:
+    """An input that is not there: its path, the rules it would settle, and how to get it."""
+
+    field: str
+    settles: tuple[str, ...]
+    how: str
+
+
+@dataclass(frozen=True, slots=True)
+class DecidedLoop:
+    """One loop, decided.
+
+    ``findings`` are the chosen candidate's, overrides marked; ``assumptions`` everything taken for granted;
+    ``basis`` every number shown anywhere, in the order of the calculation.
+    """
+
+    read: ReadLoop
+    traits: Traits
+    box: Box | Unmodelled
+    decision: Decision
+    findings: tuple[Finding, ...]
+    verdict: Verdict
+    assumptions: tuple[Assumption, ...]
+    missing: tuple[Missing, ...]
+    basis: tuple[Figure, ...]
+
+    @property
+    def loop(self) -> Loop:
+        """Return the loop as declared."""
+        return self.read.loop
+
+    @property
+    def tag(self) -> str:
+        """Return the loop's tag."""
+        return self.read.loop.tag
+
+    @property
+    def speaker(self) -> Speaker:
+        """Return what writes numbers in this loop's units."""
+        return Speaker(self.read.loop.unit, self.read.loop.difference_unit)
+
+
+@dataclass(frozen=True, slots=True)
+class SourceFile:
+    """A file the dossier was made from."""
+
+    name: str
+    content: bytes
+
+
+@dataclass(frozen=True, slots=True)
+class Design:
+    """The whole panel: every loop that could be read, decided, and every problem of the rest.
+
+    ``panel`` is None where panel.yml itself could not be read: then there are problems and no loops.
+    ``rules_digest`` and ``catalogue_digest`` change when a rule or a table changes.
+    """
+
+    panel: Panel | None
+    loops: tuple[DecidedLoop, ...]
+    problems: tuple[Diagnostic, ...]
+    sources: tuple[SourceFile, ...]
+    rules_digest: str
+    catalogue_digest: str
+    verdict: Verdict
