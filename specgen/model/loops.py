@@ -1,7 +1,7 @@
 """Reading all loop documents together: tags, ``same_as``, the loop's own quantity, and the models."""
 
 import re
-from collections.abc import Mapping, Sequence
+from collections.abc import Iterator, Mapping, Sequence
 from dataclasses import dataclass
 from pathlib import PurePosixPath
 from typing import Any
@@ -70,8 +70,8 @@ def read_loops(documents: Sequence[Plain]) -> Reading:
             continue
         loop, found = _read_one(document, merged)
         problems += [place(document, fault, merged.taken) for fault in found]
-        if loop is not None:
-            loops.append(ReadLoop(loop, document.file, document.line, _spans(document, merged), frozenset(merged.taken)))
+        if loop is not None and document.sound and all(origin.sound for origin in merged.taken.values()):
+            loops.append(ReadLoop(loop, document.file, document.line, Places(document.spans, merged.taken), frozenset(merged.taken)))
     ordered = sorted(loops, key=lambda read: (read.loop.area.lower(), read.loop.tag.lower()))
     return Reading(tuple(ordered), tuple(sorted(set(problems))))
 
@@ -169,12 +169,29 @@ def _named(
             "because": f"; the loop's quantity is {quantity}"}
 
 
-def _spans(document: Plain, merged: Merged) -> dict[Path, Span]:
-    spans = {path: span for path, span in document.spans.items() if path and path not in merged.taken}
-    for path, origin in merged.taken.items():
-        if path in origin.spans:
-            spans[path] = origin.spans[path]
-    return spans
+class Places(Mapping[Path, Span]):
+    """Where each field of a loop stands, in its own document or in the one it was taken from; made when asked for."""
+
+    __slots__ = ("_own", "_taken")
+
+    def __init__(self, own: Mapping[Path, Span], taken: Mapping[Path, Plain]) -> None:
+        self._own = own
+        self._taken = taken
+
+    def __getitem__(self, path: Path) -> Span:
+        """Return the place of a field."""
+        origin = self._taken.get(path)
+        return self._own[path] if origin is None else origin.spans[path]
+
+    def __iter__(self) -> Iterator[Path]:
+        yield from (path for path in self._own if path and path not in self._taken)
+        yield from self._taken
+
+    def __len__(self) -> int:
+        return sum(1 for _ in self)
+
+    def __contains__(self, path: object) -> bool:
+        return path in self._own or path in self._taken
 
 
 __all__ = ["ReadLoop", "Reading", "read_loops"]

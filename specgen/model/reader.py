@@ -39,6 +39,11 @@ class Plain(Protocol):
         ...
 
     @property
+    def sound(self) -> bool:
+        """Tell whether the text was read without a problem; nothing is decided on a document that was not."""
+        ...
+
+    @property
     def key_spans(self) -> Mapping[Path, Span]:
         """Return where each key stands."""
         ...
