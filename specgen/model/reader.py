@@ -76,6 +76,8 @@ def place(document: Plain, problem: Problem, provenance: Mapping[Path, Plain] | 
         if provenance and path[:length] in provenance:
             origin = provenance[path[:length]]
             break
+        if path[:length] in document.spans or path[:length] in document.key_spans:
+            break
     for length in range(len(path), -1, -1):
         at = path[:length]
         key_first = problem.at_key or (length < len(path) and length > 0)
