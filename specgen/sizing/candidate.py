@@ -48,3 +48,8 @@ class Assumption:
 
 
 ControllerOutputKind = Literal["relay", "logic", "analogue", "relay_pair"]
+
+
+@dataclass(frozen=True, slots=True)
+class NoCandidate(Unsized):
+    """The pair is not considered at all: nobody would wire it (a relay for a motor)."""
