@@ -42,7 +42,7 @@ def cycle_course(plant: ProcessModel, cycle: Cycle, n: int = 200) -> Course:
     >>> cycle = plant.limit_cycle(high=1, low=-1)
     >>> course = cycle_course(plant, cycle)
     >>> round(max(course.value), 3), round(cycle.peak, 3), course.output[0], round(course.measured[0], 9)
-    (5.585, 5.585, 1, -1.0)
+    (5.584, 5.584, 1, -1.0)
     """
     on, period = cycle.t_on, cycle.period
     turns = [(plant.theta + edge) % period + turn * period for turn in (0, 1) for edge in (0.0, on)]

@@ -198,6 +198,9 @@ def attracts(relay: Relay, a: float, b: float, *, run_fixed: bool, rest_fixed: b
 Matrix = np.ndarray[tuple[int, int], np.dtype[np.float64]]
 
 
+Matrix = np.ndarray[tuple[int, int], np.dtype[np.float64]]
+
+
 def _through(relay: Relay, before: float, length: float, share: float | None, *, fixed: bool) -> Matrix:
     """Return how a small change of the coordinates passes one phase."""
     crossing = length - relay.theta
