@@ -185,8 +185,9 @@ def attracts(relay: Relay, a: float, b: float, *, run_fixed: bool, rest_fixed: b
     Notes
     -----
     With ``E`` the decay over a phase, ``d`` the coordinates' speed at its end and ``h`` what they have left of the measurement at the
-    crossing, a phase that ends by its crossing maps a small change by ``E - d h/(m')``, one of fixed length by ``E``. All multipliers of the whole cycle must be below 0.9: just
-    below 1 a second, alternating pattern can live beside the cycle, and that is the one a start from rest falls into.
+    crossing, a phase that ends by its crossing maps a small change by ``E - d h/(m')``, one of fixed length by ``E``. All multipliers of
+    the whole cycle must be below 0.9: just below 1 a second, alternating pattern can live beside the cycle, and that is the one a start
+    from rest falls into.
     """
     share = None if relay.duty is None else a / (a + b)
     through = _through(relay, b, a, share, fixed=run_fixed)

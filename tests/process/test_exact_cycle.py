@@ -107,9 +107,10 @@ def test_sensor_hides_swing():
 @settings(max_examples=60, deadline=None)
 @given(**DRAWN, factor=st.floats(1.0, 1.5))
 def test_larger_differential_never_switches_faster(factor, **parts):
-    plant, high, low, run, rest = drawn(**parts)
-    wider = plant.limit_cycle(high * factor, low * factor, run, rest)
-    assert wider.period >= plant.limit_cycle(high, low, run, rest).period * (1 - 1e-7)
+    """Without least times: with them, alternating cycles can mend at a wider differential and shorten the mean by a few thousandths."""
+    plant, high, low, _, _ = drawn(**parts)
+    wider = plant.limit_cycle(high * factor, low * factor)
+    assert wider.period >= plant.limit_cycle(high, low).period * (1 - 1e-7)
 
 
 @settings(max_examples=60, deadline=None)
