@@ -25,7 +25,8 @@ class QuantityError(ValueError):
         super().__init__(code, text, hint)
         self.code = code
         self.text = text
-        self.hint = hint
+        # a hint repeats what was written, which may hold anything
+        self.hint = _printable(hint)
 
     def __str__(self) -> str:
         """Return the sentence without code and hint."""
@@ -40,5 +41,8 @@ def shown(text: str, longest: int = 40) -> str:
     >>> shown("6 bra")
     "'6 bra'"
     """
-    cut = text if len(text) <= longest else text[: longest - 3] + "..."
-    return "'" + "".join(letter if letter.isprintable() else "?" for letter in cut) + "'"
+    return "'" + _printable(text if len(text) <= longest else text[: longest - 3] + "...") + "'"
+
+
+def _printable(text: str) -> str:
+    return "".join(letter if letter.isprintable() else " " if letter.isspace() else "?" for letter in text)

@@ -47,9 +47,7 @@ _ROWS = (
     Dimension("mass", "kg", "a mass", "60 kg", "not_negative", ("kg", "g", "t", "lb")),
     Dimension("density", "kg/m3", "a density", "998 kg/m3", "positive", ("kg/m3", "kg/l", "lb/ft3")),
     Dimension("heat_capacity", "J/K", "a heat capacity", "60 kJ/K", "not_negative", ("kJ/K", "J/K", "MJ/K", "Btu/degF")),
-    Dimension(
-        "specific_heat", "J/(kg K)", "a specific heat", "4.2 kJ/(kg K)", "positive", ("kJ/(kg K)", "J/(kg K)", "Btu/(lb degF)")
-    ),
+    Dimension("specific_heat", "J/(kg K)", "a specific heat", "4.2 kJ/(kg K)", "positive", ("kJ/(kg K)", "J/(kg K)", "Btu/(lb degF)")),
     Dimension("u_value", "W/(m2 K)", "a heat transfer coefficient", "1.1 W/(m2 K)", "not_negative", ("W/(m2 K)", "Btu/(h ft2 degF)")),
     Dimension("loss", "W/K", "a heat loss per kelvin", "35 W/K", "not_negative", ("W/K", "kW/K", "Btu/(h degF)")),
     Dimension("thermal_resistance", "K/W", "a thermal resistance", "0.5 K/W", "not_negative", ("K/W", "K/kW")),

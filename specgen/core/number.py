@@ -15,6 +15,7 @@ _NUMBER = re.compile(
     rf"(?=[\s{_UNIT_START}]|$)\s*(?P<rest>.*)",
     re.DOTALL,
 )
+_NO_UNIT = re.compile(rf"[^({_UNIT_START}]")
 _COMMA = re.compile(r"[-+−]?[0-9.]*,[0-9]+")
 _THOUSANDS = re.compile(r"[-+−]?[0-9]{1,3}(?:,[0-9]{3})+(?![0-9])")
 _GROUPED = re.compile(r"[-+−]?[0-9]+(?:[\s'_’][0-9]+)+")
@@ -49,8 +50,8 @@ def number_and_rest(text: str) -> Number:
     if found is None:
         raise _refusal(text.strip())
     number, sign, whole, part, power, rest = found.groups()
-    if rest[:1] in "0123456789" and rest:
-        raise _refusal(text.strip())
+    if rest and (_NO_UNIT.match(rest) or " - " in rest):
+        raise _refusal(text.strip(), rest)
     if len(number) > _LONGEST:
         raise QuantityError("Q112", f"the number {shown(number)} is longer than {_LONGEST} characters", "fewer digits say as much")
     exponent = int(power.replace("−", "-")) if power else 0
@@ -62,7 +63,7 @@ def number_and_rest(text: str) -> Number:
     return Number(-digits if sign in ("-", "−") else digits, exponent, rest)
 
 
-def _refusal(text: str) -> QuantityError:
+def _refusal(text: str, rest: str = "") -> QuantityError:
     """Find out which other form of a number was written, and say how to write it."""
     quoted = shown(text)
     if _THOUSANDS.match(text):
@@ -75,15 +76,14 @@ def _refusal(text: str) -> QuantityError:
         if plain.startswith("."):
             plain = "0" + plain
         return QuantityError("Q103", f"{quoted} has a decimal comma; write a point", f"write {text.replace(comma, plain, 1)}")
-    return _other_form(text, quoted)
+    return _other_form(text, quoted, rest)
 
 
-def _other_form(text: str, quoted: str) -> QuantityError:
+def _other_form(text: str, quoted: str, rest: str) -> QuantityError:
     grouped, dash, either, point = _GROUPED.match(text), _DASH.match(text), _PLUS_MINUS.match(text), _BARE_POINT.match(text)
     if dash is not None:
         unit = f" {dash['unit']}" if dash["unit"] else ""
-        rest = text[dash.end() :]
-        spread = f"write {dash['low']}{unit} to {dash['high']}{rest}"
+        spread = f"write {dash['low']}{unit} to {dash['high']}{text[dash.end() :]}"
         return QuantityError("Q111", f"{quoted} is no number; a range is written with `to`", spread)
     if grouped is not None:
         together = re.sub(r"[\s'_’]", "", grouped[0])
@@ -96,6 +96,8 @@ def _other_form(text: str, quoted: str) -> QuantityError:
         return QuantityError("Q102", f"{quoted} has a point without digits on both sides", f"write {plain}{text[point.end() :]}")
     if _SUM.match(text):
         return QuantityError("Q113", f"{quoted} is a calculation, a fraction or a time of day", "write the one number it comes to")
+    if rest:
+        return QuantityError("Q106", f"{shown(rest)} is no unit", "write for example 1.5 K")
     return QuantityError("Q102", f"{quoted} does not start with a number", "write for example 1.5 K")
 
 

@@ -5,6 +5,7 @@ import re
 from dataclasses import dataclass
 from fractions import Fraction
 from functools import lru_cache
+from itertools import product
 from typing import TYPE_CHECKING
 
 from specgen.core.codes import QuantityError, shown
@@ -15,6 +16,7 @@ if TYPE_CHECKING:
 
 _LONGEST = 40
 _HIGHEST_POWER = 4
+_MOST_REPAIRED = 3
 
 # Spelling -> pint's name. Only these are units; pint's own reading of text is never asked, so that `6 M` or
 # `3 a` cannot become something nobody meant.
@@ -188,11 +190,15 @@ def right_spelling(written: str, dimension: Dimension) -> str:
         names = [name for name, _ in split_unit(written) if name not in _SPELLINGS]
     except QuantityError:
         return ""
-    repaired = [plain_unit(written)]
-    for name in names[:3]:
-        repaired = [text.replace(name, other) for text in repaired for other in _near(name)]
-    fitting = [text for text in repaired if fits(text, dimension)]
-    return " or ".join(dict.fromkeys(fitting[:3]))
+    choices = [[(name, other) for other in _near(name)] for name in dict.fromkeys(names)]
+    if len(choices) > _MOST_REPAIRED:
+        return ""
+    repaired = (_with_atoms(plain_unit(written), dict(choice)) for choice in product(*choices))
+    return " or ".join(dict.fromkeys(text for text in repaired if fits(text, dimension)))
+
+
+def _with_atoms(written: str, others: dict[str, str]) -> str:
+    return _SPLIT_ATOM.sub(lambda found: others.get(found["name"], found["name"]) + (found["power"] or ""), written)
 
 
 def _near(name: str) -> list[str]:
