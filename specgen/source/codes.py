@@ -1,0 +1,26 @@
+"""What each code of a reading problem means."""
+
+SOURCE_CODES = {
+    "Y101": "A file or folder cannot be read.",
+    "Y102": "A file is larger than 1 MiB.",
+    "Y103": "A file is not UTF-8 text.",
+    "Y104": "A control character stands in the text, or an escape that stands for one.",
+    "Y105": "Nothing is written in the file.",
+    "Y106": "The text is no readable YAML; the document is left out, the others in the file are kept.",
+    "Y107": "A tab stands where blanks must indent.",
+    "Y108": "A key is written twice in one section; the first is kept.",
+    "Y109": "Sections and lists are nested deeper than 32 levels.",
+    "Y110": "Aliases expand beyond 10,000 nodes, or an alias stands inside the node it refers to.",
+    "Y111": "A YAML tag (`!` or `!!`) is refused.",
+    "Y112": "A merge key (`<<`) is refused: `same_as` takes over another loop's fields.",
+    "Y113": "A key is not plain text.",
+    "Y114": "A key or a list item has no value.",
+    "Y115": "A document is not made of `key: value` lines.",
+    "Y116": "An alias refers to nothing that was written before it.",
+    "Y117": "A `%` directive is refused.",
+    "Y118": "The folder has no panel.yml.",
+    "Y119": "A file that holds one document holds more.",
+    "Y120": "A file would be passed over because of its name or its place.",
+    "Y121": "A line that starts with `- ` continues the text above it instead of being a list item.",
+    "Y122": "Text is cut at ` #` where a number follows, as in `Pump #2` (a warning).",
+}
