@@ -1,7 +1,10 @@
 """The dimensions a field can have: base unit, example, sign and usual units, one row each."""
 
+import re
 from dataclasses import dataclass
 from typing import Literal
+
+from specgen.core.codes import QuantityError, shown
 
 Sign = Literal["any", "not_negative", "positive"]
 
@@ -25,6 +28,8 @@ class Dimension:
     label: str = ""
 
 
+# starts as every unit does; `to` and `absolute` have a meaning of their own behind a number
+_LABEL = re.compile(r"(?!to$|absolute$)[A-Za-z%°\u00b5\u03bc\u03a9\u2126℃℉][^\s]{0,19}")
 _GAUGE = "gauge, unless `absolute` follows the unit"
 _APPARENT = "VA is read as W, as if the power factor were 1"
 
@@ -82,11 +87,18 @@ def own_dimension(label: str, *, rate: bool = False) -> Dimension:
 
     Such a unit stands for itself: the number is kept as written (a rate: per second), and no other unit is taken.
 
+    Raises
+    ------
+    QuantityError
+        Q106: the unit starts with no letter, holds a blank, or is longer than 20 characters.
+
     Examples
     --------
     >>> own_dimension("pH").example, own_dimension("pH", rate=True).example
     ('5 pH', '5 pH/min')
     """
+    if _LABEL.fullmatch(label) is None or not label.isprintable():
+        raise QuantityError("Q106", f"{shown(label)} cannot be a unit", "write it without blanks, letter first: pH, mS/cm, ppm")
     if rate:
         units = tuple(f"{label}/{time}" for time in ("min", "s", "h"))
         return Dimension(f"own_rate:{label}", f"{label}/s", f"a rate in {label}", f"5 {label}/min", "not_negative", units, label=label)

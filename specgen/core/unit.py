@@ -186,10 +186,7 @@ def right_spelling(written: str, dimension: Dimension) -> str:
     >>> right_spelling("KW", DIMENSIONS["power"]), right_spelling("degc", DIMENSIONS["temperature"])
     ('kW', 'degC')
     """
-    try:
-        names = [name for name, _ in split_unit(written) if name not in _SPELLINGS]
-    except QuantityError:
-        return ""
+    names = [name for name, _ in split_unit(written) if name not in _SPELLINGS]
     choices = [[(name, other) for other in _near(name)] for name in dict.fromkeys(names)]
     if len(choices) > _MOST_REPAIRED:
         return ""

@@ -4,11 +4,13 @@ import copy
 import pickle
 
 import pytest
+import yaml
 
 from specgen.core.diagnostic import Span
 from specgen.source import read_bytes, read_table, read_text, span_of
 from specgen.source.codes import SOURCE_CODES
 from specgen.source.parser import PlainParser, parser_for
+from specgen.source.wording import plain_words
 
 
 @pytest.fixture(params=["installed", "plain"])
@@ -73,6 +75,7 @@ class TestData:
     def test_place_of_a_missing_field_is_its_section_s_key(self):
         document = read_text("tag: T\nneed:\n  setpoint: 65 degC\nplant: [a]\n", "a.yml")[0][0]
         assert span_of(document, ("need", "tolerance", "above")) == Span("a.yml", 2, 1, 4)
+        assert span_of(document, ("plant", 0, "what")) == Span("a.yml", 4, 9, 1)
         assert span_of(document, ("plant", 3)) == Span("a.yml", 4, 1, 5)
         assert span_of(document, ("sensor", "kind")) == document.spans[()]
         assert span_of(document, ("need", "setpoint")) == Span("a.yml", 3, 13, 7)
@@ -288,3 +291,14 @@ def test_a_document_survives_pickle_and_copy():
 def test_each_code_has_one_sentence():
     assert len(set(SOURCE_CODES.values())) == len(SOURCE_CODES)
     assert all(sentence.endswith(".") for sentence in SOURCE_CODES.values())
+
+
+def test_an_error_without_a_place_is_placed_at_the_document():
+    problem = plain_words(yaml.YAMLError("odd"), ["a"], "a.yml", 7)
+    assert problem.line() == "a.yml:7:1: error Y106: the text cannot be read as YAML"
+
+
+def test_an_error_that_the_table_does_not_know_is_repeated():
+    mark = yaml.Mark("a", 0, 0, 0, None, None)
+    problem = plain_words(yaml.MarkedYAMLError("while dreaming", None, "an odd thing was met", mark), ["a"], "a.yml", 7)
+    assert problem.text == "this is no readable YAML (while dreaming an odd thing was met)"
