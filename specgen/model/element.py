@@ -31,7 +31,7 @@ OnLoss = Literal["close", "open", "hold"]
 Flow = Annotated[Range, Written("flow", may_range=True, sign="positive")]
 Kvs = Annotated[Range, Written("kv", may_range=True, sign="positive")]
 Density = Annotated[Range, Written("density", may_range=True, sign="positive")]
-Speed = Annotated[Quantity, Written("fraction", sign="positive")]
+Speed = Annotated[Quantity, Written("fraction", sign="positive", most=1.0)]
 
 
 class _Element(Model):
@@ -40,10 +40,10 @@ class _Element(Model):
     @model_validator(mode="after")
     def _some(self) -> "_Element":
         if self.count < 1:
-            raise problem("F150", "at least one unit is needed", at=("count",))
+            raise problem("F150", "at least one unit is needed", "leave count out where there is one", at=("count",))
         phases = getattr(self, "phases", None)
         if phases not in (None, 1, 3):
-            raise problem("F151", f"{phases} phases; 1 or 3 are possible", at=("phases",))
+            raise problem("F151", f"{phases} phases; 1 or 3 are possible", "write 1 or 3", at=("phases",))
         return self
 
 
@@ -125,7 +125,7 @@ class VariableSpeedMachine(_Element):
         if self.kind != "variable_speed_compressor":
             for name in ("refrigerant_circuit", "high_pressure_cutout"):
                 if getattr(self, name) is not None:
-                    raise problem("F101", f"{name} belongs to a compressor only", at=(name,))
+                    raise problem("F101", f"{name} belongs to a compressor only", "leave it out", at=(name,))
         return self
 
 

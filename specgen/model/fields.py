@@ -60,12 +60,14 @@ class Written:
     """Metadata of a quantity field: its dimension, whether a range may stand there, and its sign.
 
     ``dimension`` is a name of ``specgen.core.dimension`` or one of ``LOOP_DIMENSIONS``, which stand for the
-    dimension of the loop's own measured value, a difference of it, or its rate of change.
+    dimension of the loop's own measured value, a difference of it, or its rate of change. ``most`` is the largest
+    number that can be meant, in base units.
     """
 
     dimension: str
     may_range: bool = False
     sign: Sign | None = None
+    most: float | None = None
 
     def read(self, given: object, context: dict[str, Any]) -> Quantity | Range:
         """Turn the text into a quantity, or raise the field's error."""
@@ -81,12 +83,19 @@ class Written:
         first: QuantityError | None = None
         for name in FLOWS if dimension == "flow" else (dimension,):
             try:
-                return read(given, name, sign=self.sign)
+                found = read(given, name, sign=self.sign)
             except QuantityError as error:
                 first = first or error
+                continue
+            return self._within(found, given)
         assert first is not None  # noqa: S101  at least one dimension was tried
         because = context.get("because", "") if self.dimension in LOOP_DIMENSIONS and first.code == WRONG_DIMENSION else ""
         raise problem(first.code, first.text + because, first.hint)
+
+    def _within(self, found: Quantity | Range, given: str) -> Quantity | Range:
+        if self.most is not None and (found.high if isinstance(found, Range) else found) > self.most:
+            raise problem("F115", f"'{shown(given)}' is more than the whole", "100 percent is the most that can be meant")
+        return found
 
     def example(self, context: dict[str, Any]) -> str:
         """Return an example of what may stand in the field."""
@@ -132,7 +141,7 @@ def _read_number(text: str, _context: dict[str, Any]) -> Quantity:
         raise problem("F104", f"'{shown(text)}' is no plain number", hint)
     number = float(text)
     if not math.isfinite(number) or number <= 0:
-        raise problem("F104", f"'{shown(text)}' is no number above zero that can be computed with")
+        raise problem("F104", f"'{shown(text)}' is no number above zero that can be computed with", "for example 1.0e6")
     return Quantity(number, text)
 
 
@@ -140,7 +149,7 @@ def _read_text(text: str, _context: dict[str, Any]) -> str:
     if not text:
         raise problem("F105", "nothing stands here", "write a text or leave the key out")
     if len(text) > MOST_TEXT:
-        raise problem("F105", f"the text is {len(text)} characters long; {MOST_TEXT} are the most")
+        raise problem("F105", f"the text is {len(text)} characters long; {MOST_TEXT} are the most", "put long texts on a page of your own")
     return text
 
 
@@ -166,6 +175,7 @@ Current = Annotated[Quantity, Written("current", sign="positive")]
 Resistance = Annotated[Quantity, Written("resistance", sign="positive")]
 Length = Annotated[Quantity, Written("length", sign="positive")]
 Fraction = Annotated[Quantity, Written("fraction", sign="positive")]
+Share = Annotated[Quantity, Written("fraction", sign="positive", most=1.0)]
 FractionOrNone = Annotated[Quantity, Written("fraction", sign="not_negative")]
 # in the loop's own quantity
 Value = Annotated[Quantity, Written("value")]

@@ -35,7 +35,7 @@ class Limits(Model):
         for low, high in (("danger_low", "danger_high"), ("spoils_low", "spoils_high")):
             below, above = getattr(self, low), getattr(self, high)
             if below is not None and above is not None and below >= above:
-                raise problem("F140", f"{low} {below.text} is not below {high} {above.text}", at=(low,))
+                raise problem("F140", f"{low} {below.text} is not below {high} {above.text}", "swap the two", at=(low,))
         return self
 
 

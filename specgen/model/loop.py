@@ -4,9 +4,9 @@ from typing import Annotated, Literal
 
 from pydantic import Field, model_validator
 
-from specgen.core.quantity import Quantity, Range, Unit
+from specgen.core.quantity import Quantity, Range, Unit, is_a
 from specgen.model.element import Element
-from specgen.model.fields import Change, Count, Fraction, Model, Power, Text, Time, Value, ValueRange, Written, problem
+from specgen.model.fields import Change, Count, Model, Power, Share, Text, Time, Value, ValueRange, Written, problem
 from specgen.model.limits import Alarms, Cable, Limits
 from specgen.model.plant import Plant
 from specgen.model.sensor import Sensor
@@ -26,9 +26,9 @@ class Duty(Model):
     @model_validator(mode="after")
     def _within(self) -> "Duty":
         if self.hours_per_day > 24 * 3600:
-            raise problem("F160", "a day has 24 hours", at=("hours_per_day",))
+            raise problem("F160", "a day has 24 hours", "write at most 24 h", at=("hours_per_day",))
         if not 1 <= self.days_per_year <= LEAP_YEAR:
-            raise problem("F160", "a year has 1 to 366 days", at=("days_per_year",))
+            raise problem("F160", "a year has 1 to 366 days", "write for example 250", at=("days_per_year",))
         return self
 
     @property
@@ -38,17 +38,40 @@ class Duty(Model):
 
 
 class Tolerance(Model):
-    """How far the true value may leave the setpoint on each side."""
+    """How far the true value may leave the setpoint on each side; one quantity stands for both."""
 
     above: Change
     below: Change
+
+    @model_validator(mode="before")
+    @classmethod
+    def _both_sides(cls, data: object) -> object:
+        if isinstance(data, list):
+            raise problem("F106", "a difference, or a section of above and below, is expected here",
+                          "for example 1.5 K or {above: 2 K, below: 0.5 K}")
+        return {"above": data, "below": data} if isinstance(data, str) else data
 
 
 class SuddenLoad(Model):
     """The largest sudden change of load: a heat flow, or a share of full output."""
 
     power: Power | None = None
-    share: Fraction | None = None
+    share: Share | None = None
+
+    @model_validator(mode="before")
+    @classmethod
+    def _by_unit(cls, data: object) -> object:
+        if isinstance(data, list):
+            raise problem("F106", "a power or a share of full output is expected here", "for example 0.3 kW or 10 percent")
+        if not isinstance(data, str):
+            return data
+        return {"share": data} if is_a(data, "fraction") else {"power": data}
+
+    @model_validator(mode="after")
+    def _one(self) -> "SuddenLoad":
+        if (self.power is None) == (self.share is None):
+            raise problem("F164", "exactly one of power and share is needed", "for example sudden_load: 0.3 kW")
+        return self
 
 
 class Need(Model):
@@ -65,23 +88,11 @@ class Need(Model):
     sudden_load: SuddenLoad | None = None
     duty: Duty | None = None
 
-    @model_validator(mode="before")
-    @classmethod
-    def _short_forms(cls, data: object) -> object:
-        if not isinstance(data, dict):
-            return data
-        made = dict(data)
-        if isinstance(made.get("tolerance"), str):
-            made["tolerance"] = {"above": made["tolerance"], "below": made["tolerance"]}
-        load = made.get("sudden_load")
-        if isinstance(load, str):
-            made["sudden_load"] = {"share": load} if load.rstrip().endswith(("%", "percent")) else {"power": load}
-        return made
-
     @model_validator(mode="after")
     def _inside(self) -> "Need":
         if self.range is not None and not self.range.low <= self.setpoint <= self.range.high:
-            raise problem("F161", f"the setpoint {self.setpoint.text} lies outside the range {self.range.text}", at=("setpoint",))
+            raise problem("F161", f"the setpoint {self.setpoint.text} lies outside the range {self.range.text}",
+                          "the range holds every setpoint the plant is run at", at=("setpoint",))
         return self
 
     @property
@@ -135,7 +146,8 @@ class Loop(Model):
         span = self.need.setpoints
         if self.limits.danger_high is not None and self.limits.danger_high <= span.high:
             raise problem("F162", f"danger_high {self.limits.danger_high.text} is not above the highest setpoint",
-                          at=("limits", "danger_high"))
+                          f"the setpoints are {span.text}", at=("limits", "danger_high"))
         if self.limits.danger_low is not None and self.limits.danger_low >= span.low:
-            raise problem("F162", f"danger_low {self.limits.danger_low.text} is not below the lowest setpoint", at=("limits", "danger_low"))
+            raise problem("F162", f"danger_low {self.limits.danger_low.text} is not below the lowest setpoint",
+                          f"the setpoints are {span.text}", at=("limits", "danger_low"))
         return self

@@ -10,6 +10,7 @@ from specgen.core.diagnostic import Diagnostic, Path, Span
 from specgen.core.dimension import Dimension, own_dimension
 from specgen.core.quantity import QuantityError, Unit, parse_quantity, written_unit
 from specgen.model.fields import shown
+from specgen.model.hints import has
 from specgen.model.loop import Loop
 from specgen.model.reader import Plain, Problem, place, read_model
 from specgen.model.same_as import Merged, merge
@@ -112,14 +113,28 @@ def _read_one(document: Plain, merged: Merged) -> tuple[Loop | None, list[Proble
     loop, problems = read_model(Loop, data, context)
     seen: set[tuple[Path, str, str]] = {(p.path, p.code, p.text) for p in extra}
     kept = list(extra)
+    told = fault is not None or any(p.code != "F110" for p in problems)
     for found in problems:
-        # what only says that the quantity could not be told follows from the fault already reported
-        follows = fault is not None and (found.code == "F110" or found.path == fault.path)
+        # what only says that the quantity could not be told follows from a fault already reported,
+        # and so does what is said of a value that the text itself left empty
+        follows = (fault is not None and found.path == fault.path) or (told and found.code == "F110")
+        follows = follows or (found.code != "F101" and _left_empty(document, found.path))
         key = (found.path, found.code, found.text)
         if key not in seen and not follows:
             seen.add(key)
             kept.append(found)
     return (None if kept else loop), kept
+
+
+def _left_empty(document: Plain, path: Path) -> bool:
+    if document.sound:
+        return False
+    here: object = document.data
+    for step in path:
+        if not has(here, step):
+            return False
+        here = here[step]  # type: ignore[index]  # has looked
+    return here == ""
 
 
 def _area(file: str) -> str:

@@ -16,6 +16,7 @@ from specgen.model.fields import (
     Model,
     Number,
     Resistance,
+    Share,
     TemperatureRange,
     Text,
     Time,
@@ -49,7 +50,7 @@ class Head(Model):
     revision: Annotated[str, Field(pattern=r"^[A-Za-z0-9][A-Za-z0-9.-]{0,9}$")]
     status: Status
     date: datetime.date
-    coincidence: Fraction = _quantity("100 percent", 1.0)
+    coincidence: Share = _quantity("100 percent", 1.0)
     history: tuple[Issue, ...] = ()
 
 
@@ -71,7 +72,7 @@ class Supply(Model):
     @model_validator(mode="after")
     def _phases(self) -> "Supply":
         if self.phases not in (1, 3):
-            raise problem("F151", f"{self.phases} phases; 1 or 3 are possible", at=("phases",))
+            raise problem("F151", f"{self.phases} phases; 1 or 3 are possible", "write 1 or 3", at=("phases",))
         if self.tolerance >= 0.5:  # noqa: PLR2004  beyond this the text cannot be meant
             raise problem("F170", f"a supply tolerance of {self.tolerance.text} is no supply", "usual is 10 percent", at=("tolerance",))
         return self
@@ -147,8 +148,8 @@ class House(Model):
     """The shop's own limits."""
 
     contact_life: Time = _quantity("10 year", 10 * YEAR)
-    swing_share: Fraction = _quantity("25 percent", 0.25)
-    sensor_share: Fraction = _quantity("33 percent", 0.33)
+    swing_share: Share = _quantity("25 percent", 0.25)
+    sensor_share: Share = _quantity("33 percent", 0.33)
     after_power_return: Literal["resume", "off"] | None = None
     setting_step: SettingStep = SettingStep()
     cycle_time_series: tuple[Number, ...] = tuple(Quantity(s, str(s)) for s in _SERIES)

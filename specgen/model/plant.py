@@ -62,7 +62,7 @@ class Balance(Model):
         if (self.bodies is None) == (self.heat_capacity is None):
             raise problem("F120", "exactly one of bodies and heat_capacity is needed", "for example heat_capacity: 60 kJ/K")
         if self.surfaces is not None and self.loss is not None:
-            raise problem("F120", "surfaces and loss say the same thing twice; keep one", at=("loss",))
+            raise problem("F120", "surfaces and loss say the same thing twice", "keep one of them", at=("loss",))
         if self.bodies is not None and not any(b.follows == "fast" and b.mass.low > 0 for b in self.bodies):
             raise problem("F121", "no body with a mass follows the element fast; the value would jump",
                           "let what the sensor sees have follows: fast and a mass above zero", at=("bodies",))

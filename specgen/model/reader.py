@@ -1,6 +1,5 @@
 """From plain text data to models: every problem of every document, with its place."""
 
-import difflib
 import re
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass, replace
@@ -11,6 +10,7 @@ from pydantic_core import ErrorDetails
 
 from specgen.core.diagnostic import Diagnostic, Path, Span
 from specgen.model.fields import shown
+from specgen.model.hints import has, keys_hint, known_keys, missing_hint, nearest
 
 M = TypeVar("M", bound=BaseModel)
 
@@ -65,7 +65,13 @@ def read_model(model: type[M], data: object, context: Mapping[str, Any] | None =
     try:
         return model.model_validate(data, context=dict(context or {})), []
     except ValidationError as error:
-        return None, [_problem_of(model, data, details) for details in error.errors(include_url=False)]
+        return None, _without_echoes([_problem_of(model, data, details) for details in error.errors(include_url=False)])
+
+
+def _without_echoes(problems: list[Problem]) -> list[Problem]:
+    """Drop the report of a missing key where the same section holds it misspelt."""
+    meant = {(*p.path[:-1], p.hint.removeprefix("did you mean ").rstrip("?")) for p in problems if p.code == "F101"}
+    return [p for p in problems if not (p.code == "F102" and p.path in meant)]
 
 
 def place(document: Plain, problem: Problem, provenance: Mapping[Path, Plain] | None = None) -> Diagnostic:
@@ -97,22 +103,22 @@ def _problem_of(model: type[BaseModel], data: object, details: ErrorDetails) -> 
         below = tuple(context["at"])
         return Problem((*path, *below), str(context["code"]), str(context["text"]), str(context["hint"]))
     if kind == "extra_forbidden":
-        known = _known_keys(model, path[:-1], data)
-        hint = _nearest(name, known, "known here: ")
+        known = known_keys(model, path[:-1], data)
+        hint = nearest(name, known, "known here: ")
         if _AFTER_COMMA.match(name):
             hint = "inside braces a decimal comma starts a new key: write the number with a point"
         return Problem(path, "F101", f"'{shown(name)}' is not a key of {_section(path)}", hint, at_key=True)
     if kind in ("missing", "union_tag_not_found"):
         missing = name if kind == "missing" else "kind"
         where = path if kind == "missing" else (*path, "kind")
-        return Problem(where, "F102", f"'{missing}' is missing in {_section(where)}", _missing_hint(model, where, data))
+        return Problem(where, "F102", f"'{missing}' is missing in {_section(where)}", missing_hint(model, where, data))
     if kind in ("literal_error", "union_tag_invalid"):
         where = path if kind == "literal_error" else (*path, "kind")
         words = _words(str(context.get("expected") or context.get("expected_tags") or ""))
         given = str(context.get("tag", details.get("input", "")))
-        return Problem(where, "F107", f"'{shown(given)}' is not one of the words of {where[-1]}", _nearest(given, words, "one of: "))
+        return Problem(where, "F107", f"'{shown(given)}' is not one of the words of {where[-1]}", nearest(given, words, "one of: "))
     if kind in ("model_type", "model_attributes_type", "dict_type", "dataclass_type"):
-        return Problem(path, "F108", f"{name} is a section of keys, not a single value or list", _keys_hint(model, path, data))
+        return Problem(path, "F108", f"{name} is a section of keys, not a single value or list", keys_hint(model, path, data))
     if kind in ("tuple_type", "list_type"):
         return Problem(path, "F109", f"{name} is a list", "write it with brackets or one item a line after a dash")
     if kind == "too_long":
@@ -133,11 +139,11 @@ def _path_in(data: object, loc: Sequence[str | int]) -> Path:
     here: object = data
     for index, step in enumerate(loc):
         last = index == len(loc) - 1
-        if _has(here, step):
-            here = here[step]  # type: ignore[index]  # _has looked
+        if has(here, step):
+            here = here[step]  # type: ignore[index]  # has looked
             path.append(step)
         elif last and isinstance(here, dict):
-            if step in _TAGS:
+            if step in _TAGS or step == here.get("kind"):
                 continue
             path.append(step)
     return tuple(path)
@@ -154,77 +160,6 @@ def _section(path: Path) -> str:
 
 def _words(expected: str) -> list[str]:
     return [word.strip().strip("'") for word in expected.replace(" or ", ", ").split(",") if word.strip()]
-
-
-def _nearest(name: str, known: Sequence[str], otherwise: str) -> str:
-    lowered = {word.lower(): word for word in known}
-    found = difflib.get_close_matches(str(name).lower().replace(" ", "_").replace("-", "_"), list(lowered), n=1, cutoff=0.6)
-    if found:
-        return f"did you mean {lowered[found[0]]}?"
-    return otherwise + ", ".join(known) if known else ""
-
-
-def _model_at(model: type[BaseModel], path: Path, data: object) -> type[BaseModel] | None:
-    """Return the model of a section, following unions by the section's own kind."""
-    here: type[BaseModel] | None = model
-    value: object = data
-    for step in path:
-        value = value[step] if _has(value, step) else None  # type: ignore[index]  # _has looked
-        if isinstance(step, int) or here is None:
-            continue
-        field = next((f for n, f in here.model_fields.items() if step in (n, f.alias)), None)
-        here = _member(field.annotation if field else None, value)
-    return here
-
-
-def _has(value: object, step: str | int) -> bool:
-    if isinstance(value, dict):
-        return step in value
-    return isinstance(value, list) and isinstance(step, int) and step < len(value)
-
-
-def _member(annotation: object, value: object) -> type[BaseModel] | None:
-    models = _models_in(annotation)
-    if len(models) < 2:  # noqa: PLR2004  one model needs no choice
-        return models[0] if models else None
-    kind = value.get("kind") if isinstance(value, dict) else None
-    for candidate in models:
-        field = candidate.model_fields.get("kind")
-        if field is not None and kind in getattr(field.annotation, "__args__", ()):
-            return candidate
-    return None
-
-
-def _models_in(annotation: object) -> list[type[BaseModel]]:
-    if isinstance(annotation, type) and issubclass(annotation, BaseModel):
-        return [annotation]
-    found: list[type[BaseModel]] = []
-    for part in getattr(annotation, "__args__", ()):
-        found += _models_in(part)
-    return found
-
-
-def _known_keys(model: type[BaseModel], path: Path, data: object) -> list[str]:
-    at = _model_at(model, path, data)
-    hidden = ("unit", "difference_unit") if at is model else ()
-    return [f.alias or name for name, f in at.model_fields.items() if name not in hidden] if at else []
-
-
-def _keys_hint(model: type[BaseModel], path: Path, data: object) -> str:
-    at = _model_at(model, path, data)
-    known = [f.alias or n for n, f in at.model_fields.items() if f.is_required()] if at else []
-    return f"it needs {', '.join(known)}" if known else ""
-
-
-def _missing_hint(model: type[BaseModel], path: Path, data: object) -> str:
-    at = _model_at(model, path[:-1], data)
-    field = next((f for n, f in at.model_fields.items() if path[-1] in (n, f.alias)), None) if at else None
-    for part in field.metadata if field else ():
-        example = getattr(part, "example", None)
-        if callable(example):
-            return f"for example {path[-1]}: {example({})}"
-    words = [w for w in getattr(field.annotation if field else None, "__args__", ()) if isinstance(w, str)]
-    return f"one of: {', '.join(words)}" if words else ""
 
 
 def renamed(problem: Problem, path: Path) -> Problem:

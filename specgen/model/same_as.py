@@ -6,11 +6,13 @@ from typing import Any
 
 from specgen.core.diagnostic import Path
 from specgen.model.fields import shown
+from specgen.model.hints import nearest
 from specgen.model.reader import Plain, Problem
 
 NEVER = ("tag", "service", "choose", "notes", "same_as")
 _FORMS = ("balance", "response", "rates", "step_test")
 LONGEST_CHAIN = 100
+MOST_NAMED = 40
 
 
 @dataclass(frozen=True, slots=True)
@@ -35,7 +37,9 @@ def merge(tag: str, by_tag: Mapping[str, Plain]) -> Merged | Problem:
         if not isinstance(base, str):
             return Problem(("same_as",), "L203", "same_as names one other loop by its tag", "for example same_as: TIC-101")
         if base.lower() not in by_tag:
-            return Problem(("same_as",), "L203", f"same_as names '{shown(base)}', and no loop that could be read has that tag")
+            known = [str(document.data["tag"]) for name, document in by_tag.items() if name != tag.lower()]
+            return Problem(("same_as",), "L203", f"same_as names '{shown(base)}', and no loop that could be read has that tag",
+                           nearest(base, known[:MOST_NAMED], "tags: ") if len(known) <= MOST_NAMED else "see the list of loops")
         if base.lower() in [known.lower() for known in chain]:
             circle = " -> ".join([*chain, base])
             return Problem(("same_as",), "L204", f"same_as goes in a circle: {circle}", "let one of them be written out")

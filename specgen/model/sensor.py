@@ -5,7 +5,7 @@ from typing import Annotated, Literal
 from pydantic import Field, model_validator
 
 from specgen.core.quantity import Quantity, Range
-from specgen.model.fields import Change, Count, Fraction, Model, Resistance, TimeRange, ValueRange, Written, problem
+from specgen.model.fields import Change, Count, Model, Resistance, Share, TimeRange, ValueRange, Written, problem
 
 Signal = Literal["4-20 mA", "0-20 mA", "0-10 V", "2-10 V", "0-5 V", "1-5 V"]
 THERMOCOUPLES = ("K", "J", "T", "N", "E", "S", "R", "B")
@@ -32,7 +32,7 @@ class ResistanceSensor(_Sensor):
     @model_validator(mode="after")
     def _wires(self) -> "ResistanceSensor":
         if self.wires not in (2, 3, 4):
-            raise problem("F130", f"{self.wires} wires; a resistance thermometer has 2, 3 or 4", at=("wires",))
+            raise problem("F130", f"{self.wires} wires; a resistance thermometer has 2, 3 or 4", "write 2, 3 or 4", at=("wires",))
         return self
 
 
@@ -58,7 +58,7 @@ class Transmitter(_Sensor):
 
     kind: Literal["transmitter"]
     measured_range: ValueRange | None = Field(None, alias="range")
-    accuracy: Fraction | None = None
+    accuracy: Share | None = None
     signal: Signal | None = None
     wires: Count = 2
 
