@@ -8,9 +8,9 @@ from specgen.model.loop import Loop
 from specgen.model.panel import Panel
 from specgen.model.traits import Traits
 from specgen.process.box import Box, Unmodelled
-from specgen.sizing.faults import Faults
 from specgen.sizing.candidate import Candidate, Unsized
 from specgen.sizing.device import DeviceChoice
+from specgen.sizing.faults import Faults
 from specgen.sizing.measurement import MeasuringError
 from specgen.sizing.settings import OnOffSettings, Settings
 
@@ -82,7 +82,7 @@ class Rule:
         """Make the finding of a rule that has nothing to say here."""
         return Finding(self.code, self.weight, self.scope, "does_not_apply", text or self.name, None, {}, (), self.cites)
 
-    def unanswered(self, because: str, needs: tuple[str, ...] = (), **words: Said | str) -> Finding:
+    def unanswered(self, because: str, /, needs: tuple[str, ...] = (), **words: Said | str) -> Finding:
         """Make the finding of a rule that lacks an input; ``needs`` names the fields that would answer it."""
         return Finding(self.code, self.weight, self.scope, "unanswered", because, None, dict(words), needs, self.cites)
 
