@@ -14,7 +14,7 @@ SOURCE_CODES = {
     "Y111": "A YAML tag (`!` or `!!`) is refused.",
     "Y112": "A merge key (`<<`) is refused: `same_as` takes over another loop's fields.",
     "Y113": "A key is not plain text.",
-    "Y114": "A key or a list item has no value.",
+    "Y114": "A key or a list item has no value; such a key is left out.",
     "Y115": "A document is not made of `key: value` lines.",
     "Y116": "An alias refers to nothing that was written before it.",
     "Y117": "A `%` directive is refused.",

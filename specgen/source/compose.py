@@ -245,6 +245,8 @@ class _Composer:
         if opened.section is None:
             self.problem(place, "Y114", "a list item has no value", "write a value, or delete the item")
         else:
+            # left out, so that the same mistake is not told again by the field
+            opened.drop = True
             self.problem(opened.key_place, "Y114", f"{shown(opened.key or '')} has no value", "write a value, or delete the line")
 
     def tagged(self, event: ScalarEvent | MappingStartEvent | SequenceStartEvent) -> None:

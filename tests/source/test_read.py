@@ -195,6 +195,13 @@ def test_the_first_of_two_keys_is_kept_and_named():
     assert not documents[0].sound
 
 
+def test_a_key_without_value_is_left_out():
+    documents, problems = read_text("tag: A\nneed:\n  lag:\n  range: ~\nlist: [a, '', b]\n", "a.yml")
+    assert documents[0].data == {"tag": "A", "need": {}, "list": ["a", "", "b"]}
+    assert [problem.code for problem in problems] == ["Y114"] * 3
+    assert ("need", "lag") not in documents[0].spans
+
+
 def test_a_number_sign_that_cuts_text_is_a_warning():
     documents, problems = read_text("service: Pump #2\nlag: 8 s # 2 of them\nquoted: 'Pump #2'\nlist: [a] #2\n", "a.yml")
     assert [(problem.severity, problem.code, problem.span.line) for problem in problems] == [("warning", "Y122", 1)]
