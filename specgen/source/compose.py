@@ -60,16 +60,6 @@ class _Composer:
         self.documents: list[Document] = []
         # where a plain value ends and ` #2` follows: the text `Pump #2` is cut there by YAML without a word
         self.numbered = _numbered(self.lines) if " #" in piece.text else frozenset()
-        self.handlers: Mapping[type[Event], Callable[[Any], None]] = {
-            ScalarEvent: self.scalar,
-            MappingStartEvent: self.start,
-            SequenceStartEvent: self.start,
-            MappingEndEvent: self.end,
-            SequenceEndEvent: self.end,
-            AliasEvent: self.alias,
-            DocumentStartEvent: self.begin,
-            DocumentEndEvent: self.finish,
-        }
 
     def run(self, index: int) -> None:
         """Read all events; a problem that ends a document leaves the documents before it."""
@@ -77,9 +67,9 @@ class _Composer:
         try:
             get_event = parser_for("\n".join(self.lines)).get_event
             while (event := get_event()) is not None:
-                handler = self.handlers.get(type(event))
+                handler = _HANDLERS.get(type(event))
                 if handler is not None:
-                    handler(event)
+                    handler(self, event)
         except yaml.YAMLError as error:
             self.problems.append(plain_words(error, self.lines, self.file, self.first_line))
             if self.documents:
@@ -259,6 +249,18 @@ class _Composer:
     def stop(self, place: Place, code: str, text: str, hint: str) -> NoReturn:
         self.problem(place, code, text, hint)
         raise _StopError
+
+
+_HANDLERS: Mapping[type[Event], Callable[[_Composer, Any], None]] = {
+    ScalarEvent: _Composer.scalar,
+    MappingStartEvent: _Composer.start,
+    SequenceStartEvent: _Composer.start,
+    MappingEndEvent: _Composer.end,
+    SequenceEndEvent: _Composer.end,
+    AliasEvent: _Composer.alias,
+    DocumentStartEvent: _Composer.begin,
+    DocumentEndEvent: _Composer.finish,
+}
 
 
 def _numbered(lines: list[str]) -> frozenset[tuple[int, int]]:

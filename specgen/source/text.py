@@ -86,9 +86,10 @@ def cut(text: str, file: str) -> tuple[list[Piece], list[Diagnostic]]:
     pieces: list[Piece] = []
     line = 0
     for start, end in pairwise(starts):
-        if end > start:
-            pieces.append(Piece(text[start:end], line))
-            line += text.count("\n", start, end)
+        piece = text[start:end]
+        if piece.removeprefix("---").strip():
+            pieces.append(Piece(piece, line))
+        line += piece.count("\n")
     return pieces, problems
 
 
