@@ -74,7 +74,7 @@ def hold_steps(plant: Dynamics, settings: Settings) -> tuple[float, int]:
     Examples
     --------
     >>> hold_steps(Dynamics(slope=0.1, tau=100, theta=30), Settings(gain=0.1, integral_time=100))
-    (1.0169491525423728, 29)
+    (0.9836065573770492, 30)
     """
     scale = own_delay(plant, settings)
     if scale <= 0:
@@ -83,7 +83,7 @@ def hold_steps(plant: Dynamics, settings: Settings) -> tuple[float, int]:
     whole = int(plant.theta / step)
     if whole == 0:
         return (min(step, 2 * plant.theta) if plant.theta > step / 4 else step), 0
-    return plant.theta / (whole - 0.5), whole - 1
+    return plant.theta / (whole + 0.5), whole
 
 
 def steady_hold(plant: Dynamics, duty: float) -> LoopState:

@@ -57,7 +57,8 @@ def first_estimate(slope: float, theta_e: float, change: float) -> float:
     -----
     Simulated for a pure dead time and a continuous output: exact to 1 % for an integrating plant; with a time constant an upper
     bound, the factor being 1.93 at ``tau/theta_e`` of 100, 1.63 at 8 and 1.05 at 2. It leaves out the ripple and the
-    wait for the next latch; with half of a lag in ``theta_e`` it can be a tenth low.
+    wait for the next latch; with half of a lag in ``theta_e`` it is up to a tenth low
+    where that lag is no longer than the dead time, and further beyond.
 
     References
     ----------

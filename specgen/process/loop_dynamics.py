@@ -20,8 +20,9 @@ Complexes = npt.NDArray[np.complexfloating[Any, Any]]
 SMALL = 1e-3
 """Share of a time constant below which a mode's answer is summed as a series."""
 
-SEPARATION = 1e-4
-"""Equal lags are set apart by this share of themselves each way, their sum kept: the response moves by 1e-8."""
+SEPARATION = 1e-5
+"""Equal lags are set apart by this share of themselves each way, sum and gain kept: the measurement's answer to the output
+moves by 1e-10, the true value's and those to the load by 1e-5 at most; less would lose more to rounding."""
 
 
 @dataclass(frozen=True, slots=True)
@@ -203,8 +204,9 @@ def modes_of(plant: Dynamics) -> Modes:
     ----------
     Partial fractions; compared with ``scipy.linalg.expm`` of the chain in ``tests/process/test_loop_dynamics.py``.
     """
-    slope, has_lag, has_sensor = plant.slope, plant.lag > 0, plant.sensor_lag > 0
+    has_lag, has_sensor = plant.lag > 0, plant.sensor_lag > 0
     tau, lag, sensor = _set_apart(plant.tau, plant.lag, plant.sensor_lag)
+    slope = plant.slope if plant.is_integrating else plant.gain / tau
     rate, output, load, true = [1 / tau], [slope], [slope], [1.0]
     if has_lag:
         share = -slope / (1 / lag - 1 / tau)

@@ -91,7 +91,7 @@ def margins(plant: Dynamics, settings: Settings, extra_delay: float = 0.0) -> Ma
         s: Complexes = 1j * omega
         return controller_response(settings, s) * charged.response(s)
 
-    slow = slowest_frequency(plant, settings, theta)
+    slow = slowest_frequency(charged, settings, 0.0)
     corners = [1 / time for time in (plant.tau, plant.lag, plant.sensor_lag, settings.integral_time, settings.derivative_time) if time > 0]
     if theta <= 0:
         grid = _decades(slow, 1000 * max(corners))

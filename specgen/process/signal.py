@@ -134,6 +134,8 @@ def namur_state(current: float) -> Fault:
     >>> namur_state(0.0039), namur_state(0.0037), namur_state(0.0036)
     ('valid', 'not_a_measurement', 'failed_low')
     """
+    # to the nanoampere, so that 3.6 mA is 3.6 mA however it was converted
+    current = round(current, 9)
     if current <= FAIL_LOW:
         return "failed_low"
     if current >= FAIL_HIGH:
