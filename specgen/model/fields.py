@@ -20,6 +20,14 @@ LOOP_DIMENSIONS = ("value", "difference_of_value", "rate_of_value")
 MOST_TEXT = 2000
 LONGEST_NUMBER = 40
 MOST_DIGITS = 9
+WORDS_OF_LOOP = {
+    "value": "the loop's quantity",
+    "difference_of_value": "a difference of the loop's quantity",
+    "rate_of_value": "a rate of change of the loop's quantity",
+}
+# what an editor can tell without knowing units: a number, and something behind it that is no number
+_WITH_UNIT = r"^\s*[-+\u2212]?[0-9]+(\.[0-9]+)?([eE][-+\u2212]?[0-9]+)?\s*[^\s0-9.,].*$"
+_ONE_WITH_UNIT = r"^(?!.*\sto\s)" + _WITH_UNIT[1:]
 _PLAIN_NUMBER = re.compile(r"[0-9]+(\.[0-9]+)?([eE][-+]?[0-9]{1,3})?\Z")
 
 
@@ -50,7 +58,7 @@ def _of_text(read: Callable[[str, dict[str, Any]], Any], types: type | tuple[typ
 
         @staticmethod
         def __get_pydantic_json_schema__(_core: CoreSchema, _handler: GetJsonSchemaHandler) -> dict[str, Any]:
-            return schema
+            return dict(schema)
 
     return Reader
 
@@ -113,11 +121,12 @@ class Written:
         return core_schema.with_info_plain_validator_function(check)
 
     def __get_pydantic_json_schema__(self, _core: CoreSchema, _handler: GetJsonSchemaHandler) -> dict[str, Any]:
-        """Describe the field as text with a unit."""
-        what = {"value": "the loop's quantity", "difference_of_value": "a difference of the loop's quantity",
-                "rate_of_value": "a rate of change of the loop's quantity"}.get(self.dimension, self.dimension.replace("_", " "))
+        """Describe the field as text with a unit, so that an editor marks a number that stands alone."""
         form = "number unit, or a range: number to number unit" if self.may_range else "number unit"
-        return {"type": "string", "description": f"{what}: {form}; for example {self.example({})}"}
+        example = self.example({})
+        told = f"{WORDS_OF_LOOP.get(self.dimension, self.dimension.replace('_', ' '))}: {form}; for example {example}"
+        pattern = _WITH_UNIT if self.may_range else _ONE_WITH_UNIT
+        return {"type": "string", "description": told, "examples": [example], "pattern": pattern}
 
 
 def _read_flag(text: str, _context: dict[str, Any]) -> bool:
@@ -159,10 +168,10 @@ def shown(text: str, most: int = 40) -> str:
     return clean if len(clean) <= most else clean[: most - 3] + "..."
 
 
-Flag = Annotated[bool, _of_text(_read_flag, bool, {"type": "string", "enum": ["yes", "no"]})]
+Flag = Annotated[bool, _of_text(_read_flag, bool, {"enum": ["yes", "no"]})]
 Count = Annotated[int, _of_text(_read_count, int, {"type": ["integer", "string"], "description": "a whole number"})]
 Number = Annotated[Quantity, _of_text(_read_number, Quantity, {"type": ["number", "string"], "description": "a plain number"})]
-Text = Annotated[str, _of_text(_read_text, str, {"type": "string", "description": "text"})]
+Text = Annotated[str, _of_text(_read_text, str, {"type": ["string", "number"], "description": "text"})]
 
 # quantities of one number
 Temperature = Annotated[Quantity, Written("temperature")]

@@ -118,7 +118,7 @@ def _read_one(document: Plain, merged: Merged) -> tuple[Loop | None, list[Proble
         # what only says that the quantity could not be told follows from a fault already reported,
         # and so does what is said of a value that the text itself left empty
         follows = (fault is not None and found.path == fault.path) or (told and found.code == "F110")
-        follows = follows or (found.code != "F101" and _left_empty(document, found.path))
+        follows = follows or _left_empty(document, found.path)
         key = (found.path, found.code, found.text)
         if key not in seen and not follows:
             seen.add(key)
@@ -129,6 +129,8 @@ def _read_one(document: Plain, merged: Merged) -> tuple[Loop | None, list[Proble
 def _left_empty(document: Plain, path: Path) -> bool:
     if document.sound:
         return False
+    if path in document.key_spans and path not in document.spans:
+        return True
     here: object = document.data
     for step in path:
         if not has(here, step):

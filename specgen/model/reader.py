@@ -1,6 +1,5 @@
 """From plain text data to models: every problem of every document, with its place."""
 
-import re
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass, replace
 from typing import Any, Protocol, TypeVar
@@ -105,8 +104,6 @@ def _problem_of(model: type[BaseModel], data: object, details: ErrorDetails) -> 
     if kind == "extra_forbidden":
         known = known_keys(model, path[:-1], data)
         hint = nearest(name, known, "known here: ")
-        if _AFTER_COMMA.match(name):
-            hint = "inside braces a decimal comma starts a new key: write the number with a point"
         return Problem(path, "F101", f"'{shown(name)}' is not a key of {_section(path)}", hint, at_key=True)
     if kind in ("missing", "union_tag_not_found"):
         missing = name if kind == "missing" else "kind"
@@ -149,7 +146,6 @@ def _path_in(data: object, loc: Sequence[str | int]) -> Path:
     return tuple(path)
 
 
-_AFTER_COMMA = re.compile(r"[0-9]+(\s|$)")
 _TAGS = frozenset({"function-after", "function-before"})
 
 

@@ -237,7 +237,9 @@ class _Composer:
         else:
             # left out, so that the same mistake is not told again by the field
             opened.drop = True
-            self.problem(opened.key_place, "Y114", f"{shown(opened.key or '')} has no value", "write a value, or delete the line")
+            comma = (opened.key or "")[:1].isdigit()
+            hint = "after a decimal comma a new key starts: write the number with a point" if comma else "write a value, or delete the line"
+            self.problem(opened.key_place, "Y114", f"{shown(opened.key or '')} has no value", hint)
 
     def tagged(self, event: ScalarEvent | MappingStartEvent | SequenceStartEvent) -> None:
         tag = str(event.tag).replace("tag:yaml.org,2002:", "!!")
