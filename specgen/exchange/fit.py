@@ -4,6 +4,8 @@ from dataclasses import dataclass
 from math import ceil, floor, isfinite, log10
 from pathlib import Path
 
+import numpy as np
+
 from specgen.core.diagnostic import Diagnostic
 from specgen.exchange.fit_plot import Drawn, fit_plot
 from specgen.process.step_test import Identified, Interval, NotIdentified, at_rated_supply, identify
@@ -13,6 +15,7 @@ from specgen.source.recording_text import Problems
 _DIGITS_OF_WIDTH = 3  # of an interval's width that are printed: rounding outwards widens it by a fiftieth at most
 _MOST_DIGITS = 7
 _CORRELATED = 0.3
+_MOVES_OFTEN = 0.1  # of the samples
 _NO_REST = "    # rest_value: not known from this recording; write where the value settles with no output"
 
 
@@ -176,6 +179,9 @@ def _remarks(found: Identified, record: Recording, sensor_lag: float, supply: Su
     ]
     if used.every > 1:
         out.append(f"the recording is long: every {used.every}. sample was used")
+    moves = int(np.sum(np.diff(record.output) != 0.0))
+    if moves > _MOVES_OFTEN * len(record.output):
+        out.append(f"the output moves {moves} times: it is taken as exact, the loop as open, and the value as at rest at the first output")
     if sensor_lag > 0.0:
         out.append(f"a sensor lag of {_short(sensor_lag)} s is taken out: time constant and dead time are the true value's")
     if found.last_before_change > found.theta.width / 2.0:

@@ -96,7 +96,7 @@ def identify(times: ArrayLike, output: ArrayLike, value: ArrayLike, *, sensor_la
     samples, point, width = _fitted(samples)
     fitted = samples.value - point.residuals
     record = Record(samples.times, u[::every], samples.value, fitted, dropped=len(present) - len(t), every=every)
-    found = _answer(samples, point, width, record)
+    found = _answer(samples, point, width, record, last_before_change=float(np.min(course.times[1] - t[t < course.times[1]])))
     return _unfit(samples, found) or found
 
 
@@ -165,7 +165,7 @@ def _fitted(samples: Samples) -> tuple[Samples, Point, Spread]:
     return samples, point, width
 
 
-def _answer(samples: Samples, point: Point, width: Spread, record: Record) -> Identified:
+def _answer(samples: Samples, point: Point, width: Spread, record: Record, last_before_change: float) -> Identified:
     free = samples.free_start
     others = [0.0] * len(point.linear)
 
@@ -182,8 +182,6 @@ def _answer(samples: Samples, point: Point, width: Spread, record: Record) -> Id
     u0 = samples.output.start
     reason, known = _steady(samples, point, width, response)
     rest = interval(start - gain * u0, 1.0, 0.0, -u0, *others[3:], 0.0, 0.0) if known else None
-    first = samples.output.times[1]
-    earlier = record.times[record.times < first]
     return Identified(
         gain=interval(gain, *one(2)),
         tau=interval(point.tau, *one(len(point.linear)), least=0.0),
@@ -197,7 +195,7 @@ def _answer(samples: Samples, point: Point, width: Spread, record: Record) -> Id
         noise=width.noise,
         correlation=width.correlation,
         resolution=resolution(samples.value),
-        last_before_change=float(first - earlier[-1]) if len(earlier) else 0.0,
+        last_before_change=last_before_change,
         record=record,
     )
 

@@ -1,12 +1,15 @@
 """Unit response of a first-order plant with dead time to an output record that is held between its changes."""
 
 from dataclasses import dataclass
+from itertools import accumulate
 
 import numpy as np
 from numpy.typing import NDArray
 from scipy.linalg import solve_banded
 
 Array = NDArray[np.float64]
+
+_MANY = 50  # changes
 
 
 @dataclass(frozen=True, slots=True)
@@ -111,8 +114,9 @@ def unit_response(record: OutputRecord, at: Array, tau: float, theta: float, lag
 
 def _recursion(fade: Array, drive: Array) -> Array:
     """Return z with ``z[0] = 0`` and ``z[j+1] = fade[j] z[j] + drive[j]``."""
-    if len(fade) == 0:
-        return np.zeros(1)
+    if len(fade) < _MANY:
+        # a step test mostly moves once or twice: calling LAPACK for that takes longer than the rest of the response
+        return np.array(list(accumulate(zip(fade.tolist(), drive.tolist(), strict=True), lambda z, by: by[0] * z + by[1], initial=0.0)))
     bands = np.ones((2, len(fade) + 1))
     bands[1, :-1] = -fade
     return np.asarray(solve_banded((1, 0), bands, np.concatenate(([0.0], drive)), check_finite=False), dtype=np.float64)

@@ -137,6 +137,9 @@ def test_remarks_say_what_would_be_taken_for_granted(tmp_path):
     said = "\n".join(report.messages)
     assert "drifts by" in said
     assert "hang together" in said
+    path = write(tmp_path, values(T))
+    path.write_text(path.read_text().replace(",20,", ",20.5,", 30).replace(",70,", ",70.1,", 1).replace("0,70,", "0,70.2,", 100))
+    assert "the output moves" in "\n".join(fit_file(path).messages)
     said = "\n".join(fit_file(write(tmp_path, values(T, noise=0.02))).messages)
     assert "the dead time is up to 15 s longer" in said
     assert "drifts" not in said

@@ -240,6 +240,7 @@ def test_a_long_record_is_thinned_and_says_so():
     t = np.arange(0, 3600.0, 0.05)
     found = identified(*made(t=t))
     assert found.record.every == 4
+    assert found.last_before_change == pytest.approx(0.05)
     assert found.theta.value == pytest.approx(47.3, rel=1e-5)
 
 
