@@ -14,6 +14,8 @@ from specgen.source.recording_text import Problems
 
 _DIGITS_OF_WIDTH = 3  # of an interval's width that are printed: rounding outwards widens it by a fiftieth at most
 _MOST_DIGITS = 7
+_FINEST_TIME = 1e-6  # s
+_FAR_OFF = 6.0  # times the noise
 _CORRELATED = 0.3
 _MOVES_OFTEN = 0.1  # of the samples
 _NO_REST = "    # rest_value: not known from this recording; write where the value settles with no output"
@@ -112,8 +114,10 @@ def fit_file(
     return FitReport(_block(found, gain, record), read.problems, messages, _drawing(found, record, path.name), plot_path, found)
 
 
-def range_text(interval: Interval, unit: str, scale: float = 1.0) -> str:
+def range_text(interval: Interval, unit: str, scale: float = 1.0, finest: float = 0.0) -> str:
     """Write an interval as a range of the loop file, rounded outwards to the digits that its width deserves.
+
+    ``scale`` is the size of the unit; no digit below ``finest`` is written.
 
     Examples
     --------
@@ -123,7 +127,7 @@ def range_text(interval: Interval, unit: str, scale: float = 1.0) -> str:
     low, high = interval.low / scale, interval.high / scale
     size = max(abs(low), abs(high))
     least = 10.0 ** (floor(log10(size)) + 1 - _MOST_DIGITS) if size > 0.0 else 1.0
-    step = max(10.0 ** (floor(log10(high - low)) + 1 - _DIGITS_OF_WIDTH), least) if high > low else least
+    step = max(10.0 ** (floor(log10(high - low)) + 1 - _DIGITS_OF_WIDTH) if high > low else least, least, finest)
     digits = max(0, -round(log10(step)))
     # a ten-thousandth of a step keeps a number that is round already where it is
     ends = floor(low / step + 1e-4) * step, ceil(high / step - 1e-4) * step
@@ -135,7 +139,7 @@ def range_text(interval: Interval, unit: str, scale: float = 1.0) -> str:
 
 def _time_text(interval: Interval) -> str:
     if interval.value < 600.0:  # noqa: PLR2004 - ten minutes
-        return range_text(interval, "s")
+        return range_text(interval, "s", finest=_FINEST_TIME)
     return range_text(interval, "min", 60.0) if interval.value < 36_000.0 else range_text(interval, "h", 3600.0)  # noqa: PLR2004 - ten hours
 
 
@@ -191,6 +195,9 @@ def _remarks(found: Identified, record: Recording, sensor_lag: float, supply: Su
         )
     if found.drift.low > 0.0 or found.drift.high < 0.0:
         out.append(f"the value drifts by {_short(found.drift.value * 3600.0 / scale)} {unit}/h besides; the drift is taken out")
+    worst = int(np.argmax(np.abs(used.residuals)))
+    if abs(used.residuals[worst]) > _FAR_OFF * found.noise:
+        out.append(f"the sample at {_short(used.times[worst])} s lies far off the fit: empty its cell if it is a misreading")
     if found.correlation > _CORRELATED:
         out.append(
             f"residuals hang together (correlation {found.correlation:.2f}): the intervals are widened for it; look at the drawing, "

@@ -26,6 +26,7 @@ _SEEN_BEFORE = 5
 _MOVING = 0.02  # of the response
 _TELLS = 0.30  # of the response
 _CHANCE = 1e-3
+_MISREADING = 20.0  # times the middle residual; of normal noise the largest of a million is 7
 _NOT_FIRST_ORDER = 0.5  # correlation of neighbouring residuals
 
 
@@ -222,11 +223,7 @@ def _steady(samples: Samples, point: Point, width: Spread, response: float) -> t
 def _unfit(samples: Samples, found: Identified) -> NotIdentified | None:
     """Return why a fit that was found is not to be designed with."""
     if found.response < LEAST_RESPONSE * found.noise:
-        return NotIdentified(
-            "weak_step",
-            f"the response is {found.response / found.noise:.2g} times the noise; at least {LEAST_RESPONSE:g} times is needed",
-            "make a larger step, or quieten the measurement",
-        )
+        return _weak(found)
     needed = found.theta.value + LEAST_TIME_CONSTANTS * found.tau.value
     if samples.after_change < needed:
         return NotIdentified(
@@ -251,6 +248,16 @@ def _unfit(samples: Samples, found: Identified) -> NotIdentified | None:
                 hint = "the plant may not be first order, or something else moved it: " + hint + "; declare the sensor's lag"
             return NotIdentified("wide_interval", text, hint)
     return None
+
+
+def _weak(found: Identified) -> NotIdentified:
+    """Refuse a response that the noise hides; a single misreading can be most of the noise, and is named."""
+    text = f"the response is {found.response / found.noise:.2g} times the noise; at least {LEAST_RESPONSE:g} times is needed"
+    off = np.abs(found.record.residuals)
+    worst = int(np.argmax(off))
+    if off[worst] > _MISREADING * np.median(off):
+        return NotIdentified("weak_step", text, f"the sample at {found.record.times[worst]:g} s lies far off the others: leave it out")
+    return NotIdentified("weak_step", text, "make a larger step, or quieten the measurement")
 
 
 def _on_the_rise(times: Array, output: OutputRecord, found: Identified) -> int:

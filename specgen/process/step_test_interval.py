@@ -68,7 +68,7 @@ def spread(samples: Samples, point: Point) -> Spread:
 
     References
     ----------
-    Seber and Wild (1989), Nonlinear Regression, sections 2.1 and 6.2 (covariance with autoregressive errors).
+    Seber and Wild (1989), Nonlinear Regression (from memory); coverage is measured in ``tests/process/test_step_test_coverage.py``.
     """
     count, unknowns = len(samples.times), len(point.linear) + 2
     steps = 1e-3 * point.tau, 1e-3 * point.tau

@@ -95,7 +95,8 @@ def best_fit(samples: Samples) -> Point:
 
     References
     ----------
-    Golub and Pereyra (1973), The differentiation of pseudo-inverses and nonlinear least squares problems whose variables separate.
+    Golub and Pereyra (1973), The differentiation of pseudo-inverses and nonlinear least squares problems whose variables
+    separate (from memory).
     """
     lowest, highest = np.log(samples.sampling / 5.0), np.log(10.0 * samples.span)
     latest = samples.after_change * 0.98

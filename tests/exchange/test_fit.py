@@ -118,6 +118,12 @@ def test_supply_of_a_resistive_element(tmp_path):
     assert any("of a resistive heater" in message for message in fit_file(path).messages)
 
 
+def test_a_plant_without_dead_time_and_noise(tmp_path):
+    response = yaml.safe_load(fit_file(write(tmp_path, values(T, theta=0.0, noise=0.0))).block)["plant"]["response"]
+    assert parse_range(response["dead_time"], "time").high < 0.001
+    assert len(response["dead_time"]) < 30
+
+
 def test_a_sensor_lag_shortens_the_dead_time(tmp_path):
     path = write(tmp_path, values(T))
     assert ranges(fit_file(path, sensor_lag=20.0))["dead_time"].high < 30.0
@@ -140,6 +146,7 @@ def test_remarks_say_what_would_be_taken_for_granted(tmp_path):
     path = write(tmp_path, values(T))
     path.write_text(path.read_text().replace(",20,", ",20.5,", 30).replace(",70,", ",70.1,", 1).replace("0,70,", "0,70.2,", 100))
     assert "the output moves" in "\n".join(fit_file(path).messages)
+    assert "the sample at 3000 s lies far off" in "\n".join(fit_file(write(tmp_path, values(T) + 4.0 * (T == 3000))).messages)
     said = "\n".join(fit_file(write(tmp_path, values(T, noise=0.02))).messages)
     assert "the dead time is up to 15 s longer" in said
     assert "drifts" not in said

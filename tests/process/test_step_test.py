@@ -306,6 +306,14 @@ def test_an_integrating_plant_is_not_taken_for_a_slow_one():
     assert "declare rates" in found.hint
 
 
+def test_a_misreading_that_hides_the_response_is_named():
+    value = Y.copy()
+    value[100] = 900.0
+    found = refused(T, U, value)
+    assert found.reason == "weak_step"
+    assert "the sample at 1000 s" in found.hint
+
+
 def test_mistakes_of_the_caller():
     with pytest.raises(ValueError, match="one length"):
         identify(T, U, Y[:-1])
