@@ -124,6 +124,8 @@ def _problem_of(model: type[BaseModel], data: object, details: ErrorDetails) -> 
         return Problem(path, "F111", f"{name} needs at least {context.get('min_length')} item")
     if kind.startswith("date"):
         return Problem(path, "F112", f"'{shown(str(details.get('input')))}' is no date", "write year-month-day, for example 2026-11-20")
+    if kind == "string_type":
+        return Problem(path, "F106", "a single value is expected here, not a list or a section", "text")
     if kind == "string_pattern_mismatch":
         return Problem(path, "F113", f"'{shown(str(details.get('input')))}' cannot be used as {name}",
                        "letters, digits, '-' and '.', ten at most, for example A or P2")

@@ -42,6 +42,7 @@ class Thermistor(_Sensor):
     kind: Literal["ntc"]
     r25: Resistance | None = None
     beta: Annotated[Quantity, Written("difference", sign="positive")] | None = None
+    accuracy: Change | None = None
     wires: Count = 2
 
 
