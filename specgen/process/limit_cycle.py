@@ -114,6 +114,67 @@ def relay_cycle(y_on: float, y_off: float, tau: float, theta: float, high: float
     return Cycle(peak, trough, on, off, mean, peak, trough)
 
 
+def timed_relay_cycle(
+    y_on: float, y_off: float, tau: float, theta: float, high: float, low: float, min_run: float, min_rest: float
+) -> Cycle:
+    r"""Return the settled cycle of a relay on a first-order plant whose least run and least rest are enforced.
+
+    Parameters
+    ----------
+    y_on, y_off, tau, theta, high, low : float
+        As in ``relay_cycle``.
+    min_run, min_rest : float
+        Least time on and off [s].
+
+    Returns
+    -------
+    Cycle
+        Peak, trough and mean [degC], time on and off [s].
+
+    Raises
+    ------
+    NoCycle
+        As in ``relay_cycle``; two least times keep the switchings apart too.
+
+    Notes
+    -----
+    A phase that ends at its switch point starts the next one from the same value as without least times; a phase of fixed length ``t``
+    carries the value on by :math:`1 - e^{-t/\tau}` of what is left. With both fixed the value follows a rectangle.
+
+    References
+    ----------
+    Derived; compared with ``scipy.integrate.solve_ivp`` in ``tests/process/test_exact_cycle.py``.
+
+    Examples
+    --------
+    >>> cycle = timed_relay_cycle(160, 20, 600, 30, high=66, low=64, min_run=120, min_rest=0)
+    >>> cycle.t_on, round(cycle.peak, 2), round(cycle.trough, 2)  # 61.854 + (160 - 61.854)(1 - e^-0.2)
+    (120, 79.64, 61.85)
+    """
+    if theta > 0 or high > low:
+        free = relay_cycle(y_on, y_off, tau, theta, high, low)
+        if free.t_on >= min_run and free.t_off >= min_rest:
+            return free
+    elif y_on <= high or y_off >= low or min(min_run, min_rest) <= 0:
+        raise NoCycle(y_on, y_off, high, low)
+    q = 1 - exp(-theta / tau)
+    gain = y_on - y_off
+    trough = low - (low - y_off) * q
+    peak = y_on - (y_on - trough) * exp(-min_run / tau)
+    off = theta + tau * log(1 + (peak - low) / (low - y_off)) if peak > low else 0.0
+    if off >= min_rest and min_run > 0:
+        return Cycle(peak, trough, min_run, off, y_off + gain * min_run / (min_run + off), peak, trough)
+    peak = high + (y_on - high) * q
+    trough = y_off + (peak - y_off) * exp(-min_rest / tau)
+    on = theta + tau * log(1 + (high - trough) / (y_on - high)) if trough < high else 0.0
+    if on >= min_run and min_rest > 0:
+        return Cycle(peak, trough, on, min_rest, y_off + gain * on / (on + min_rest), peak, trough)
+    whole = 1 - exp(-(min_run + min_rest) / tau)
+    peak = y_off + gain * (1 - exp(-min_run / tau)) / whole
+    trough = y_on - gain * (1 - exp(-min_rest / tau)) / whole
+    return Cycle(peak, trough, min_run, min_rest, y_off + gain * min_run / (min_run + min_rest), peak, trough)
+
+
 def integrating_cycle(r_on: float, r_off: float, theta: float, high: float, low: float) -> Cycle:
     r"""Return the settled cycle of a relay on an integrating plant with dead time.
 

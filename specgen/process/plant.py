@@ -10,7 +10,7 @@ from typing import Protocol
 
 from specgen.process.cycle_ripple import Ripple, integrating_ripple, lag_ripple
 from specgen.process.exact_cycle import lagged_cycle, lagged_integrating_cycle
-from specgen.process.limit_cycle import Cycle, integrating_cycle, relay_cycle
+from specgen.process.limit_cycle import Cycle, integrating_cycle, timed_relay_cycle
 
 
 class ProcessModel(Protocol):
@@ -126,17 +126,15 @@ class SelfRegulating:
         return (output * self.gain - self.fall - at) / self.tau
 
     def limit_cycle(self, high: float, low: float, min_run: float = 0.0, min_rest: float = 0.0) -> Cycle:
-        """Return the settled on-off cycle; closed form where there is one lag and no least time binds.
+        """Return the settled on-off cycle; closed form where there is one lag.
 
         Raises
         ------
         NoCycle
             The plant cannot pass both switch points, or nothing keeps the switchings apart.
         """
-        if self.lag <= 0 and self.sensor_lag <= 0 and (self.theta > 0 or high > low):
-            cycle = relay_cycle(self.rise, -self.fall, self.tau, self.theta, high, low)
-            if cycle.t_on >= min_run and cycle.t_off >= min_rest:
-                return cycle
+        if self.lag <= 0 and self.sensor_lag <= 0:
+            return timed_relay_cycle(self.rise, -self.fall, self.tau, self.theta, high, low, min_run, min_rest)
         return lagged_cycle(self.rise, -self.fall, self.tau, self.theta, high, low, self.lag, self.sensor_lag, min_run, min_rest)
 
     def ripple(self, cycle_time: float, duty: float | None = None) -> Ripple:

@@ -1,0 +1,261 @@
+"""The worst value of a figure over a loop's box: every corner, the points of half duty, and a search from the best of them.
+
+Switching is fastest and ripple largest near half duty, which corners alone miss. For each end of the loss the cases that can switch form
+a polygon over strength and load: the box cut by what full output still passes and what still falls back. A figure is looked at in all
+its corners and where the line of half duty leaves it; the best are then moved along each axis until the figure stays within 0.1 percent.
+Cases that rest or do not reach are cut off there: the last case that still switches stands for them.
+"""
+
+from collections.abc import Callable, Iterator, Mapping, Sequence
+from dataclasses import dataclass
+from math import inf
+from typing import Literal
+
+from specgen.process.box import Box, Point
+from specgen.process.limit_cycle import NoCycle
+from specgen.process.plant import ProcessModel
+
+Sense = Literal["largest", "smallest"]
+Judged = Callable[[ProcessModel], float]
+
+EDGE = 1e-6  # how far inside the cut a case is taken, as a share of the strength
+PROBE = 0.01
+ENOUGH = 2e-4  # relative gain below which the search stops; the figure then moves by less than 0.1 percent
+ROUNDS = 8
+GOLDEN = 0.6180339887498949
+SECTIONS = 14
+STARTS = 2
+RIVAL = 0.2  # a start further than this below the best is not searched from
+MOVED = ("load", "strength", "loss")
+PINNED = ("capacity", "dead_time", "lag", "sensor_lag")
+
+
+@dataclass(frozen=True, slots=True)
+class Worst:
+    """A figure's worst value and the case that gave it."""
+
+    value: float
+    plant: ProcessModel
+    point: Point
+    box: Box
+
+    @property
+    def case(self) -> Mapping[str, float]:
+        """Return the case as the value of every declared field that varies, by its path."""
+        return self.box.case(self.point)
+
+    @property
+    def text(self) -> str:
+        """Return the case in words."""
+        return self.box.text(self.point)
+
+
+class Judge:
+    """A figure over a box, each case computed once; minus infinity where the case has none."""
+
+    def __init__(self, box: Box, figure: Judged, sense: Sense) -> None:
+        self.box = box
+        self.figure = figure
+        self.turn = 1.0 if sense == "largest" else -1.0
+        self.known: dict[Point, float] = {}
+
+    def __call__(self, point: Point) -> float:
+        """Return the figure at a case, larger for worse."""
+        value = self.known.get(point)
+        if value is None:
+            try:
+                value = self.turn * self.figure(self.box.plant_at(point))
+            except NoCycle:
+                value = -inf
+            self.known[point] = value
+        return value
+
+
+def worst(
+    box: Box,
+    figure: Judged,
+    sense: Sense,
+    *,
+    high: float = 0.0,
+    low: float = 0.0,
+    pinned: Point | None = None,
+    duties: Sequence[float] = (0.5,),
+    among: Sequence[Point] | None = None,
+) -> Worst:
+    """Return the worst value of a figure over a box.
+
+    Parameters
+    ----------
+    box : Box
+        The loop's box.
+    figure : callable
+        Takes a plant and returns the figure; raises ``NoCycle`` where the plant has none.
+    sense : "largest" or "smallest"
+        Which is worse.
+    high, low : float
+        Switch points from the setpoint [K]; both 0 for what does not switch on them.
+    pinned : Point or None
+        Ends of capacity, dead time and lags known to be the worse ones; all their corners are tried without it, and the other ends of
+        the worst case found are tried in any event.
+    duties : sequence of float
+        Duties whose lines across the box are on the list.
+    among : sequence of Point or None
+        What ``candidates`` gave for the same switch points and duties, where it is already known.
+
+    Returns
+    -------
+    Worst
+
+    Raises
+    ------
+    NoCycle
+        No case of the box has the figure.
+    """
+    judge = Judge(box, figure, sense)
+    known = among if among is not None else tuple(candidates(box, high, low, duties))
+    starts = [pinned] if pinned is not None else box.ends(*PINNED)
+    tried = [start._replace(strength=at.strength, load=at.load, loss=at.loss) for start in starts for at in known]
+    ranked = sorted(tried, key=judge, reverse=True)
+    if not ranked or judge(ranked[0]) == -inf:
+        point = box.duty_low[1] if box.rests else box.reach.point
+        plant = box.plant_at(point)
+        raise NoCycle(plant.settles_on, plant.settles_off, high, low)
+    best = judge(ranked[0])
+    near = [start for start in ranked[:STARTS] if judge(start) >= best - RIVAL * abs(best)]
+    found = max((_refined(box, judge, start) for start in near), key=judge)
+    return Worst(judge.turn * judge(found), box.plant_at(found), found, box)
+
+
+def candidates(box: Box, high: float, low: float, duties: Sequence[float] = (0.5,)) -> Iterator[Point]:
+    """Yield the corners of what can switch over strength and load, and where the lines of equal duty leave it, for each end of the loss."""
+    free = box.free
+    middle = (high + low) / 2
+    ends = (0.0, 1.0)
+    for loss_end in ends if "loss" in free else (0.0,):
+        base = Point(loss=loss_end)
+        loss = box.loss.at(loss_end)
+        for along, across in (("load", "strength"), ("strength", "load")):
+            if along not in free and (along == "strength" or "strength" in free):
+                continue
+            for end in ends if across in free else (0.0,):
+                line = base._replace(**{across: end})
+                yield from _on_line(box, line, along, loss, (high, low, middle), duties)
+
+
+def _on_line(
+    box: Box, line: Point, along: str, loss: float, points: tuple[float, float, float], duties: Sequence[float]
+) -> Iterator[Point]:
+    """Yield the ends of what can switch on one line of the box, and where it has the duties."""
+    high, low, middle = points
+
+    (load_0, strength_0), (load_1, strength_1) = (box.sides_at(line._replace(**{along: t})) for t in (0.0, 1.0))
+
+    def parts(t: float) -> tuple[float, float]:
+        if along == "load" or t in (0.0, 1.0):
+            # setpoint, surroundings and load move evenly along their axis, and so do both sides of the balance
+            return load_0 + t * (load_1 - load_0), strength_0 + t * (strength_1 - strength_0)
+        return box.sides_at(line._replace(**{along: t}))
+
+    def falls(t: float) -> float:
+        load, strength = parts(t)
+        return load + low * loss - EDGE * strength
+
+    def passes(t: float) -> float:
+        load, strength = parts(t)
+        return strength * (1 - EDGE) - load - high * loss
+
+    if along not in box.free:
+        if falls(0.0) >= 0 and passes(0.0) >= 0:
+            yield line
+        return
+    span = _where_not_negative(falls, _where_not_negative(passes, (0.0, 1.0)))
+    if span is None:
+        return
+    yield line._replace(**{along: span[0]})
+    yield line._replace(**{along: span[1]})
+    for duty in duties:
+
+        def apart(t: float, duty: float = duty) -> float:
+            load, strength = parts(t)
+            return load + middle * loss - duty * strength
+
+        if apart(span[0]) * apart(span[1]) < 0:
+            yield line._replace(**{along: _crossing(apart, *span)})
+
+
+def _where_not_negative(rule: Callable[[float], float], span: tuple[float, float] | None) -> tuple[float, float] | None:
+    """Return the part of a span in which a monotone rule is not negative."""
+    if span is None:
+        return None
+    first, last = rule(span[0]), rule(span[1])
+    if first >= 0 and last >= 0:
+        return span
+    if first < 0 and last < 0:
+        return None
+    at = _crossing(rule, *span)
+    # a hair to the side that holds
+    hair = 1e-9
+    return (span[0], max(span[0], at - hair)) if first >= 0 else (min(span[1], at + hair), span[1])
+
+
+def _crossing(rule: Callable[[float], float], a: float, b: float) -> float:
+    """Return where a rule changes its sign, by the Illinois form of false position (exact at once where it is linear)."""
+    fa, fb = rule(a), rule(b)
+    size = abs(fa) + abs(fb)
+    at = a
+    for _ in range(60):
+        at = b - fb * (b - a) / (fb - fa)
+        f = rule(at)
+        if abs(f) <= 1e-13 * size:
+            break
+        if f * fb < 0:
+            a, fa = b, fb
+        else:
+            fa /= 2
+        b, fb = at, f
+    return at
+
+
+def _refined(box: Box, judge: Judge, start: Point) -> Point:
+    """Move a case along the axes until the figure stays."""
+    best = start
+    moved = [name for name in MOVED if name in box.free]
+    pinned = [name for name in PINNED if name in box.free]
+    for _ in range(ROUNDS):
+        before = judge(best)
+        for name in pinned:
+            other = best._replace(**{name: 1.0 - getattr(best, name)})
+            if judge(other) > judge(best):
+                best = other
+        for name in moved:
+            best = _along(judge, best, name)
+        if judge(best) - before <= ENOUGH * abs(before):
+            return best
+    return best
+
+
+def _along(judge: Judge, best: Point, name: str) -> Point:
+    """Return the best case on one axis, searched only where a small step gains."""
+    here = getattr(best, name)
+    value = judge(best)
+    for step in (PROBE, -PROBE):
+        near = min(1.0, max(0.0, here + step))
+        if near != here and judge(best._replace(**{name: near})) > value:
+            return _golden(judge, best, name, here, 1.0 if step > 0 else 0.0)
+    return best
+
+
+def _golden(judge: Judge, best: Point, name: str, start: float, end: float) -> Point:
+    """Search the stretch from ``start`` to ``end`` by golden section; return the best case met."""
+    a, b = start, end
+    c, d = b - GOLDEN * (b - a), a + GOLDEN * (b - a)
+    for _ in range(SECTIONS):
+        at_c, at_d = best._replace(**{name: c}), best._replace(**{name: d})
+        if judge(at_c) >= judge(at_d):
+            b, d = d, c
+            c = b - GOLDEN * (b - a)
+        else:
+            a, c = c, d
+            d = a + GOLDEN * (b - a)
+    met = [best, *(best._replace(**{name: t}) for t in (c, d, end, start))]
+    return max(met, key=judge)
