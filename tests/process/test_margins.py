@@ -81,24 +81,28 @@ def drawn(count, seed):
         yield plant, replace(tuned, gain=tuned.gain * random.uniform(0.3, 2), integral_time=tuned.integral_time * random.uniform(0.6, 3))
 
 
-@pytest.mark.parametrize("count", [8, pytest.param(300, marks=pytest.mark.outside_long)])
+@pytest.mark.parametrize("count", [8, pytest.param(150, marks=pytest.mark.outside_long)])
 def test_against_python_control(count):
     """python-control on a dense response with the exact dead time: margins and peak sensitivity to 0.1 %."""
     compared = 0
     for plant, settings in drawn(count, seed=5):
         total = plant.theta + plant.lag + plant.sensor_lag
-        omega = np.unique(np.concatenate((np.geomspace(1e-5 / total, 0.02 / plant.theta, 1200), np.arange(0.02, 15, 0.01) / plant.theta)))
+        omega = np.concatenate((np.geomspace(1e-5 / total, 2 / plant.theta, 3000), np.arange(2.01, 15, 0.01) / plant.theta))
         s = 1j * omega
         body = plant.slope * np.exp(-plant.theta * s) / (s + (0 if plant.is_integrating else 1 / plant.tau))
         body = body / ((1 + plant.lag * s) * (1 + plant.sensor_lag * s))
         loop = body * settings.gain * (1 + 1 / (settings.integral_time * s) + settings.derivative_time * s)
         found = margins(plant, settings)
-        assert found.sensitivity == pytest.approx(float(1 / np.abs(1 + loop).min()), rel=1e-3)
+        # without further lag derivative action leaves |L| level above the reference's last frequency, at any phase
+        level = settings.gain * settings.derivative_time * plant.slope if plant.lag + plant.sensor_lag == 0 else 0.0
+        assert found.stable or level < 1 or found.sensitivity == inf
+        if level < 1:
+            assert found.sensitivity == pytest.approx(max(float(1 / np.abs(1 + loop).min()), 1 / (1 - level)), rel=1e-3)
         if not found.stable:
             continue
         compared += 1
         gains, phases, *_ = control.stability_margins(control.frd(loop, omega), returnall=True)
-        assert found.gain == pytest.approx(min(gains[gains > 1]), rel=1e-3)
+        assert found.gain == pytest.approx(min(gains[gains > 1].min(), 1 / level if level > 0 else inf), rel=1e-3)
         assert found.phase == pytest.approx(min(abs(phases)), rel=1e-3)
     assert compared > count / 2
 
