@@ -1,0 +1,1 @@
+"""Rules about direction and safe state, one a file."""
