@@ -1,0 +1,1 @@
+"""Rules about mode, one a file."""
