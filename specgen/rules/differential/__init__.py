@@ -1,0 +1,1 @@
+"""Rules about the differential of on-off control, one a file."""
