@@ -1,0 +1,1 @@
+"""Rules about the cycle time of time-proportioned control, one a file."""
