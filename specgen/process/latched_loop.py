@@ -16,6 +16,7 @@ def simulate_latched(
     load: float,
     horizon: float,
     band: Band | None = None,
+    load_seen: float | None = None,
 ) -> Run:
     """Run a loop with latched duty, limits and anti-windup from a latch on.
 
@@ -35,6 +36,8 @@ def simulate_latched(
         Time to run for; the run ends at a latch [s].
     band : Band or None
         Band whose reaching is timed; with one, the run ends early once value and output rest.
+    load_seen : float or None
+        Load up to the first latch, where it changes just after it: derivative action does not see the change yet [1].
 
     Returns
     -------
@@ -64,12 +67,13 @@ def simulate_latched(
     states, level, integral = list(start.modes), start.level, start.integral
     edges = deque(start.edges)
     now, finish = start.time, start.time + horizon
-    quiet = 0.0
+    quiet, seen = 0.0, load if load_seen is None else load_seen
     watch.keep(now, weighed(modes.true, states))
     while now < finish:
         reading = weighed(modes.measured, states)
         if settings.derivative_time > 0:
-            reading += settings.derivative_time * measured_slope(modes, states, level, -load)
+            reading += settings.derivative_time * measured_slope(modes, states, level, -seen)
+        seen = load
         wanted = integral - settings.gain * reading
         duty = min(max(wanted, 0.0), 1.0)
         watch.outputs.append(duty)

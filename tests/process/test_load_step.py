@@ -68,6 +68,7 @@ PLANTS = [
     pytest.param(Dynamics(0.1, 1300, 25), id="first order"),
     pytest.param(Dynamics(0.1, 1300, 25, lag=10, sensor_lag=8), id="lags"),
     pytest.param(Dynamics(0.05, inf, 25, lag=10), id="integrating"),
+    pytest.param(Dynamics(0.1, 1300, 25, lag=80), id="derivative action"),
 ]
 
 
@@ -89,7 +90,7 @@ def test_just_after_a_latch_is_the_worst_instant(plant, cycle_time, duty):
         begun = LoopState(0.0, states, integral, start.level, start.edges)
         run = simulate_latched(plant, settings, cycle_time, begun, duty + 0.15, 12 * settings.theta_e)
         worst = max(worst, -run.lowest)
-    assert found.deviation > worst * 0.97
+    assert found.deviation > worst * 0.98
     assert found.deviation < worst * 1.25
 
 
