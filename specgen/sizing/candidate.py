@@ -3,8 +3,9 @@
 from dataclasses import dataclass
 from typing import Literal
 
-from specgen.model.loop import Mode
-from specgen.model.loop import Output as Device
+from specgen.model.loop import Mode, Output
+
+Device = Output
 
 ORDER: tuple[Device, ...] = ("relay", "contactor", "ssr", "power_controller", "signal", "relay_pair")
 

@@ -54,7 +54,10 @@ class OnOffSettings:
 class Tuning:
     """Starting values in the ideal form ``Kc(1 + 1/(Ti s) + Td s)``; gain as output share per loop quantity.
 
-    ``effective_delay`` and its parts in s; margins are None where they are not computed yet.
+    ``effective_delay`` and ``delay_without_cycle`` in s. Margins are the worst over the cases, of the loop with the
+    charged delay and of the latched loop itself; ``stable`` tells whether the latched loop is stable at 10 %, 90 % and
+    over the declared duties. ``load_deviation`` is simulated, present where a sudden load is declared; ``overshoot`` and
+    ``time_to_band`` [s] are simulated from rest, None where the plant cannot say where it rests.
     """
 
     gain: float
@@ -63,9 +66,10 @@ class Tuning:
     derivative_time: float
     effective_delay: float
     delay_without_cycle: float
-    gain_margin: float | None
-    phase_margin: float | None
-    peak_sensitivity: float | None
+    gain_margin: float
+    phase_margin: float
+    peak_sensitivity: float
+    stable: bool
     load_deviation: float | None
     overshoot: float | None
     time_to_band: float | None

@@ -1,0 +1,40 @@
+"""``specgen check``: read, decide, print the verdict table and every problem."""
+
+from pathlib import Path
+
+import click
+
+from specgen.cli.common import exit_code, folder_argument, read, show_problems
+from specgen.core.table import aligned
+from specgen.design.record import dump, record_of
+from specgen.design.types import Design
+from specgen.view.summary import one_line
+
+
+@click.command()
+@folder_argument
+@click.option("--format", "form", type=click.Choice(["text", "json"]), default="text", show_default=True, help="json prints the record.")
+@click.pass_context
+def check(context: click.Context, folder: Path, form: str) -> None:
+    """Read and decide every loop; print the verdicts and every problem.
+
+    Exit code: 2 with any problem in the files, else 1 with a held loop, else 0.
+    """
+    design = read(folder)
+    if form == "json":
+        click.echo(dump(record_of(design)).decode("utf-8"), nl=False)
+    else:
+        _print_text(design)
+    context.exit(exit_code(design))
+
+
+def _print_text(design: Design) -> None:
+    rows = [(loop.tag, loop.verdict, one_line(loop)) for loop in design.loops]
+    if rows:
+        click.echo(aligned(("loop", "verdict", "decision"), rows))
+    if design.problems:
+        click.echo("")
+        show_problems(design, err=False)
+    counts = ", ".join(f"{n} {v}" for v in ("meets", "deviates", "open", "held") if (n := sum(1 for x in design.loops if x.verdict == v)))
+    problems = f"{len(design.problems)} problem{'' if len(design.problems) == 1 else 's'} in the files"
+    click.echo(f"\n{len(design.loops)} loops: {counts or 'none'}; {problems}")

@@ -1,0 +1,58 @@
+"""What several commands share: the folder argument, the reading of a design, problems on the terminal, the exit code."""
+
+from pathlib import Path
+
+import click
+
+from specgen.core.diagnostic import Diagnostic
+from specgen.design.project import load_design
+from specgen.design.types import Design
+from specgen.source.excerpt import excerpt
+
+folder_argument = click.argument("folder", default=".", type=click.Path(file_okay=False, path_type=Path), metavar="[DIR]")
+
+
+def read(folder: Path) -> Design:
+    """Read and decide a folder, or say in one line why that cannot be."""
+    if not folder.is_dir():
+        raise click.ClickException(f"{folder} is no folder; name the one that holds mkdocs.yml and loops/")
+    if not (folder / "loops").is_dir():
+        raise click.ClickException(f"{folder} has no folder loops/; `specgen start {folder}` makes one to begin with")
+    with click.progressbar(length=1, label="deciding", file=click.get_text_stream("stderr"), hidden=not _on_terminal()) as bar:
+
+        def progress(done: int, of: int) -> None:
+            bar.length = of
+            bar.pos = done
+            bar.update(0)
+
+        return load_design(folder, progress)
+
+
+def _on_terminal() -> bool:
+    return click.get_text_stream("stderr").isatty()
+
+
+def exit_code(design: Design) -> int:
+    """Return 2 with any input problem, else 1 with anything held, else 0."""
+    if any(problem.severity == "error" for problem in design.problems):
+        return 2
+    return 1 if design.verdict == "held" else 0
+
+
+def show_problems(design: Design, *, err: bool) -> None:
+    """Print every problem with its line of text and a hint below the place."""
+    texts = {source.name: source.content for source in design.sources}
+    for problem in design.problems:
+        click.echo(problem.line(), err=err)
+        shown = _excerpt(problem, texts)
+        if shown:
+            click.echo(shown, err=err)
+        elif problem.hint:
+            click.echo(f"  {problem.hint}", err=err)
+
+
+def _excerpt(problem: Diagnostic, texts: dict[str, bytes]) -> str:
+    content = texts.get(problem.span.file)
+    if content is None:
+        return ""
+    return excerpt(problem.span, content.decode("utf-8", errors="replace"), problem.hint)

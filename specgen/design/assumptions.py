@@ -1,0 +1,79 @@
+"""What is taken for granted because nothing else was written: defaults that bear on a result, and inherited limits."""
+
+from dataclasses import dataclass
+
+from specgen.model.loops import ReadLoop
+from specgen.model.panel import Panel
+from specgen.model.traits import Traits
+from specgen.sizing.candidate import Assumption
+
+
+@dataclass(frozen=True, slots=True)
+class _Default:
+    path: tuple[str, ...]
+    why: str
+    value: str = ""
+
+
+_LOOP_DEFAULTS = (
+    _Default(("need", "stability"), "not written: no sustained oscillation is wanted"),
+    _Default(("need", "range"), "not written: the plant is run at its setpoint alone", "the setpoint"),
+    _Default(("sensor", "class"), "not written: the usual class"),
+    _Default(("sensor", "wires"), "not written: the usual wiring"),
+    _Default(("element", "refrigerant_circuit"), "not written: the machine has none of its own", "no"),
+    _Default(("element", "pump_down"), "not written: the compressor is stopped directly", "no"),
+)
+
+
+def loop_assumptions(read: ReadLoop, traits: Traits) -> tuple[Assumption, ...]:
+    """Return what a loop takes for granted by its own silence."""
+    loop = read.loop
+    found: list[Assumption] = []
+    for default in _LOOP_DEFAULTS:
+        section = getattr(loop, default.path[0])
+        name = "class_" if default.path[1] == "class" else default.path[1]
+        if default.path in read.spans or not hasattr(section, name):
+            continue
+        if default.path[1] in ("refrigerant_circuit", "pump_down") and not traits.starts_limited:
+            continue
+        value = default.value or str(getattr(section, name))
+        found.append(Assumption(".".join(default.path), value, default.why))
+    found += [
+        Assumption(".".join(str(step) for step in path), read_written(read, path), f"taken over by same_as, from {read.spans[path].file}")
+        for path in sorted(read.inherited, key=str)
+        if path[0] == "limits" and len(path) > 1
+    ]
+    if loop.limits.after_power_return is None:
+        found.append(
+            Assumption("limits.after_power_return", "resume", "not written; for injury and fire it must be (rule S4)")
+            if loop.limits.consequence not in ("injury", "fire")
+            else Assumption("limits.after_power_return", "not declared", "needed where the consequence is injury or fire (rule S4)")
+        )
+    return tuple(found)
+
+
+def read_written(read: ReadLoop, path: tuple[str | int, ...]) -> str:
+    """Return a field's value as it was written."""
+    here: object = read.loop
+    for step in path:
+        here = getattr(here, str(step), None) if not isinstance(step, int) else here
+    text = getattr(here, "text", None)
+    return str(text if text is not None else here)
+
+
+def panel_assumptions(panel: Panel) -> tuple[Assumption, ...]:
+    """Return what the panel takes for granted by its own silence."""
+    found: list[Assumption] = []
+    if "tolerance" not in panel.supply.model_fields_set:
+        found.append(Assumption("supply.tolerance", panel.supply.tolerance.text, "not written in panel.yml: the usual tolerance"))
+    if "duty" not in panel.model_fields_set:
+        hours = f"{panel.duty.hours_per_day.text} a day, {panel.duty.days_per_year} days a year"
+        found.append(Assumption("duty", hours, "not written in panel.yml"))
+    for name in type(panel.house).model_fields:
+        if name not in panel.house.model_fields_set and name not in ("after_power_return", "setting_step", "spare_outputs"):
+            value = getattr(panel.house, name)
+            text = ", ".join(f"{number:g}" for number in value) + " s" if isinstance(value, tuple) else getattr(value, "text", str(value))
+            found.append(Assumption(f"house.{name}", text, "the default; not written in panel.yml"))
+    if "interior_limit" not in panel.enclosure.model_fields_set:
+        found.append(Assumption("enclosure.interior_limit", panel.enclosure.interior_limit.text, "not written: devices are rated at this"))
+    return tuple(found)

@@ -1,0 +1,90 @@
+"""From a folder to a design: read everything, decide every loop that could be read."""
+
+from collections.abc import Callable, Sequence
+from pathlib import Path
+
+from specgen.catalogue.load import Catalogue, catalogue_digest, load_catalogue, read_devices
+from specgen.core.diagnostic import Diagnostic
+from specgen.design.decide import decide
+from specgen.design.types import VERDICTS, DecidedLoop, Design, SourceFile, Verdict
+from specgen.model.loops import read_loops
+from specgen.model.panel import Panel
+from specgen.model.reader import place, read_model
+from specgen.rules.engine import rules_digest
+from specgen.source.document import Document
+from specgen.source.folder import Sources, read_folder
+
+LOOPS = "loops"
+Progress = Callable[[int, int], None]
+
+
+def load_design(project: Path, progress: Progress | None = None) -> Design:
+    """Read a project's ``loops`` folder and decide every loop in it.
+
+    Parameters
+    ----------
+    project : pathlib.Path
+        The folder that holds ``mkdocs.yml`` and ``loops/``.
+    progress : callable, optional
+        Called with the loops decided and their number.
+
+    Returns
+    -------
+    Design
+        Every loop that could be decided and every problem met; nothing is raised for what the files hold.
+    """
+    return design_of(read_folder(project / LOOPS, LOOPS), progress)
+
+
+def design_of(sources: Sources, progress: Progress | None = None) -> Design:
+    """Decide what was read."""
+    problems = list(sources.problems)
+    panel, found = _read_panel(sources.panel)
+    problems += found
+    catalogue, found = _read_catalogue(sources.devices)
+    problems += found
+    reading = read_loops(sources.loops)
+    problems += reading.problems
+    decided: list[DecidedLoop] = []
+    if panel is not None:
+        for done, read in enumerate(reading.loops):
+            loop, faults = decide(read, panel, catalogue)
+            problems += faults
+            if loop is not None:
+                decided.append(loop)
+            if progress is not None:
+                progress(done + 1, len(reading.loops))
+    return Design(
+        panel=panel,
+        loops=tuple(decided),
+        problems=tuple(sorted(set(problems))),
+        sources=tuple(SourceFile(name, content) for name, content in sources.files),
+        rules_digest=rules_digest(),
+        catalogue_digest=catalogue_digest(),
+        verdict=worst_verdict([loop.verdict for loop in decided]),
+    )
+
+
+def worst_verdict(verdicts: Sequence[Verdict]) -> Verdict:
+    """Return the verdict of a panel: that of its worst loop.
+
+    Examples
+    --------
+    >>> worst_verdict(["meets", "open", "deviates"]), worst_verdict([])
+    ('open', 'meets')
+    """
+    return next((verdict for verdict in VERDICTS if verdict in verdicts), "meets")
+
+
+def _read_panel(document: Document | None) -> tuple[Panel | None, list[Diagnostic]]:
+    if document is None:
+        return None, []
+    panel, problems = read_model(Panel, document.data)
+    return (panel if document.sound else None), [place(document, problem) for problem in problems]
+
+
+def _read_catalogue(document: Document | None) -> tuple[Catalogue, list[Diagnostic]]:
+    if document is None:
+        return load_catalogue(None), []
+    devices, problems = read_devices(document)
+    return load_catalogue(devices), list(problems)

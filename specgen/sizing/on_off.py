@@ -1,0 +1,174 @@
+"""Settings of on-off control: the differential between what the machine and the product allow."""
+
+from dataclasses import replace
+from math import inf, isfinite
+
+from specgen.core.figure import Figure
+from specgen.model.loop import Loop
+from specgen.model.panel import Panel
+from specgen.process.box import Box, Unmodelled
+from specgen.process.differential import least_differential, widest_differential
+from specgen.process.limit_cycle import NoCycle
+from specgen.process.on_off import OnOffPrediction, predict_on_off
+from specgen.sizing.candidate import Assumption, Unsized
+from specgen.sizing.device import DeviceChoice
+from specgen.sizing.measurement import MeasuringError
+from specgen.sizing.rounding import chosen_differential
+from specgen.sizing.settings import Bound, OnOffSettings, Placement
+from specgen.sizing.wear import allowed_per_hour, hours_per_year, life_in_years, weakest
+
+CYCLE = "settled on-off cycle in the worst case of the declared ranges; compared with numerical integration in tests/process"
+NOISES = 2  # D2: a differential is at least this many times the noise
+
+
+def on_off_settings(
+    loop: Loop, panel: Panel, box: Box | Unmodelled, device: DeviceChoice | Unsized, error: MeasuringError | Unsized
+) -> OnOffSettings | Unsized:
+    """Choose the differential of an on-off loop and predict its worst cases.
+
+    Returns
+    -------
+    OnOffSettings or Unsized
+        Unsized where the plant is not known or no case of it switches.
+    """
+    if isinstance(box, Unmodelled):
+        return Unsized(box.because, box.needs)
+    if isinstance(device, Unsized):
+        return Unsized(f"no device: {device.because}", device.needs)
+    placement: Placement = (loop.choose.placement if loop.choose else None) or "centred"
+    step = setting_step(loop, panel)
+    if step is None:
+        return Unsized("neither a setting step nor the measurement's step is declared", ("sensor.step",))
+    try:
+        return _settled(loop, panel, box, device, error, placement, step)
+    except NoCycle as none:
+        return Unsized(f"the loop cannot switch: {none}", ())
+
+
+def _settled(
+    loop: Loop, panel: Panel, box: Box, device: DeviceChoice | Unsized, error: MeasuringError | Unsized, placement: Placement, step: float
+) -> OnOffSettings:
+    run, rest = _least_times(loop)
+    bounds = _least_bounds(loop, panel, box, device, placement)
+    least = max((bound.limit for bound in bounds if isfinite(bound.limit)), default=step)
+    most, most_bound = _most(loop, box, error, placement, run, rest)
+    chosen = loop.choose.differential if loop.choose else None
+    differential = float(chosen) if chosen is not None else chosen_differential(least, most, step, even=placement == "centred")
+    enforced = predict_on_off(box, differential, placement, run, rest)
+    natural = replace(enforced, min_run=0.0, min_rest=0.0)
+    if enforced.shortest_on.value < run or enforced.shortest_off.value < rest:
+        natural = predict_on_off(box, differential, placement)
+    starts = enforced.starts_per_hour.value + _defrosts(loop)
+    operations = starts * hours_per_year(loop, panel)
+    last = weakest(device)
+    life = life_in_years(last.operations, operations) if last else None
+    setpoint = float(loop.need.setpoint)
+    return OnOffSettings(
+        differential=differential,
+        placement=placement,
+        switch_on=setpoint + enforced.switch_on,
+        switch_off=setpoint + enforced.switch_off,
+        least=least,
+        most=most,
+        least_bounds=bounds,
+        most_bound=most_bound,
+        natural=natural,
+        enforced=enforced,
+        starts_per_hour=starts,
+        operations_per_year=operations,
+        contact_life=life,
+        weakest=last.contact.what if last else "",
+        chosen_by="choose" if chosen is not None else "computed",
+        figures=_figures(enforced, natural, starts, operations, life, last.operations if last else None),
+        assumptions=() if placement != "centred" or (loop.choose and loop.choose.placement) else (_CENTRED,),
+    )
+
+
+_CENTRED = Assumption("choose.placement", "centred", "not written: a switch point lies half the differential on each side of the setpoint")
+
+
+def setting_step(loop: Loop, panel: Panel) -> float | None:
+    """Return the step in which a differential can be entered: the house's, or the measurement's for flow and other quantities."""
+    house = panel.house.setting_step
+    quantity = loop.need.quantity
+    if quantity == "temperature":
+        return float(house.temperature)
+    if quantity == "pressure":
+        return float(house.pressure)
+    if quantity == "humidity":
+        return float(house.humidity)
+    if quantity == "level" and loop.unit.symbol == "percent":
+        return float(house.level)
+    return float(loop.sensor.step) if loop.sensor.step is not None else None
+
+
+def _least_times(loop: Loop) -> tuple[float, float]:
+    return float(getattr(loop.element, "min_run", None) or 0.0), float(getattr(loop.element, "min_rest", None) or 0.0)
+
+
+def _defrosts(loop: Loop) -> float:
+    """Return starts an hour that defrosts add (M12)."""
+    defrost = getattr(loop.element, "defrost", None)
+    return defrost.per_day / 24 if defrost is not None else 0.0
+
+
+def _least_bounds(loop: Loop, panel: Panel, box: Box, device: DeviceChoice | Unsized, placement: Placement) -> tuple[Bound, ...]:
+    bounds: list[Bound] = []
+    if loop.sensor.step is not None:
+        bounds.append(Bound("D1", float(loop.sensor.step), "one step of the measurement"))
+    if loop.sensor.noise is not None:
+        bounds.append(Bound("D2", NOISES * float(loop.sensor.noise), "twice the measurement noise"))
+    starts = getattr(loop.element, "starts_per_hour", None)
+    run, rest = _least_times(loop)
+    last = weakest(device)
+    per_hour = allowed_per_hour(last.operations, panel, loop) - _defrosts(loop) if last else None
+    own = max(starts - _defrosts(loop), 0.0) if starts is not None else None
+    found = least_differential(
+        box, placement, starts_per_hour=own or None, min_run=run, min_rest=rest,
+        switchings_per_hour=per_hour if per_hour and per_hour > 0 else None,
+    )  # fmt: skip
+    words = {
+        "starts": ("D3", f"{starts} starts an hour"), "life": ("D5", "the house's contact life"), "run": ("D6", "the least run"),
+        "rest": ("D6", "the least rest"),
+    }  # fmt: skip
+    bounds += [Bound(words[name][0], value, words[name][1]) for name, value in found.items()]
+    if own == 0.0:
+        bounds.append(Bound("D3", inf, "the defrosts alone use up the starts"))
+    return tuple(bounds)
+
+
+def _most(
+    loop: Loop, box: Box, error: MeasuringError | Unsized, placement: Placement, run: float, rest: float
+) -> tuple[float, Bound | None]:
+    if isinstance(error, Unsized):
+        return inf, None
+    above, below = float(loop.need.tolerance.above) - error.root_sum, float(loop.need.tolerance.below) - error.root_sum
+    most = widest_differential(box, above, below, placement, run, rest)
+    return most, Bound("D4", most, "the tolerance less the measuring error")
+
+
+def _figures(
+    enforced: OnOffPrediction, natural: OnOffPrediction, starts: float, operations: float, life: float | None, lasts: float | None
+) -> tuple[Figure, ...]:
+    d = {"d": (enforced.differential, "change")}
+    above, below = enforced.above, enforced.below
+    found = [
+        Figure("d", "differential, the whole distance between the switch points", "", enforced.differential, "change", "rules D1 to D6"),
+        Figure("e+", "largest excursion above the setpoint", "peak − setpoint", above.value, "change", CYCLE, d, above.text),
+        Figure("e−", "largest excursion below the setpoint", "setpoint − trough", below.value, "change", CYCLE, d, below.text),
+        Figure("s", "largest swing", "peak − trough", enforced.swing.value, "change", CYCLE, d, enforced.swing.text),
+        Figure("P", "shortest period", "t_on + t_off", enforced.period, "time", CYCLE, d, enforced.starts_per_hour.text),
+        Figure("N", "most starts", "3600 s/P, defrosts added", starts, "per_hour", CYCLE, {"P": (enforced.period, "time")}),
+        Figure("t_on", "shortest on time, without timers", "", natural.shortest_on.value, "time", CYCLE, d, natural.shortest_on.text),
+        Figure("t_off", "shortest off time, without timers", "", natural.shortest_off.value, "time", CYCLE, d, natural.shortest_off.text),
+        Figure(
+            "n_op", "operations a year", "N × hours × days", operations, "per_year", "ISO 13849-1 annex C, n_op (from memory)",
+            {"N": (starts, "per_hour"), "hours a year": (operations / starts if starts else 0.0, "number")},
+        ),
+    ]  # fmt: skip
+    if life is not None and lasts is not None and isfinite(life):
+        inputs = {"operations": (lasts, "operations"), "n_op": (operations, "per_year")}
+        found.append(Figure("L", "contact life of the weakest contact", "operations/n_op", life, "years", "rule D5", inputs))
+    return tuple(found)
+
+

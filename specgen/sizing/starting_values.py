@@ -1,0 +1,187 @@
+"""Starting values for a loop's worst case, with the margins they leave over all cases."""
+
+from dataclasses import dataclass
+from math import isfinite
+
+from specgen.core.figure import Figure
+from specgen.model.loop import Choose, Loop
+from specgen.process.box import Box, Point
+from specgen.process.loop_dynamics import Dynamics
+from specgen.process.loop_map import stable_cycle, stated_margins
+from specgen.process.margins import Margins, margins
+from specgen.process.tuning import NothingLimitsTheGainError, Pulse, Settings, cycle_delay, simc
+from specgen.sizing.candidate import Assumption, Unsized
+
+SIMC = "Skogestad, J. Process Control 13 (2003) 291-309"
+ALWAYS = (0.1, 0.9)  # duties at which the latched loop must be stable, whatever is declared
+INSIDE = 0.02  # a duty nearer to an end than this is no steady cycle
+
+
+@dataclass(frozen=True, slots=True)
+class Hardest:
+    """The case with the highest slope and longest delay, its neighbours in the remaining ranges, and the duties of the box."""
+
+    point: Point
+    dynamics: Dynamics
+    others: tuple[Dynamics, ...]
+    duty_low: float
+    duty_high: float
+    text: str
+
+
+@dataclass(frozen=True, slots=True)
+class Start:
+    """Settings with the hardest case they were made for and the margins they leave."""
+
+    settings: Settings
+    hardest: Hardest
+    cycle_time: float
+    charged: float
+    actuator: float
+    margins: Margins
+    stable: bool
+    figures: tuple[Figure, ...]
+    assumptions: tuple[Assumption, ...]
+
+
+def hardest_case(box: Box, gain_factor: float = 1.0) -> Hardest:
+    """Find the case that starting values are made for: highest slope, longest dead time and lags.
+
+    ``gain_factor`` is how much steeper than on average the final element acts where it is steepest (a valve) [1].
+    """
+    base = max(box.ends("strength", "load", "capacity"), key=lambda point: box.plant_at(point).gain_per_second)
+    base = base._replace(
+        dead_time=_longer(box, "dead_time"), lag=_longer(box, "lag"), sensor_lag=_longer(box, "sensor_lag")
+    )
+    own = dynamics_of(box, base, gain_factor)
+    others = {
+        dynamics_of(box, base._replace(loss=p.loss, lag=p.lag, sensor_lag=p.sensor_lag), gain_factor)
+        for p in box.ends("loss", "lag", "sensor_lag")
+    }
+    low, high = box.duty_low[0], box.duty_high[0]
+    ordered = sorted(others - {own}, key=lambda d: (d.tau, d.lag, d.sensor_lag))
+    return Hardest(base, own, tuple(ordered), _inside(low), _inside(high), box.text(base))
+
+
+def dynamics_of(box: Box, point: Point, gain_factor: float = 1.0) -> Dynamics:
+    """Return the plant of a case as a proportional controller meets it."""
+    plant = box.plant_at(point)
+    return Dynamics(plant.gain_per_second * gain_factor, plant.tau, plant.theta, plant.lag, plant.sensor_lag)
+
+
+def _longer(box: Box, axis: str) -> float:
+    held = getattr(box, axis)
+    return 1.0 if held.at(1.0) >= held.at(0.0) else 0.0
+
+
+def _inside(duty: float) -> float:
+    return min(max(duty, INSIDE), 1 - INSIDE)
+
+
+def start_of(
+    loop: Loop, hardest: Hardest, *, cycle_time: float = 0.0, pulse: Pulse = "latched", actuator: float = 0.0, scan: float = 0.0
+) -> Start | Unsized:
+    """Take starting values by SIMC for the hardest case, the cycle's delay included, and the margins over all cases.
+
+    Parameters
+    ----------
+    loop : Loop
+        The loop; ``choose.proportional_band`` and the times beside it take the place of the computed ones.
+    hardest : Hardest
+        As :func:`hardest_case`.
+    cycle_time, actuator, scan : float
+        Cycle time of a time-proportioned output, delay of the actuator, and the controller's scan [s].
+    pulse : {"latched", "ramp"}
+        How the controller forms the pulse.
+
+    Returns
+    -------
+    Start or Unsized
+        Unsized where nothing limits the gain.
+    """
+    plant = hardest.dynamics
+    charged = cycle_delay(cycle_time, max(hardest.duty_high, 0.5), pulse, plant.theta, plant.lag) if cycle_time > 0 else 0.0
+    lags = tuple(lag for lag in (plant.lag, plant.sensor_lag) if lag > 0)
+    # a controller looks once a scan: half of it is delay, which keeps the gain finite where no dead time was declared
+    extra = actuator + scan / 2
+    try:
+        settings = simc(plant.slope, plant.tau, plant.theta, lags, extra, charged)
+    except NothingLimitsTheGainError:
+        return Unsized("nothing limits the gain: neither dead time nor lag nor a cycle", ("plant.dead_time",))
+    if loop.choose is not None:
+        settings = with_choice(settings, loop.choose)
+    cases = tuple(_delayed(case, extra) for case in (plant, *hardest.others))
+    duties = tuple(sorted({hardest.duty_low, hardest.duty_high}))
+    if cycle_time > 0:
+        found = [stated_margins(case, settings, cycle_time, duties, charged)[0] for case in cases]
+    else:
+        found = [margins(case, settings) for case in cases]
+    worst = Margins(
+        min(m.gain for m in found), min(m.phase for m in found), max(m.sensitivity for m in found), all(m.stable for m in found),
+        found[0].gain_reduction, found[0].phase_crossover, found[0].gain_crossover,
+    )  # fmt: skip
+    stable = worst.stable
+    if cycle_time > 0:
+        asked = tuple(sorted({*ALWAYS, *duties}))
+        stable = stable and all(stable_cycle(case, settings, cycle_time, asked) for case in cases)
+    figures = _figures(settings, hardest, worst, cycle_time)
+    return Start(settings, hardest, cycle_time, charged, extra, worst, stable, figures, _assumed(cycle_time, pulse))
+
+
+def with_choice(settings: Settings, choose: Choose) -> Settings:
+    """Put the designer's own band and times in the place of the computed ones."""
+    if choose.proportional_band is None and choose.integral_time is None and choose.derivative_time is None:
+        return settings
+    gain = settings.gain if choose.proportional_band is None else 1 / float(choose.proportional_band)
+    integral = settings.integral_time if choose.integral_time is None else float(choose.integral_time)
+    derivative = settings.derivative_time if choose.derivative_time is None else float(choose.derivative_time)
+    return Settings(gain, integral, derivative, settings.reduced)
+
+
+def _delayed(plant: Dynamics, extra: float) -> Dynamics:
+    return Dynamics(plant.slope, plant.tau, plant.theta + extra, plant.lag, plant.sensor_lag) if extra > 0 else plant
+
+
+def _assumed(cycle_time: float, pulse: Pulse) -> tuple[Assumption, ...]:
+    if cycle_time <= 0 or pulse == "ramp":
+        return ()
+    return (
+        Assumption(
+            "controllers.pulse", "latched",
+            "a duty latched at the start of the cycle delays the loop by the longest on time; an output compared with a ramp "
+            "would win most of it",
+        ),
+    )  # fmt: skip
+
+
+def _figures(settings: Settings, hardest: Hardest, worst: Margins, cycle_time: float) -> tuple[Figure, ...]:
+    plant, case = hardest.dynamics, hardest.text
+    slope = (plant.slope, "change_per_second")
+    found = [Figure("k'", "highest slope with full output", "K/τ, or r_on + r_off", plant.slope, "change_per_second", "plant", {}, case)]
+    reduced = settings.reduced
+    if reduced is not None:
+        parts = {
+            "θ": (reduced.delay.dead_time, "time"), "actuator and scan": (reduced.delay.actuator, "time"),
+            "cycle": (reduced.delay.cycle, "time"), "half of the largest lag left out": (reduced.delay.half_lag, "time"),
+            "other lags": (reduced.delay.other_lags, "time"),
+        }  # fmt: skip
+        used = {name: part for name, part in parts.items() if part[0] > 0}
+        source = SIMC + ", half rule"
+        found.append(Figure("θe", "effective delay", " + ".join(used) or "0", reduced.delay.total, "time", source, used, case))
+    series = "" if settings.derivative_time == 0 else ", series form turned into the ideal one"
+    gain = (settings.gain, "share_per_change")
+    found += [
+        Figure("Kc", "gain", "1/(k' · 2 θe)" + series, settings.gain, "share_per_change", SIMC, {"k'": slope}, case),
+        Figure("Xp", "proportional band", "100 %/Kc", settings.proportional_band, "change", "definition", {"Kc": gain}),
+        Figure("Ti", "integral time", "min(τ, 8 θe)" + series, settings.integral_time, "time", SIMC, {}, case),
+    ]
+    if settings.derivative_time > 0:
+        found.append(Figure("Td", "derivative time", "second lag" + series, settings.derivative_time, "time", SIMC, {}, case))
+    how = "exact frequency response with e^(-θs)" + ("; the latched loop's own one-cycle map where that is worse" if cycle_time > 0 else "")
+    source = "frequency search, no approximation of the dead time"
+    if isfinite(worst.gain):
+        found.append(Figure("GM", "gain margin, worst", how, worst.gain, "number", source, {}, case))
+    if isfinite(worst.phase):
+        found.append(Figure("PM", "phase margin, worst", how, worst.phase, "degrees", source, {}, case))
+    found.append(Figure("Ms", "peak sensitivity, worst", how, worst.sensitivity, "number", source, {}, case))
+    return tuple(found)
