@@ -1,0 +1,1 @@
+"""Rules about tuning, one a file."""
