@@ -1,0 +1,1 @@
+"""Rules about valves and three-point control, one a file."""
