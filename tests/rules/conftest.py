@@ -130,12 +130,16 @@ class Answer:
     needs: tuple
 
 
-def ask(code, asked):
-    """Ask one rule through the engine and fill its sentence."""
-    found = next(finding for finding in examine_all(asked) if finding.rule == code)
+def said(found, asked):
+    """Fill a finding's sentence."""
     text = Speaker(asked.loop.unit, asked.loop.difference_unit).fill(found.text, found.words).replace(THIN, " ")
     assert "{" not in text
     return Answer(found.outcome, text, found.margin, found.needs)
+
+
+def ask(code, asked):
+    """Ask one rule through the engine and fill its sentence."""
+    return said(next(finding for finding in examine_all(asked) if finding.rule == code), asked)
 
 
 def on_off(**changes):
@@ -215,6 +219,7 @@ def faults(on=(None, None, None), off=(None, None, None), **times):
 def make():
     """Give everything a rule's test builds its cases from."""
     return SimpleNamespace(
-        loop=loop, panel=panel, case=case, ask=ask, on_off=on_off, proportioned=proportioned, tuning=tuning, continuous=continuous,
+        loop=loop, panel=panel, case=case, ask=ask, said=said, on_off=on_off, proportioned=proportioned, tuning=tuning, 
+        continuous=continuous,
         stepped=stepped, faults=faults, unsized=NOT_SIZED, bound=Bound,
     )  # fmt: skip
