@@ -219,7 +219,6 @@ def faults(on=(None, None, None), off=(None, None, None), **times):
 def make():
     """Give everything a rule's test builds its cases from."""
     return SimpleNamespace(
-        loop=loop, panel=panel, case=case, ask=ask, said=said, on_off=on_off, proportioned=proportioned, tuning=tuning, 
-        continuous=continuous,
-        stepped=stepped, faults=faults, unsized=NOT_SIZED, bound=Bound,
+        loop=loop, panel=panel, case=case, ask=ask, said=said, on_off=on_off, proportioned=proportioned, tuning=tuning,
+        continuous=continuous, stepped=stepped, faults=faults, unsized=NOT_SIZED, bound=Bound,
     )  # fmt: skip
