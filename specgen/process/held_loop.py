@@ -8,11 +8,11 @@ from specgen.process.loop_dynamics import Dynamics, grown, modes_of
 from specgen.process.loop_run import Band, Run, Watch
 from specgen.process.tuning import Settings, reduce_plant
 
-STEPS = 30
+STEPS = 20
 """Steps that the effective delay is cut into."""
 
-SHORT = 0.1
-"""A cycle under this share of the effective delay is simulated by its mean output, with its delay."""
+SHORT = 0.15
+"""A cycle under this share of the effective delay is simulated by its mean output, with its delay; its ripple is added."""
 
 
 def own_delay(plant: Dynamics, settings: Settings) -> float:
@@ -74,15 +74,15 @@ def hold_steps(plant: Dynamics, settings: Settings) -> tuple[float, int]:
     Examples
     --------
     >>> hold_steps(Dynamics(slope=0.1, tau=100, theta=30), Settings(gain=0.1, integral_time=100))
-    (0.9836065573770492, 30)
+    (1.4634146341463414, 20)
     """
     scale = own_delay(plant, settings)
     if scale <= 0:
         raise ValueError("the plant has neither dead time nor a lag")
     step = scale / STEPS
-    whole = int(plant.theta / step)
-    if whole == 0:
-        return (min(step, 2 * plant.theta) if plant.theta > step / 4 else step), 0
+    if plant.theta <= step / 2:
+        return (2 * plant.theta if plant.theta > step / 4 else step), 0
+    whole = max(1, int(plant.theta / step))
     return plant.theta / (whole + 0.5), whole
 
 

@@ -2,7 +2,7 @@
 
 from collections import deque
 
-from specgen.process.closed_loop import LoopState, advanced, measured_slope, turn, weighed
+from specgen.process.closed_loop import LoopState, advanced, measured_slope, steady_cycle, turn, weighed
 from specgen.process.loop_dynamics import Dynamics, modes_of
 from specgen.process.loop_run import Band, Run, Watch
 from specgen.process.tuning import Settings
@@ -101,6 +101,31 @@ def simulate_latched(
             if quiet > 2 * plant.spread + 2 * cycle_time:
                 break
     return watch.run()
+
+
+def excursions(plant: Dynamics, settings: Settings, cycle_time: float, duty: float) -> tuple[float, float]:
+    """Find how far the switching takes the true value from its mean in the steady cycle.
+
+    Parameters
+    ----------
+    plant : Dynamics
+        The plant.
+    settings : Settings
+        Settings in the ideal form.
+    cycle_time : float
+        Cycle time; zero for a continuous output [s].
+    duty : float
+        Duty that holds the setpoint [1].
+
+    Returns
+    -------
+    tuple of float
+        Distance below and above, zero or more [value unit].
+    """
+    if cycle_time <= 0:
+        return 0.0, 0.0
+    run = simulate_latched(plant, settings, cycle_time, steady_cycle(plant, settings, cycle_time, duty), duty, cycle_time)
+    return -run.lowest, run.highest
 
 
 def _add_pulse(edges: deque[tuple[float, float]], arrives: float, duty: float, cycle_time: float) -> None:

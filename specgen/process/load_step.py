@@ -1,11 +1,11 @@
 """What a sudden change of load does to a tuned loop."""
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from math import inf
 
 from specgen.process.closed_loop import steady_cycle
 from specgen.process.held_loop import averaged, own_delay, simulate_held, steady_hold
-from specgen.process.latched_loop import simulate_latched
+from specgen.process.latched_loop import excursions, simulate_latched
 from specgen.process.loop_dynamics import Dynamics
 from specgen.process.tuning import Settings
 
@@ -119,10 +119,14 @@ def load_step(plant: Dynamics, settings: Settings, duty: float, change: float, c
         raise ValueError("the duty lies between 0 and 1")
     after = duty + change
     steady = averaged(plant, settings, cycle_time, duty)
+    if steady is not None:
+        # a load just after a latch waits half a cycle longer than on average
+        steady = replace(steady, theta=steady.theta + cycle_time / 2)
     start = steady_cycle(plant, settings, cycle_time, duty) if steady is None else steady_hold(steady, duty)
     side = -1.0 if change > 0 else 1.0
     horizon = FOLLOWED * (own_delay(plant, settings) + cycle_time)
-    deviation = ripple = 0.0
+    below, above = excursions(plant, settings, cycle_time, duty)
+    ripple, deviation = below if change > 0 else above, 0.0
     for _ in range(LOOKS):
         if steady is None:
             run = simulate_latched(plant, settings, cycle_time, start, after, horizon, load_seen=duty)
@@ -133,9 +137,9 @@ def load_step(plant: Dynamics, settings: Settings, duty: float, change: float, c
         if late < 0.95 * deviation:
             break
         horizon *= 2
-    if steady is None:
-        before = simulate_latched(plant, settings, cycle_time, start, duty, cycle_time)
-        ripple = max(side * before.highest, side * before.lowest)
+    if steady is not None:
+        # the mean of a short cycle leaves the ripple out
+        deviation += ripple
     missing = max(after - 1, -after, 0.0)
     if missing > 0:
         deviation = inf if plant.is_integrating else max(deviation, plant.gain * missing)

@@ -4,7 +4,7 @@ from dataclasses import dataclass
 
 from specgen.process.closed_loop import full_output
 from specgen.process.held_loop import averaged, hold_steps, simulate_held, stepped
-from specgen.process.latched_loop import simulate_latched
+from specgen.process.latched_loop import excursions, simulate_latched
 from specgen.process.loop_dynamics import Dynamics
 from specgen.process.loop_run import Band, Run
 from specgen.process.tuning import Settings
@@ -90,8 +90,10 @@ def start_up(plant: Dynamics, settings: Settings, rise: float, duty: float, band
         start = full_output(stepped(steady, step, delay), settings, step, duty, rise, band.below)
         horizon = min(HORIZON * settings.integral_time, LONGEST * step)
         run = simulate_held(steady, settings, start, duty, horizon, band)
+        ripple = excursions(plant, settings, cycle_time, duty)[1]
     else:
         start = full_output(plant, settings, cycle_time, duty, rise, band.below)
         horizon = min(HORIZON * settings.integral_time + 3 * cycle_time, LONGEST * cycle_time)
         run = simulate_latched(plant, settings, cycle_time, start, duty, horizon, band)
-    return StartUp(max(0.0, run.highest), run.time_to_band, start.time, run)
+        ripple = 0.0
+    return StartUp(max(0.0, run.highest + ripple), run.time_to_band, start.time, run)

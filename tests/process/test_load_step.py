@@ -94,6 +94,18 @@ def test_just_after_a_latch_is_the_worst_instant(plant, cycle_time, duty):
     assert found.deviation < worst * 1.25
 
 
+@pytest.mark.parametrize("plant", PLANTS)
+def test_a_short_cycle_is_followed_by_its_mean(plant):
+    """A cycle of a seventh of the effective delay, its mean and its ripple: hardly ever better than the same loop pulse by pulse."""
+    cycle_time, duty = 3.5, 0.4
+    settings = tuned(plant, cycle_time, duty)
+    found = load_step(plant, settings, duty, 0.15, cycle_time)
+    start = steady_cycle(plant, settings, cycle_time, duty)
+    run = simulate_latched(plant, settings, cycle_time, start, duty + 0.15, 12 * settings.theta_e, load_seen=duty)
+    assert found.deviation == pytest.approx(-run.lowest, rel=0.06)
+    assert found.deviation > -run.lowest * 0.985
+
+
 def test_ripple_before_the_step_is_the_larger_side_below():
     """First order, x 0.3, T 20: trough below the mean by the closed form of the periodic answer."""
     plant, duty, cycle_time = Dynamics(0.1, 200, 25), 0.3, 20.0
