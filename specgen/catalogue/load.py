@@ -71,7 +71,7 @@ class Catalogue:
 
         Examples
         --------
-        >>> load_catalogue().practice("relay_coil_share").value.quantity
+        >>> load_catalogue().practice("relay_coil_share_ac").value.quantity
         0.2
         """
         for known in self.practices:
