@@ -1,7 +1,7 @@
 """A3: a valve without signal or supply goes where the safe state is, or passes no danger where it goes."""
 
 from specgen.rules.base import Case, Finding, Rule
-from specgen.rules.hazard import GOES, POSITION_OF, Position, heating, lost_positions
+from specgen.rules.hazard import GOES, POSITION_OF, Position, heating, lost_positions, rooms
 from specgen.sizing.candidate import Unsized
 from specgen.sizing.faults import Faults
 
@@ -16,7 +16,7 @@ def applies(case: Case) -> bool:
 
 
 def examine(case: Case) -> Finding:
-    """Where a position differs from the safe state, it is judged by where the value goes with the valve left there."""
+    """Judge a position that differs from the safe state by where the value goes with the valve left there, and what ends it."""
     positions = lost_positions(case)
     missing = tuple(field for field, position in positions.items() if position is None)
     if missing:
@@ -33,11 +33,23 @@ def examine(case: Case) -> Finding:
         )  # fmt: skip
     if isinstance(case.faults, Unsized):
         return rule.unsized(case.faults)
-    passes = any(_passes(position, case.faults) for position in elsewhere)
-    verdict = "staying there passes a danger" if passes else "staying there passes no danger"
+    passing = [position for position in elsewhere if _passes(position, case.faults)]
+    ended = all(_is_ended(case, position, case.faults) for position in passing)
+    verdict = "staying there passes no danger"
+    if passing:
+        verdict = "staying there passes a danger" + (", which something independent ends by another device" if ended else "")
     return rule.judge(
-        holds=not passes, text="The safe state is that the valve {safe}; {said}; {verdict}.", safe=GOES[safe], said=said, verdict=verdict
+        holds=ended, text="The safe state is that the valve {safe}; {said}; {verdict}.", safe=GOES[safe], said=said, verdict=verdict
     )
+
+
+def _is_ended(case: Case, position: Position, faults: Faults) -> bool:
+    """Tell whether a limiter that acts by another device has room; it cannot give back what a closed valve withholds."""
+    if faults.off.passes and position != "open":
+        return False
+    if position == "open" and heating(case) and not case.loop.limits.frost_risk:
+        return False
+    return all(room.open for room in rooms(case, "on", faults.on))
 
 
 def _passes(position: Position, faults: Faults) -> bool:

@@ -41,6 +41,6 @@ def examine(case: Case) -> Finding:
         holds=at_most(starts, allowed, SEARCHED),
         margin=over(allowed, starts),
         text=(PUMP_DOWN + " " if pumped else "")
-        + "With {defrosts} for defrosts, {running} from control become {starts} starts, of {allowed} allowed.",
+        + "Control starts it up to {running} and defrosts add {defrosts}: {starts}, of {allowed} allowed.",
         **words,
     )

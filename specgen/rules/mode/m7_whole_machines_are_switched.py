@@ -22,8 +22,8 @@ def examine(case: Case) -> Finding:
         return _pulsed(case, starts)
     if starts is None:
         return rule.unanswered("How often it may start is not declared (element.starts_per_hour).", ("element.starts_per_hour",))
-    parts, words = ["at most {starts} starts"], {"starts": per_hour(starts)}
-    for name, what in (("min_run", "a least run of"), ("min_rest", "a least rest of")):
+    parts, words = ["to starting at most {starts}"], {"starts": per_hour(starts)}
+    for name, what in (("min_run", "to a least run of"), ("min_rest", "to a least rest of")):
         value = number(case, f"element.{name}")
         if value is not None:
             parts.append(f"{what} {{{name}}}")
@@ -40,7 +40,7 @@ def _pulsed(case: Case, starts: float | None) -> Finding:
     words: dict[str, Said] = {"cycle": seconds(cycle), "rate": per_hour(3600 / cycle), "pulse": seconds(LOW * cycle), "low": share(LOW)}
     text = "A {cycle} cycle would start it {rate} and run it for {pulse} at {low}"
     if starts is not None:
-        text += ", where {starts} starts are allowed"
+        text += ", where {starts} is allowed"
         words["starts"] = per_hour(starts)
     margin = None if starts is None or starts * cycle >= 3600 else starts * cycle / 3600  # noqa: PLR2004  seconds in an hour
     return rule.judge(holds=False, margin=margin, text=text + ": it is started and stopped whole.", **words)

@@ -3,6 +3,7 @@
 from specgen.core.say import Said, seconds
 from specgen.rules.base import Case, Finding, Rule
 from specgen.sizing.candidate import Unsized
+from specgen.sizing.faults import Stuck
 
 rule = Rule(code="S2", name="Time to danger and to spoiling", weight="note")
 
@@ -20,11 +21,22 @@ def examine(case: Case) -> Finding:
     parts: list[str] = []
     words: dict[str, Said] = {}
     for state, stuck in (("on", case.faults.on), ("off", case.faults.off)):
-        for what, time in (("danger", stuck.time_to_danger), ("spoiling", stuck.time_to_spoil)):
+        reached = {"danger": (stuck.passes, stuck.time_to_danger), "spoiling": (_spoils(case, stuck), stuck.time_to_spoil)}
+        for what, (reaches, time) in reached.items():
             if time is not None:
                 parts.append(f"stuck {state} it takes {{{state}_{what}}} to {what}")
                 words[f"{state}_{what}"] = seconds(time)
+            elif reaches:
+                return rule.unanswered(f"Stuck {state} the value goes on to {what}; how soon was not computed.")
     if not parts:
         return rule.judge(holds=True, text="Stuck on or off, the value reaches no declared limit.")
     text = "; ".join(parts)
     return rule.judge(holds=True, margin=None, text=text[0].upper() + text[1:] + ".", **words)
+
+
+def _spoils(case: Case, stuck: Stuck) -> bool:
+    limits, end = case.loop.limits, stuck.settles_at
+    if end is None:
+        return limits.spoils_high is not None or limits.spoils_low is not None
+    past_high = limits.spoils_high is not None and end >= limits.spoils_high
+    return past_high or (limits.spoils_low is not None and end <= limits.spoils_low)

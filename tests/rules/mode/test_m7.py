@@ -22,7 +22,7 @@ def test_outcome(make, element, mode, fields, outcome):
 
 def test_the_declared_limits_are_named(make):
     text = make.ask("M7", make.case("burner", "on_off")).text
-    assert "at most 6 an hour starts, a least run of 60 s; its own sequence belongs to its certified burner control" in text
+    assert "keeps to starting at most 6 an hour, to a least run of 60 s; its own sequence belongs to its certified burner control" in text
 
 
 def test_the_pulses_of_a_cycle_are_named(make):
