@@ -42,7 +42,7 @@ class ReadLoop:
 
     def written(self, path: Path) -> bool:
         """Tell whether the loop file says this field itself (not inherited, not a default)."""
-        return path in self.spans and path not in self.inherited
+        return path in self.spans and not any(field[: len(path)] == path for field in self.inherited)
 
 
 @dataclass(frozen=True, slots=True)
@@ -72,7 +72,7 @@ def read_loops(documents: Sequence[Plain]) -> Reading:
         loop, found = _read_one(document, merged)
         problems += [place(document, fault, merged.taken) for fault in found]
         if loop is not None and document.sound and all(origin.sound for origin in merged.taken.values()):
-            loops.append(ReadLoop(loop, document.file, document.line, Places(document.spans, merged.taken), frozenset(merged.taken)))
+            loops.append(ReadLoop(loop, document.file, document.line, Places(document.spans, merged.taken), merged.fields))
     ordered = sorted(loops, key=lambda read: (read.loop.area.lower(), read.loop.tag.lower()))
     return Reading(tuple(ordered), tuple(sorted(set(problems))))
 

@@ -17,10 +17,14 @@ MOST_NAMED = 40
 
 @dataclass(frozen=True, slots=True)
 class Merged:
-    """A loop's data with what it takes from others, and which document each taken path came from."""
+    """A loop's data with what it takes from others, and which document each taken path came from.
+
+    ``taken`` holds the fields that are taken and the sections they stand in; ``fields`` the fields alone.
+    """
 
     data: dict[str, Any]
     taken: Mapping[Path, Plain]
+    fields: frozenset[Path]
 
 
 def merge(tag: str, by_tag: Mapping[str, Plain]) -> Merged | Problem:
@@ -55,7 +59,16 @@ def merge(tag: str, by_tag: Mapping[str, Plain]) -> Merged | Problem:
             own = {k: v for k, v in own.items() if k not in NEVER and not _is_step_test(k, v)}
         _lay(merged, own, document, taken)
     own_document = by_tag[tag.lower()]
-    return Merged(merged, {path: document for path, document in taken.items() if document is not own_document})
+    fields = {path for path, document in taken.items() if document is not own_document and not isinstance(_at(merged, path), dict)}
+    sections = {path[:length] for path in fields for length in range(1, len(path))}
+    kept = {path: document for path, document in taken.items() if path in fields or (path in sections and document is not own_document)}
+    return Merged(merged, kept, frozenset(fields))
+
+
+def _at(data: object, path: Path) -> object:
+    for step in path:
+        data = data[step]  # type: ignore[index]  # the path was made from this data
+    return data
 
 
 def _is_step_test(key: str, value: object) -> bool:

@@ -106,3 +106,24 @@ def test_a_long_chain_ends(reading):
     result, problems = reading(text)
     assert {p.code for p in problems} == {"L204"}
     assert any(r.loop.tag == "T-50" for r in result.loops)
+
+
+def test_a_section_written_out_is_the_loops_own(reading):
+    read = taken(reading, "tag: TIC-2\nservice: Second\nsame_as: TIC-1\nlimits: {danger_high: 90 degC, consequence: product}\n")
+    assert not [path for path in read.inherited if path[0] == "limits"]
+    assert read.written(("limits",))
+    assert read.spans["limits", "danger_high"].line == 16
+
+
+def test_a_section_partly_written_is_partly_taken(reading):
+    read = taken(reading, "tag: TIC-2\nservice: Second\nsame_as: TIC-1\nlimits: {danger_high: 90 degC}\n")
+    assert [path for path in read.inherited if path[0] == "limits"] == [("limits", "consequence")]
+    assert not read.written(("limits",))
+    assert read.written(("limits", "danger_high"))
+
+
+def test_a_list_that_is_taken_is_a_field_with_its_items(reading):
+    read = taken(reading, "tag: TIC-2\nservice: Second\nsame_as: TIC-1\n")
+    assert {path for path in read.inherited if path[:2] == ("element", "needs")} == {
+        ("element", "needs"), ("element", "needs", 0), ("element", "needs", 1),
+    }  # fmt: skip
