@@ -102,7 +102,7 @@ def panel(**changes):
 
 
 def case(name, mode, device=None, *, house=None, controllers=None, settings=NOT_SIZED, on_off=NOT_SIZED, error=0.3, faults=NOT_SIZED,
-         **changes):  # fmt: skip
+         device_choice=NOT_SIZED, **changes):  # fmt: skip
     """Return a case of a loop and a candidate; ``error`` [K] and everything else as given, the box from the loop's own plant."""
     declared = loop(name, **changes)
     shop = panel(**{key: value for key, value in (("house", house), ("controllers", controllers)) if value is not None})
@@ -112,7 +112,7 @@ def case(name, mode, device=None, *, house=None, controllers=None, settings=NOT_
         traits=traits_of(declared.element),
         candidate=Candidate(mode, device or DEVICES[mode]),
         box=box_of(declared, shop),
-        device=NOT_SIZED,
+        device=device_choice,
         settings=settings,
         on_off=on_off,
         error=MeasuringError(error, error) if isinstance(error, float) else error,

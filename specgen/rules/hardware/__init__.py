@@ -1,0 +1,1 @@
+"""Rules about the output device and its hardware, one a file."""
