@@ -26,7 +26,7 @@ from specgen.sizing.device_choice import choose_device
 from specgen.sizing.measurement import MeasuringError, measuring_error
 from specgen.sizing.on_off import on_off_settings
 from specgen.sizing.settings import OnOffSettings, Settings
-from specgen.sizing.stuck import faults_of
+from specgen.sizing.stuck import faults_of, with_times
 from specgen.sizing.time_proportioned import proportioned_settings
 
 PAIRS = (
@@ -81,9 +81,9 @@ def examine_candidates(loop: Loop, panel: Panel, traits: Traits, catalogue: Cata
         device = devices[candidate.device]
         if isinstance(device, NoCandidate):
             continue
-        case = Case(
-            loop, panel, traits, candidate, box, device, sizer.settings(candidate, device), sizer.on_off_beside(candidate), error, faults
-        )
+        settings = sizer.settings(candidate, device)
+        timed = with_times(faults, loop, box, settings)
+        case = Case(loop, panel, traits, candidate, box, device, settings, sizer.on_off_beside(candidate), error, timed)
         found.append(Examined(case, examine_all(case)))
     return tuple(found)
 

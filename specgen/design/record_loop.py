@@ -140,6 +140,7 @@ def predicted(case: Case, numbers: _Numbers) -> Row:
                 "shortest_on": numbers.plain(settings.natural.shortest_on.value),
                 "shortest_off": numbers.plain(settings.natural.shortest_off.value),
                 "operations_per_year": numbers.plain(settings.operations_per_year), "contact_life": numbers.plain(settings.contact_life),
+                "time_to_band": numbers.plain(settings.warm_up),
             } | _duties(case)  # fmt: skip
         case ProportionedSettings():
             r = settings.ripple

@@ -8,6 +8,7 @@ from specgen.model.loop import Loop
 from specgen.model.panel import Panel
 from specgen.process.box import Box, Unmodelled
 from specgen.process.differential import least_differential, widest_differential
+from specgen.process.fault_cases import FaultCase, warm_up
 from specgen.process.limit_cycle import NoCycle
 from specgen.process.on_off import OnOffPrediction, predict_on_off
 from specgen.sizing.candidate import Assumption, Unsized
@@ -63,6 +64,8 @@ def _settled(
     last = weakest(device)
     life = life_in_years(last.operations, operations) if last else None
     setpoint = float(loop.need.setpoint)
+    near = loop.need.tolerance.below if loop.raises else loop.need.tolerance.above
+    cold = warm_up(box, float(near))
     return OnOffSettings(
         differential=differential,
         placement=placement,
@@ -79,7 +82,8 @@ def _settled(
         contact_life=life,
         weakest=last.contact.what if last else "",
         chosen_by="choose" if chosen is not None else "computed",
-        figures=_figures(enforced, natural, starts, operations, life, last.operations if last else None),
+        warm_up=cold.value if cold is not None and isfinite(cold.value) else None,
+        figures=_figures(enforced, natural, starts, operations, life, last.operations if last else None) + _warm_up_figure(cold),
         assumptions=() if placement != "centred" or (loop.choose and loop.choose.placement) else (_CENTRED,),
     )
 
@@ -145,6 +149,13 @@ def _most(
     above, below = float(loop.need.tolerance.above) - error.root_sum, float(loop.need.tolerance.below) - error.root_sum
     most = widest_differential(box, above, below, placement, run, rest)
     return most, Bound("D4", most, "the tolerance less the measuring error")
+
+
+def _warm_up_figure(cold: FaultCase | None) -> tuple[Figure, ...]:
+    if cold is None or not isfinite(cold.value):
+        return ()
+    source = "first rise from the coldest rest at the lowest supply, every body counted"
+    return (Figure("t_b", "time to the band, longest", "", cold.value, "time", source, {}, cold.text),)
 
 
 def _figures(

@@ -27,7 +27,8 @@ class OnOffSettings:
     """On-off: the whole distance between the switch points [in the loop's quantity] and where they lie.
 
     ``least`` and ``most`` are what the rules allow (``most`` infinite where nothing bounds it); ``least_bounds`` has
-    one bound for each of D1, D2, D3, D5, D6 that could be computed, ``most_bound`` is D4's. ``natural`` is predicted
+    one bound for each of D1, D2, D3, D5, D6 that could be computed, ``most_bound`` is D4's. ``warm_up`` [s] is the longest way
+    from the coldest rest to the band, None where the plant cannot say where it rests. ``natural`` is predicted
     without the least times, ``enforced`` with them (the same object where they do not bind).
     """
 
@@ -46,6 +47,7 @@ class OnOffSettings:
     contact_life: float | None
     weakest: str
     chosen_by: Literal["computed", "choose"]
+    warm_up: float | None = None
     figures: tuple[Figure, ...] = ()
     assumptions: tuple[Assumption, ...] = ()
 

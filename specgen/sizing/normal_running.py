@@ -1,0 +1,31 @@
+"""How far normal running reaches: the lowest and highest true value over every setpoint, in the worst case."""
+
+from dataclasses import dataclass
+
+from specgen.model.loop import Loop
+from specgen.sizing.candidate import Unsized
+from specgen.sizing.settings import ContinuousSettings, OnOffSettings, ProportionedSettings, Settings, ThreePointSettings
+
+
+@dataclass(frozen=True, slots=True)
+class Normal:
+    """The lowest and highest true value of normal running [value]."""
+
+    low: float
+    high: float
+
+
+def normal_running(loop: Loop, settings: Settings | Unsized) -> Normal:
+    """Return how far normal running reaches: predicted excursions and overshoot, or the tolerance where nothing is predicted."""
+    need = loop.need
+    above, below = float(need.tolerance.above), float(need.tolerance.below)
+    if isinstance(settings, OnOffSettings):
+        above, below = settings.enforced.above.value, settings.enforced.below.value
+    elif isinstance(settings, ProportionedSettings | ContinuousSettings | ThreePointSettings):
+        if isinstance(settings, ProportionedSettings):
+            above, below = settings.ripple.above.value, settings.ripple.below.value
+        predicted = settings.tuning.overshoot
+        reaches = float(need.overshoot or (need.tolerance.above if loop.raises else need.tolerance.below)) if predicted is None else predicted
+        # an overshoot at start-up goes the way that the output drives
+        above, below = (max(above, reaches), below) if loop.raises else (above, max(below, reaches))
+    return Normal(need.setpoints.low - below, need.setpoints.high + above)
