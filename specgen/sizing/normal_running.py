@@ -25,7 +25,8 @@ def normal_running(loop: Loop, settings: Settings | Unsized) -> Normal:
         if isinstance(settings, ProportionedSettings):
             above, below = settings.ripple.above.value, settings.ripple.below.value
         predicted = settings.tuning.overshoot
-        reaches = float(need.overshoot or (need.tolerance.above if loop.raises else need.tolerance.below)) if predicted is None else predicted
+        allowed = need.overshoot or (need.tolerance.above if loop.raises else need.tolerance.below)
+        reaches = float(allowed) if predicted is None else predicted
         # an overshoot at start-up goes the way that the output drives
         above, below = (max(above, reaches), below) if loop.raises else (above, max(below, reaches))
     return Normal(need.setpoints.low - below, need.setpoints.high + above)
