@@ -70,7 +70,7 @@ def because(chosen: Examined, rejected: Sequence[Rejected], speaker: Speaker) ->
     if not ending:
         return f"M13: {other} keeps the same rules; {following.text.removeprefix('equal in the rules; ')}"
     first = ending[0]
-    return f"{first.rule}: {other} is left because {speaker.fill(first.text, first.words)}"
+    return f"{first.rule} rules out {other}: {speaker.fill(first.text, first.words)}"
 
 
 MODE_WORDS = {"on_off": "on-off", "time_proportioned": "time-proportioned", "analogue": "analogue", "three_point": "three-point"}
