@@ -1,0 +1,154 @@
+"""What every page has around its sections: running head, navigation, the one notice, title block."""
+
+from dataclasses import dataclass
+
+from specgen.view.cells import verdict_mark
+from specgen.view.dossier import Dossier, MissingLoop
+from specgen.view.shapes import Item, Link, Mark, Notice, PageView, Section, Sentence, Span, Standing, TitleField
+from specgen.view.words import counted, listed
+
+MOST_NAMED = 6
+
+
+@dataclass(frozen=True, slots=True)
+class PageRow:
+    """A page of the dossier: its file, title, group, what a reader finds there and who looks for it.
+
+    ``header`` is its word in the running head, empty where the group's first page stands for it.
+    """
+
+    path: str
+    title: str
+    group: str
+    finds: str
+    reader: str
+    header: str = ""
+
+
+PAGE_ROWS = (
+    PageRow("index.html", "Overview", "", "what was decided and what is open", "", "Overview"),
+    PageRow("registers/loops.html", "Loops", "Registers", "every loop with its decision and figures", "reviewer", "Loops"),
+    PageRow("registers/open-points.html", "Open points", "Registers", "missing inputs and how to get them", "reviewer", "Open points"),
+    PageRow("registers/assumptions.html", "Assumptions", "Registers", "what was taken for granted", "reviewer"),
+    PageRow("registers/deviations.html", "Deviations", "Registers", "rules that are broken or overridden", "reviewer"),
+    PageRow("schedules/outputs.html", "Outputs", "Schedules", "controller outputs and what they drive", "panel builder", "Schedules"),
+    PageRow("panel/rule-book.html", "Rule book", "Panel", "every rule, its source, and where it bore", "reviewer", "Rule book"),
+)
+
+
+@dataclass(frozen=True, slots=True)
+class Place:
+    """Where a page stands: links from it to others start with ``root``."""
+
+    path: str
+
+    @property
+    def root(self) -> str:
+        """Return what leads back to the site's folder."""
+        return "../" * self.path.count("/")
+
+    def to(self, path: str, anchor: str = "") -> str:
+        """Return a link to another page, or to a place on it."""
+        return f"{self.root}{path}#{anchor}" if anchor else f"{self.root}{path}"
+
+    def sheet(self, tag: str, anchor: str = "") -> str:
+        """Return a link to a loop's sheet."""
+        return self.to(f"loops/{tag}.html", anchor)
+
+    def rule(self, dossier: Dossier, code: str) -> str:
+        """Return a link to a rule, empty where the rule book has no such place."""
+        return self.to("panel/rule-book.html", code) if code in dossier.rule_codes else ""
+
+
+def frame(
+    dossier: Dossier,
+    place: Place,
+    title: str,
+    sections: tuple[Section, ...],
+    *,
+    kicker: str = "",
+    mark: Mark | None = None,
+    lead: Sentence | None = None,
+    notices: tuple[Notice, ...] = (),
+    before: Link | None = None,
+    after: Link | None = None,
+    sheet: str = "",
+    prose: str = "",
+    heading: str | None = None,
+) -> PageView:
+    """Put a page's sections into the dossier."""
+    panel = dossier.design.panel
+    group = next((row.group for row in PAGE_ROWS if row.path == place.path), "")
+    siblings = [row for row in PAGE_ROWS if group and row.group == group]
+    return PageView(
+        path=place.path,
+        root=place.root,
+        site_title=dossier.title,
+        title=title,
+        heading=title if heading is None else heading,
+        kicker=kicker,
+        mark=mark,
+        marginal=f"{panel.panel.reference}\u2002{dossier.title}" if panel else dossier.title,
+        lead=lead,
+        standing=standing_notice(dossier, place),
+        notices=notices,
+        sections=sections,
+        navigation=tuple(_link(place, row, row.header) for row in PAGE_ROWS if row.header),
+        siblings=tuple(_link(place, row, row.title) for row in siblings) if len(siblings) > 1 else (),
+        sibling_label=group,
+        before=before,
+        after=after,
+        fields=_title_block(dossier, sheet or title),
+        prose=prose,
+    )
+
+
+def _link(place: Place, row: PageRow, text: str) -> Link:
+    return Link(text, place.to(row.path), here=row.path == place.path)
+
+
+def standing_notice(dossier: Dossier, place: Place) -> Standing | None:
+    """Return the one notice that every page carries while something is broken, held or open."""
+    errors = dossier.errors
+    items: list[Item] = []
+    if errors:
+        where = counted(errors, "problem") + " in the input"
+        lost = f"; {_missing(dossier.missing)}" if dossier.missing else ""
+        items.append(Item((Span(where, place.to("index.html", "problems")), Span(lost))))
+    items += [_tags_item(verdict, tags, place) for verdict, tags in (("held", dossier.held), ("open", dossier.unsettled)) if tags]
+    if not items:
+        return None
+    return Standing("problem" if errors else "held" if dossier.held else "open", tuple(items))
+
+
+def _missing(loops: tuple[MissingLoop, ...]) -> str:
+    named = [loop.tag or f"a loop at {loop.file}:{loop.line}" for loop in loops[:MOST_NAMED]]
+    if len(loops) > MOST_NAMED:
+        named.append(f"{len(loops) - MOST_NAMED} more")
+    return f"missing from every page until it is right: {listed(named)}"
+
+
+def _tags_item(verdict: str, tags: tuple[str, ...], place: Place) -> Item:
+    spans: list[Span] = []
+    if len(tags) > MOST_NAMED:
+        spans.append(Span(f"{len(tags)} loops", place.to("registers/loops.html")))
+    else:
+        for index, tag in enumerate(tags):
+            if index:
+                spans.append(Span(", "))
+            spans.append(Span(tag, place.sheet(tag)))
+    return Item(tuple(spans), mark=verdict_mark(verdict))
+
+
+def _title_block(dossier: Dossier, sheet: str) -> tuple[TitleField, ...]:
+    head = dossier.design.panel.panel if dossier.design.panel else None
+    return (
+        TitleField("Title", dossier.title),
+        TitleField("Panel", head.reference if head else ""),
+        TitleField("Sheet", sheet),
+        TitleField("Revision, date", f"{head.revision}, {head.date.isoformat()}" if head else ""),
+        TitleField("Purpose", str(head.status) if head else ""),
+        TitleField("Drawn", ""),
+        TitleField("Checked", ""),
+        TitleField("Approved", ""),
+    )

@@ -1,0 +1,152 @@
+"""The registers: loops, open points, assumptions, deviations."""
+
+from specgen.design.types import DecidedLoop
+from specgen.rules.base import Finding
+from specgen.view.cells import DASH, NO_NUMBER, number, verdict_cell, word
+from specgen.view.dossier import Dossier
+from specgen.view.frame import Place, frame
+from specgen.view.shapes import Cell, Column, PageView, Row, Section, Table
+from specgen.view.summary import summary_of
+from specgen.view.words import MODES, OUTCOMES, with_stop
+from specgen.view.writer import Writer
+
+_WEIGHT_ORDER = {"must": 0, "should": 1, "note": 2}
+
+
+def loops_page(dossier: Dossier, place: Place) -> PageView:
+    """Build the register of loops."""
+    section = Section("1", "loops", "Loops", (loops_table(dossier, place),))
+    return frame(dossier, place, "Loops", (section,), kicker="Every loop with its decision and the figures it rests on")
+
+
+def loops_table(dossier: Dossier, place: Place) -> Table:
+    """Build the table of all loops; excursion and tolerance in each loop's own unit."""
+    columns = (
+        Column("Tag", export="tag"),
+        Column("Service", export="service"),
+        Column("Area", export="area"),
+        Column("Verdict", export="verdict"),
+        Column("Mode", export="mode"),
+        Column("Through", export="device"),
+        Column("Entered", export="entered"),
+        Column("Stays within", number=True, export="within +- [unit]"),
+        Column("Allowed", number=True, export="allowed +- [unit]"),
+        Column("Unit", export="unit"),
+        Column("Contact life", "years", number=True, export="contact life [year]"),
+    )
+    rows = tuple(_loop_row(dossier, place, loop) for loop in dossier.design.loops)
+    return Table("", columns, rows, wide=True, empty="No loop could be decided.")
+
+
+def _loop_row(dossier: Dossier, place: Place, decided: DecidedLoop) -> Row:
+    writer = dossier.writers[decided.tag]
+    short = summary_of(decided)
+    loop = decided.loop
+    excursion, life, entered = short.excursion, short.contact_life, short.entered_with(writer)
+    cells = (
+        word(loop.tag, place.sheet(loop.tag)),
+        word(loop.service),
+        word(loop.area),
+        verdict_cell(decided.verdict),
+        word(MODES[short.mode]),
+        word(short.device),
+        word(entered) if entered else DASH,
+        NO_NUMBER if excursion is None else number(writer.excursion_number(excursion, short.allowed), writer.shown_change(excursion)),
+        number(writer.allowed_number(short.allowed), writer.shown_change(short.allowed)),
+        word(writer.change_unit),
+        NO_NUMBER if life is None else number(writer.years_number(life), life),
+    )
+    return Row(cells, anchor=loop.tag)
+
+
+def open_points_page(dossier: Dossier, place: Place) -> PageView:
+    """Build the register of open points."""
+    section = Section("1", "open-points", "Missing inputs", (open_points_table(dossier, place),))
+    return frame(dossier, place, "Open points", (section,), kicker="Inputs that are missing, what each would settle, and how to get it")
+
+
+def open_points_table(dossier: Dossier, place: Place) -> Table:
+    """Build the table of inputs that are missing."""
+    columns = (
+        Column("Loop", export="loop"),
+        Column("Input", export="field"),
+        Column("Settles", export="settles"),
+        Column("How to get it", export="how"),
+    )
+    rows = tuple(
+        Row((word(loop.tag, place.sheet(loop.tag)), word(missing.field), word(" ".join(missing.settles)), word(missing.how)))
+        for loop in dossier.design.loops
+        for missing in loop.missing
+    )
+    return Table("", columns, rows, wide=True, empty="No input is missing.")
+
+
+def assumptions_page(dossier: Dossier, place: Place) -> PageView:
+    """Build the register of assumptions, one row for all loops that make the same."""
+    shared: dict[tuple[str, str, str], list[str]] = {}
+    for loop in dossier.design.loops:
+        for assumed in loop.assumptions:
+            shared.setdefault((assumed.field, assumed.value, assumed.why), []).append(loop.tag)
+    columns = (Column("Stands for"), Column("Taken as"), Column("Because"), Column("Loops"))
+    rows = tuple(
+        Row((word(field), word(value), word(why), _loops_cell(dossier, tags, place)))
+        for (field, value, why), tags in sorted(shared.items())
+    )
+    table = Table("", columns, rows, wide=True, empty="Nothing was taken for granted.")
+    kicker = "What was taken for granted where the loop files say nothing"
+    return frame(dossier, place, "Assumptions", (Section("1", "assumptions", "Taken for granted", (table,)),), kicker=kicker)
+
+
+def _loops_cell(dossier: Dossier, tags: list[str], place: Place) -> Cell:
+    if len(tags) == 1:
+        return word(tags[0], place.sheet(tags[0], "assumptions"))
+    if len(tags) == len(dossier.design.loops):
+        return word(f"all {len(tags)}")
+    return word(", ".join(tags))
+
+
+def assumptions_table(dossier: Dossier) -> Table:
+    """Build the table of assumptions with one row a loop, for files."""
+    columns = (
+        Column("Loop", export="loop"),
+        Column("Stands for", export="field"),
+        Column("Taken as", export="value"),
+        Column("Because", export="why"),
+    )
+    rows = tuple(
+        Row((word(loop.tag), word(assumed.field), word(assumed.value), word(assumed.why)))
+        for loop in dossier.design.loops
+        for assumed in loop.assumptions
+    )
+    return Table("", columns, rows)
+
+
+def deviations_page(dossier: Dossier, place: Place) -> PageView:
+    """Build the register of rules that are broken or overridden, musts first."""
+    found = [(loop, finding) for loop in dossier.design.loops for finding in loop.findings if finding.outcome in ("broken", "overridden")]
+    found.sort(key=lambda pair: _WEIGHT_ORDER[pair[1].weight])
+    columns = (Column("Loop"), Column("Rule"), Column("Weight"), Column("What it says here"), Column("Outcome"), Column("Reason given"))
+    rows = tuple(_deviation_row(dossier, place, loop, finding) for loop, finding in found)
+    table = Table("", columns, rows, wide=True, empty="No rule is broken or overridden.")
+    kicker = "Every rule that is broken or overridden; a broken must-rule holds its loop"
+    return frame(dossier, place, "Deviations", (Section("1", "deviations", "Broken and overridden rules", (table,)),), kicker=kicker)
+
+
+def _deviation_row(dossier: Dossier, place: Place, decided: DecidedLoop, finding: Finding) -> Row:
+    choose = decided.loop.choose
+    reason = choose.because if choose is not None and finding.outcome == "overridden" else None
+    return Row(
+        (
+            word(decided.tag, place.sheet(decided.tag)),
+            word(finding.rule, place.rule(dossier, finding.rule)),
+            word(finding.weight),
+            word(finding_text(dossier.writers[decided.tag], finding)),
+            word(OUTCOMES[finding.outcome]),
+            word(with_stop(reason)) if reason else DASH,
+        )
+    )
+
+
+def finding_text(writer: Writer, finding: Finding) -> str:
+    """Write a finding's sentence with this loop's numbers."""
+    return with_stop(writer.sentence(finding.text, finding.words))

@@ -1,0 +1,66 @@
+"""A loop's sheet: title, decision, settings, expectations, hardware, failures, basis."""
+
+from specgen.design.types import DecidedLoop
+from specgen.view.cells import says, verdict_mark
+from specgen.view.dossier import Dossier
+from specgen.view.frame import Place, frame
+from specgen.view.shapes import Item, Link, Note, Notice, PageView, Section, Sentence, Shape, Span
+from specgen.view.sheet_basis import basis_section
+from specgen.view.sheet_decision import decision_section
+from specgen.view.sheet_expect import expect_section
+from specgen.view.sheet_faults import faults_section
+from specgen.view.sheet_hardware import hardware_section
+from specgen.view.sheet_settings import settings_section
+from specgen.view.sheet_title import kicker, title_sentence
+from specgen.view.words import capital, with_stop
+
+
+def sheet_page(dossier: Dossier, place: Place, decided: DecidedLoop, before: DecidedLoop | None, after: DecidedLoop | None) -> PageView:
+    """Build a loop's sheet."""
+    writer = dossier.writers[decided.tag]
+    sections = [
+        decision_section(dossier, place, decided, "1"),
+        settings_section(dossier, place, decided, "2"),
+        expect_section(writer, decided, "3"),
+        hardware_section(writer, decided, "4"),
+        faults_section(writer, decided, "5"),
+    ]
+    if decided.loop.notes:
+        sections.append(Section("6", "notes", "Notes", tuple(_notes(decided))))
+    sections.append(basis_section(dossier, place, decided, str(len(sections) + 1)))
+    span = decided.read
+    lead_note = Note("Source", f"{span.file}, line {span.line}", place.to(f"data/source/{span.file}"), "as read")
+    return frame(
+        dossier,
+        place,
+        decided.tag,
+        tuple(sections),
+        kicker=kicker(decided),
+        mark=verdict_mark(decided.verdict),
+        lead=Sentence((Span(title_sentence(decided, writer)),), lead=True, notes=(lead_note,)),
+        notices=_missing(dossier, place, decided),
+        before=_neighbour(place, before),
+        after=_neighbour(place, after),
+        sheet=decided.tag,
+    )
+
+
+def _neighbour(place: Place, loop: DecidedLoop | None) -> Link | None:
+    return None if loop is None else Link(f"{loop.tag} {loop.loop.service}", place.sheet(loop.tag))
+
+
+def _notes(decided: DecidedLoop) -> list[Shape]:
+    return [Sentence(says(with_stop(capital(note)))) for note in decided.loop.notes]
+
+
+def _missing(dossier: Dossier, place: Place, decided: DecidedLoop) -> tuple[Notice, ...]:
+    """Name each input that is missing, what it would settle, and how to get it."""
+    if not decided.missing:
+        return ()
+    items = []
+    for missing in decided.missing:
+        spans: list[Span] = []
+        for index, code in enumerate(missing.settles):
+            spans += [Span(", " if index else "settles "), Span(code, place.rule(dossier, code))]
+        items.append(Item((*spans, Span(f"; {missing.how}" if spans else missing.how)), missing.field))
+    return (Notice("open", "Missing for this loop:", (), tuple(items)),)

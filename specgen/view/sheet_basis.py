@@ -1,0 +1,139 @@
+"""Section Basis of a sheet: assumptions, inputs with the line each came from, and the calculation line by line."""
+
+from collections.abc import Iterable
+from math import isfinite
+
+from pydantic import BaseModel
+
+from specgen.core.diagnostic import Path
+from specgen.core.figure import Figure
+from specgen.design.types import DecidedLoop
+from specgen.model.loop import Loop
+from specgen.view.cells import says, word
+from specgen.view.dossier import Dossier, not_examined
+from specgen.view.frame import Place
+from specgen.view.shapes import Column, FigureLine, Row, Section, Sentence, Shape, Span, Table
+from specgen.view.words import FAMILIES
+from specgen.view.writer import Writer
+
+_HOW_TO_READ = "The calculation in its order: formula, result, numbers put in; source and worst case beside it."
+_NOT_INPUTS = frozenset({"tag", "service", "same_as"})
+_ALIASES = {("sensor", "class"): "class_", ("sensor", "range"): "measured_range"}
+
+
+def basis_section(dossier: Dossier, place: Place, decided: DecidedLoop, number: str) -> Section:
+    """Build the section."""
+    blocks: list[Shape] = [_assumptions(decided), _inputs(place, decided)]
+    blocks.append(Sentence(says(_HOW_TO_READ), quiet=True))
+    blocks += figure_lines(dossier.writers[decided.tag], decided.basis)
+    blocks.append(_left_out(dossier, place))
+    return Section(number, "basis", "Basis", tuple(blocks))
+
+
+def _assumptions(decided: DecidedLoop) -> Table:
+    columns = (Column("Stands for"), Column("Taken as"), Column("Because"))
+    rows = tuple(Row((word(a.field), word(a.value), word(a.why))) for a in decided.assumptions)
+    return Table("Assumptions", columns, rows, wide=True, empty="Nothing was taken for granted.")
+
+
+def _inputs(place: Place, decided: DecidedLoop) -> Table:
+    """List what the loop file says, as it says it, one row a line of a section."""
+    columns = (Column("Input"), Column("As written"), Column("File and line"))
+    rows: list[Row] = []
+    grouped: dict[tuple[str, str, int], list[tuple[Path, str]]] = {}
+    for path, text in inputs_of(decided):
+        span = decided.read.spans[path]
+        grouped.setdefault((_dotted(path[:-1]), span.file, span.line), []).append((path, text))
+    for (section, file, line), fields in grouped.items():
+        alone = len(fields) == 1
+        name = _dotted(fields[0][0]) if alone else section
+        text = fields[0][1] if alone else ", ".join(f"{path[-1]} {text}" if isinstance(path[-1], str) else text for path, text in fields)
+        aside = "same_as" if fields[0][0] in decided.read.inherited else ""
+        rows.append(Row((word(name), word(text), word(f"{file}:{line}", place.to(f"data/source/{file}"), aside))))
+    return Table("Inputs", columns, tuple(rows), wide=True, empty="Nothing was read.")
+
+
+def inputs_of(decided: DecidedLoop) -> Iterable[tuple[Path, str]]:
+    """Yield every written field of a loop with its text, in the order of the file."""
+    loop, spans = decided.loop, decided.read.spans
+    known = [path for path in spans if path and path[0] not in _NOT_INPUTS]
+    sections = {path[:length] for path in known for length in range(1, len(path))}
+    known.sort(key=lambda path: (spans[path].file != decided.read.file, spans[path].file, spans[path].line, spans[path].column))
+    for path in known:
+        if path in sections:
+            continue
+        text = written(loop, path)
+        if text is not None:
+            yield path, text
+
+
+def written(loop: Loop, path: Path) -> str | None:
+    """Return a field's text as it was written; None for what is no single value."""
+    here: object = loop
+    for depth, step in enumerate(path):
+        if isinstance(step, int):
+            here = here[step] if isinstance(here, tuple) and step < len(here) else None
+        else:
+            here = getattr(here, _ALIASES.get((str(path[0]), step), step) if depth == 1 else step, None)
+        if here is None:
+            return None
+    if isinstance(here, bool):
+        return "yes" if here else "no"
+    if isinstance(here, BaseModel):
+        # a short form: `tolerance: 1.5 K` stands for both sides
+        here = next((value for value in dict(here).values() if value is not None), None)
+    if isinstance(here, tuple):
+        return ", ".join(map(str, here)) if here else "[]"
+    text = getattr(here, "text", None)
+    return None if here is None else str(text or here)
+
+
+def _dotted(path: Path) -> str:
+    text = ""
+    for step in path:
+        text += f"[{step + 1}]" if isinstance(step, int) else f".{step}" if text else step
+    return text
+
+
+def figure_lines(writer: Writer, basis: tuple[Figure, ...]) -> list[Shape]:
+    """Write every figure as a numbered line."""
+    return [
+        FigureLine(
+            number=str(index),
+            anchor=f"basis-{index}",
+            name=figure.name,
+            symbol=figure.symbol,
+            formula="" if figure.formula == figure.symbol else figure.formula,
+            filled=", ".join(f"{symbol} = {_number(writer, value, dimension)}" for symbol, (value, dimension) in figure.with_.items()),
+            result=_number(writer, figure.value, figure.dimension),
+            source=figure.source,
+            case=f"worst case: {figure.case}" if figure.case else "",
+        )
+        for index, figure in enumerate(basis, 1)
+    ]
+
+
+def _number(writer: Writer, value: float, dimension: str) -> str:
+    """Write a number with one digit more than the tables have, so that a reader can follow the sum."""
+    if dimension == "value" and isfinite(value):
+        return writer.one_digit_more(value)
+    return writer.say(value, dimension, 4)
+
+
+def _left_out(dossier: Dossier, place: Place) -> Sentence:
+    """Name the rules that were not asked, so that no silence reads as clearance."""
+    left = [rule.code for rule in not_examined(dossier)]
+    if not left:
+        return Sentence(says("Every rule of the book was asked."), quiet=True)
+    parts = []
+    for family, title in FAMILIES.items():
+        codes = [code for code in left if code[0] == family]
+        if codes:
+            parts.append(f"{title.lower()} {' '.join(codes)}")
+    spans = (
+        Span("Not examined:", strong=True),
+        Span(f" {'; '.join(parts)}. What is not examined is not cleared: "),
+        Span("what each will ask", place.to("panel/rule-book.html", "not-examined")),
+        Span("."),
+    )
+    return Sentence(spans, quiet=True)
