@@ -1,1 +1,1 @@
-
+"""From page views to files: templates, CSV files, the site, and the thin MkDocs plugin."""

@@ -1,0 +1,77 @@
+"""Every file of a dossier, as bytes, without MkDocs: all pages exist before the first byte is written."""
+
+from collections.abc import Mapping, Sequence
+from pathlib import Path, PurePosixPath
+
+from specgen.design.record import dump, record_of
+from specgen.design.types import Design
+from specgen.render.csv_files import csv_bytes
+from specgen.render.environment import TEMPLATES, page
+from specgen.view.dossier import Dossier, OwnPage, dossier_of
+from specgen.view.frame import Place
+from specgen.view.pages import page_views
+from specgen.view.registers import assumptions_table, loops_table, open_points_table
+from specgen.view.schedules import outputs_table
+
+ASSETS = "assets"
+
+
+def dossier_files(design: Design, own_pages: Sequence[OwnPage] = ()) -> Mapping[str, bytes]:
+    """Write every file of a dossier.
+
+    Parameters
+    ----------
+    design : Design
+        The decided panel.
+    own_pages : sequence of OwnPage
+        The user's own pages, which are linked and not written here.
+
+    Returns
+    -------
+    mapping of str to bytes
+        Path below the site's folder, with forward slashes, to content.
+    """
+    return files_of(dossier_of(design, own_pages))
+
+
+def files_of(dossier: Dossier) -> dict[str, bytes]:
+    """Write every file of a gathered dossier."""
+    files = {view.path: page(view) for view in page_views(dossier)}
+    files |= asset_files()
+    files |= data_files(dossier)
+    return files
+
+
+def asset_files() -> dict[str, bytes]:
+    """Return the style sheets as they stand."""
+    folder = Path(TEMPLATES) / ASSETS
+    return {f"{ASSETS}/{file.name}": file.read_bytes() for file in sorted(folder.iterdir()) if file.suffix == ".css"}
+
+
+def data_files(dossier: Dossier) -> dict[str, bytes]:
+    """Write the record, one part of it a loop, the tables as CSV files, and the sources."""
+    design = dossier.design
+    record = record_of(design)
+    place = Place("data/loops.csv")
+    files = {
+        "data/record.json": dump(record),
+        "data/loops.csv": csv_bytes(loops_table(dossier, place)),
+        "data/outputs.csv": csv_bytes(outputs_table(dossier, place)),
+        "data/open-points.csv": csv_bytes(open_points_table(dossier, place)),
+        "data/assumptions.csv": csv_bytes(assumptions_table(dossier)),
+    }
+    files |= {f"data/{loop['tag']}.json": dump(loop) for loop in record["loops"]}
+    files |= {f"data/source/{name}": source.content for source in design.sources if (name := inside(source.name))}
+    return files
+
+
+def inside(name: str) -> str:
+    """Return a source's name where it stays inside a folder, else nothing.
+
+    Examples
+    --------
+    >>> inside("loops/drying.yml"), inside("../secret.yml"), inside("/etc/hosts")
+    ('loops/drying.yml', '', '')
+    """
+    path = PurePosixPath(name)
+    return "" if path.is_absolute() or ".." in path.parts or "\\" in name or ":" in name else path.as_posix()
