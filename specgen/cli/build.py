@@ -5,7 +5,7 @@ from pathlib import Path
 import click
 
 from specgen.cli.common import exit_code, folder_argument, read, show_problems
-from specgen.render.site import SiteError, build_site
+from specgen.render.site import SiteError, write_site
 
 
 @click.command()
@@ -20,7 +20,7 @@ def build(context: click.Context, folder: Path) -> None:
     design = read(folder)
     show_problems(design, err=True)
     try:
-        index = build_site(folder, design)
+        index = write_site(folder, design) / "index.html"
     except SiteError as error:
         raise click.ClickException(str(error)) from None
     click.echo(f"{len(design.loops)} loops; open {index.resolve().as_uri()}")

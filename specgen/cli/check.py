@@ -8,7 +8,7 @@ from specgen.cli.common import exit_code, folder_argument, read, show_problems
 from specgen.core.table import aligned
 from specgen.design.record import dump, record_of
 from specgen.design.types import Design
-from specgen.view.summary import one_line
+from specgen.view.terminal import one_line
 
 
 @click.command()

@@ -5,7 +5,7 @@ from pathlib import Path
 import click
 
 from specgen.cli.common import exit_code, folder_argument, read, show_problems
-from specgen.view.summary import reasoning
+from specgen.view.terminal import reasoning
 
 
 @click.command()
