@@ -27,12 +27,12 @@ class PageRow:
 
 PAGE_ROWS = (
     PageRow("index.html", "Overview", "", "what was decided and what is open", "", "Overview"),
-    PageRow("registers/loops.html", "Loops", "Registers", "every loop with its decision and figures", "reviewer", "Loops"),
-    PageRow("registers/open-points.html", "Open points", "Registers", "missing inputs and how to get them", "reviewer", "Open points"),
-    PageRow("registers/assumptions.html", "Assumptions", "Registers", "what was taken for granted", "reviewer"),
-    PageRow("registers/deviations.html", "Deviations", "Registers", "rules that are broken or overridden", "reviewer"),
-    PageRow("schedules/outputs.html", "Outputs", "Schedules", "controller outputs and what they drive", "panel builder", "Schedules"),
-    PageRow("panel/rule-book.html", "Rule book", "Panel", "every rule, its source, and where it bore", "reviewer", "Rule book"),
+    PageRow("loops.html", "Loops", "Registers", "every loop with its decision and figures", "reviewer", "Loops"),
+    PageRow("open-points.html", "Open points", "Registers", "missing inputs and how to get them", "reviewer", "Open points"),
+    PageRow("assumptions.html", "Assumptions", "Registers", "what was taken for granted", "reviewer"),
+    PageRow("deviations.html", "Deviations", "Registers", "rules that are broken or overridden", "reviewer"),
+    PageRow("outputs.html", "Outputs", "Schedules", "controller outputs and what they drive", "panel builder", "Schedules"),
+    PageRow("rule-book.html", "Rule book", "Panel", "every rule, its source, and where it bore", "reviewer", "Rule book"),
 )
 
 
@@ -57,7 +57,7 @@ class Place:
 
     def rule(self, dossier: Dossier, code: str) -> str:
         """Return a link to a rule, empty where the rule book has no such place."""
-        return self.to("panel/rule-book.html", code) if code in dossier.rule_codes else ""
+        return self.to("rule-book.html", code) if code in dossier.rule_codes else ""
 
 
 def frame(
@@ -131,7 +131,7 @@ def _missing(loops: tuple[MissingLoop, ...]) -> str:
 def _tags_item(verdict: str, tags: tuple[str, ...], place: Place) -> Item:
     spans: list[Span] = []
     if len(tags) > MOST_NAMED:
-        spans.append(Span(f"{len(tags)} loops", place.to("registers/loops.html")))
+        spans.append(Span(f"{len(tags)} loops", place.to("loops.html")))
     else:
         for index, tag in enumerate(tags):
             if index:

@@ -111,8 +111,8 @@ _FILES = (
 def _count(dossier: Dossier, path: str) -> str:
     loops = dossier.design.loops
     counts = {
-        "registers/open-points.html": sum(len(loop.missing) for loop in loops),
-        "registers/deviations.html": sum(1 for loop in loops for finding in loop.findings if finding.outcome in ("broken", "overridden")),
+        "open-points.html": sum(len(loop.missing) for loop in loops),
+        "deviations.html": sum(1 for loop in loops for finding in loop.findings if finding.outcome in ("broken", "overridden")),
     }
     return str(counts[path] or "none") if path in counts else ""
 

@@ -15,12 +15,12 @@ from specgen.view.sheet import sheet_page
 # a page is one row in PAGE_ROWS and its builder here
 BUILDERS: Mapping[str, Callable[[Dossier, Place], PageView]] = {
     "index.html": overview_page,
-    "registers/loops.html": loops_page,
-    "registers/open-points.html": open_points_page,
-    "registers/assumptions.html": assumptions_page,
-    "registers/deviations.html": deviations_page,
-    "schedules/outputs.html": outputs_page,
-    "panel/rule-book.html": rule_book_page,
+    "loops.html": loops_page,
+    "open-points.html": open_points_page,
+    "assumptions.html": assumptions_page,
+    "deviations.html": deviations_page,
+    "outputs.html": outputs_page,
+    "rule-book.html": rule_book_page,
 }
 
 

@@ -1,18 +1,18 @@
 """Section Basis of a sheet: assumptions, inputs with the line each came from, and the calculation line by line."""
 
-from collections.abc import Iterable
 from math import isfinite
 
 from pydantic import BaseModel
 
-from specgen.core.diagnostic import Path
+from specgen.core.diagnostic import Path, Span
 from specgen.core.figure import Figure
 from specgen.design.types import DecidedLoop
 from specgen.model.loop import Loop
 from specgen.view.cells import says, word
 from specgen.view.dossier import Dossier, not_examined
 from specgen.view.frame import Place
-from specgen.view.shapes import Column, FigureLine, Row, Section, Sentence, Shape, Span, Table
+from specgen.view.shapes import Column, FigureLine, Row, Section, Sentence, Shape, Table
+from specgen.view.shapes import Span as Run
 from specgen.view.words import FAMILIES
 from specgen.view.writer import Writer
 
@@ -39,32 +39,33 @@ def _assumptions(decided: DecidedLoop) -> Table:
 def _inputs(place: Place, decided: DecidedLoop) -> Table:
     """List what the loop file says, as it says it, one row a line of a section."""
     columns = (Column("Input"), Column("As written"), Column("File and line"))
+    grouped: dict[tuple[Path, str, int], list[tuple[Path, str]]] = {}
+    for path, text, span in inputs_of(decided):
+        grouped.setdefault((path[:-1], span.file, span.line), []).append((path, text))
     rows: list[Row] = []
-    grouped: dict[tuple[str, str, int], list[tuple[Path, str]]] = {}
-    for path, text in inputs_of(decided):
-        span = decided.read.spans[path]
-        grouped.setdefault((_dotted(path[:-1]), span.file, span.line), []).append((path, text))
     for (section, file, line), fields in grouped.items():
-        alone = len(fields) == 1
-        name = _dotted(fields[0][0]) if alone else section
-        text = fields[0][1] if alone else ", ".join(f"{path[-1]} {text}" if isinstance(path[-1], str) else text for path, text in fields)
+        if len(fields) == 1:
+            name, text = _dotted(fields[0][0]), fields[0][1]
+        else:
+            name, text = _dotted(section), ", ".join(f"{path[-1]} {text}" if isinstance(path[-1], str) else text for path, text in fields)
         aside = "same_as" if fields[0][0] in decided.read.inherited else ""
         rows.append(Row((word(name), word(text), word(f"{file}:{line}", place.to(f"data/source/{file}"), aside))))
     return Table("Inputs", columns, tuple(rows), wide=True, empty="Nothing was read.")
 
 
-def inputs_of(decided: DecidedLoop) -> Iterable[tuple[Path, str]]:
-    """Yield every written field of a loop with its text, in the order of the file."""
-    loop, spans = decided.loop, decided.read.spans
-    known = [path for path in spans if path and path[0] not in _NOT_INPUTS]
-    sections = {path[:length] for path in known for length in range(1, len(path))}
-    known.sort(key=lambda path: (spans[path].file != decided.read.file, spans[path].file, spans[path].line, spans[path].column))
-    for path in known:
-        if path in sections:
+def inputs_of(decided: DecidedLoop) -> list[tuple[Path, str, Span]]:
+    """Return every written field of a loop with its text and place, in the order of the file, what is inherited last."""
+    loop, read = decided.loop, decided.read
+    found: list[tuple[Path, str, Span]] = []
+    sections = {path[:-1] for path in read.spans}
+    for path in read.spans:
+        if path in sections or not path or path[0] in _NOT_INPUTS:
             continue
         text = written(loop, path)
         if text is not None:
-            yield path, text
+            found.append((path, text, read.spans[path]))
+    found.sort(key=lambda row: (row[2].file != read.file, row[2]))
+    return found
 
 
 def written(loop: Loop, path: Path) -> str | None:
@@ -131,9 +132,9 @@ def _left_out(dossier: Dossier, place: Place) -> Sentence:
         if codes:
             parts.append(f"{title.lower()} {' '.join(codes)}")
     spans = (
-        Span("Not examined:", strong=True),
-        Span(f" {'; '.join(parts)}. What is not examined is not cleared: "),
-        Span("what each will ask", place.to("panel/rule-book.html", "not-examined")),
-        Span("."),
+        Run("Not examined:", strong=True),
+        Run(f" {'; '.join(parts)}. What is not examined is not cleared: "),
+        Run("what each will ask", place.to("rule-book.html", "not-examined")),
+        Run("."),
     )
     return Sentence(spans, quiet=True)
