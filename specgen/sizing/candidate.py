@@ -54,3 +54,8 @@ ControllerOutputKind = Literal["relay", "logic", "analogue", "relay_pair"]
 @dataclass(frozen=True, slots=True)
 class NoCandidate(Unsized):
     """The pair is not considered at all: nobody would wire it (a relay for a motor)."""
+
+
+@dataclass(frozen=True, slots=True)
+class Unsuited(Unsized):
+    """The kind of device does not suit the element at all; the mode's own rules (M2 to M4) say so."""

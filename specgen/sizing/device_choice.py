@@ -4,7 +4,7 @@ from specgen.catalogue.load import Catalogue
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel
 from specgen.model.traits import Traits
-from specgen.sizing.candidate import Candidate, Unsized
+from specgen.sizing.candidate import Candidate, Unsized, Unsuited
 from specgen.sizing.contactor_choice import contactor_choices
 from specgen.sizing.device import DeviceChoice
 from specgen.sizing.relay_choice import relay_choices, relay_pair_choices
@@ -25,8 +25,8 @@ def choose_device(candidate: Candidate, loop: Loop, panel: Panel, traits: Traits
     Returns
     -------
     DeviceChoice or Unsized
-        What is typical is among its assumptions, what is not computed yet among its open points. Unsized where the kind
-        of device does not suit, none is large enough, or a field is missing; NoCandidate where nobody would wire it.
+        What is typical is among its assumptions, what is not computed yet among its open points. Unsized where none is large
+        enough or a field is missing, Unsuited where the kind of device does not suit, NoCandidate where nobody would wire it.
     """
     found = devices_by_rating(candidate, loop, panel, traits, catalogue)
     return found if isinstance(found, Unsized) else found[0]
@@ -43,9 +43,9 @@ def devices_by_rating(
 ) -> tuple[DeviceChoice, ...] | Unsized:
     """Return every device of a candidate's kind that carries the load, in the order of choice; parameters as `choose_device`."""
     if traits.travels and candidate.device in ("relay", "contactor", "ssr"):
-        return Unsized("a valve that travels is driven by a pair of relays")
+        return Unsuited("a valve that travels is driven by a pair of relays")
     if traits.analogue_input and candidate.device in ("relay", "contactor", "ssr"):
-        return Unsized("the element takes a signal; no load current is switched")
+        return Unsuited("the element takes a signal; no load current is switched")
     match candidate.device:
         case "relay":
             return relay_choices(loop, panel, traits, catalogue)

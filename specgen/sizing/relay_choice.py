@@ -9,7 +9,7 @@ from specgen.model.devices import Relay
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel
 from specgen.model.traits import Traits
-from specgen.sizing.candidate import Assumption, NoCandidate, Unsized
+from specgen.sizing.candidate import Assumption, NoCandidate, Unsized, Unsuited
 from specgen.sizing.chain import contact, element_contact, relay_rating, typical
 from specgen.sizing.coil_drive import coil_current, coil_drives
 from specgen.sizing.controller import OutputSide, controller_side
@@ -54,7 +54,7 @@ def relay_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue
 def relay_pair_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue) -> tuple[DeviceChoice, ...] | Unsized:
     """Return the pairs of relays that could drive a travelling valve, the smallest first; parameters as `relay_choices`."""
     if not traits.travels:
-        return NoCandidate("a pair of relays drives a valve that travels; this element does not")
+        return Unsuited("a pair of relays drives a valve that travels; this element does not")
     load = load_current(loop.element, panel, catalogue)
     if isinstance(load, Unsized):
         return load

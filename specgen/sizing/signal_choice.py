@@ -6,7 +6,7 @@ from specgen.model.element import GasBurner, ModulatingValve, VariableSpeedMachi
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel
 from specgen.model.traits import Traits
-from specgen.sizing.candidate import NoCandidate, Unsized
+from specgen.sizing.candidate import Unsized, Unsuited
 from specgen.sizing.controller import controller_side
 from specgen.sizing.device import DeviceChoice
 
@@ -22,7 +22,7 @@ def signal_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogu
     Returns
     -------
     tuple of DeviceChoice, or Unsized
-        One choice; Unsized for an element without an analogue input, and where no controller gives its signal.
+        One choice; Unsuited for an element without an analogue input, Unsized where no controller gives its signal.
 
     Notes
     -----
@@ -30,7 +30,7 @@ def signal_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogu
     """
     element = loop.element
     if not traits.analogue_input or not isinstance(element, (ModulatingValve, VariableSpeedMachine, GasBurner)):
-        return NoCandidate("this element takes no signal")
+        return Unsuited("this element takes no signal")
     if element.signal is None:
         return Unsized("the element's signal is not declared", ("element.signal",))
     side = controller_side(panel, catalogue, "analogue", signal=element.signal)

@@ -6,7 +6,7 @@ from specgen.model.devices import PowerController, SolidState
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel
 from specgen.model.traits import Traits
-from specgen.sizing.candidate import Assumption, ControllerOutputKind, NoCandidate, Unsized
+from specgen.sizing.candidate import Assumption, ControllerOutputKind, Unsized, Unsuited
 from specgen.sizing.chain import contact, typical
 from specgen.sizing.connection import Connection, control_connection
 from specgen.sizing.controller import OutputSide, controller_side
@@ -140,11 +140,11 @@ def power_controller_choices(loop: Loop, panel: Panel, traits: Traits, catalogue
     Returns
     -------
     tuple of DeviceChoice, or Unsized
-        Unsized for anything but electric heaters, and above the largest current. A load that must not be switched whole
+        Unsuited for anything but electric heaters, Unsized above the largest current. A load that must not be switched whole
         gets phase angle with soft start or current limit only.
     """
     if not traits.electric_heat:
-        return NoCandidate("a power controller throttles electric heaters only")
+        return Unsuited("a power controller throttles electric heaters only")
     load = load_current(loop.element, panel, catalogue)
     if isinstance(load, Unsized):
         return load

@@ -7,7 +7,7 @@ from specgen.core.quantity import Quantity
 from specgen.model.devices import Devices
 from specgen.model.reader import read_model
 from specgen.model.traits import traits_of
-from specgen.sizing.candidate import Candidate, NoCandidate, Unsized
+from specgen.sizing.candidate import Candidate, NoCandidate, Unsized, Unsuited
 from specgen.sizing.contactor_choice import rating_at
 from specgen.sizing.device_choice import choose_device, larger_devices
 
@@ -221,7 +221,7 @@ def test_power_controller(choose):
     found = choose("power_controller", HEATER)
     assert (found.name, found.category, found.chain) == ("power controller 16 A, three-phase", "AC-51", ())
     assert choose("power_controller", SMALL).name == "power controller 16 A, single-phase"
-    assert isinstance(choose("power_controller", COMPRESSOR), NoCandidate)
+    assert isinstance(choose("power_controller", COMPRESSOR), Unsuited)
     lamp = HEATER | {"kind": "infrared_lamp_heater"}
     assert choose("power_controller", lamp).category == "AC-55b"
     burst = {"name": "burst 30", "current": "30 A", "firing": "burst", "loss_per_ampere": "1.3 V"}
@@ -233,7 +233,7 @@ def test_signal(choose):
     assert (found.name, found.controller_output, found.rating, found.chain) == ("4-20 mA signal", "analogue", None, ())
     assert found.figures[0].value == pytest.approx(0.5)  # 250 of 500 ohm
     assert choose("signal", {k: v for k, v in VALVE.items() if k != "burden"}).open_points[0].needs == ("element.burden",)
-    assert isinstance(choose("signal", HEATER), NoCandidate)
+    assert isinstance(choose("signal", HEATER), Unsuited)
     assert choose("signal", VALVE, controllers=[CONTROLLER]).needs == ("controllers.outputs",)
 
 
@@ -242,14 +242,14 @@ def test_pair_of_relays(choose):
     assert (found.controller_output, found.current) == ("relay_pair", 0.4)
     one = {"name": "A", "outputs": [{"kind": "relay", "rating": "2 A", "count": "1"}]}
     assert choose("relay_pair", TRAVELLING, controllers=[one]).because == "no controller of the panel has a relay output with 2 of them"
-    assert isinstance(choose("relay_pair", HEATER), NoCandidate)
+    assert isinstance(choose("relay_pair", HEATER), Unsuited)
     assert choose("relay_pair", TRAVELLING | {"motor_current": "1 A"}).chain[-1].role == "load"
 
 
 @pytest.mark.parametrize("device", ["relay", "contactor", "ssr"])
 def test_no_switch_for_what_takes_a_signal_or_travels(choose, device):
-    assert isinstance(choose(device, VALVE), Unsized)
-    assert isinstance(choose(device, TRAVELLING), Unsized)
+    assert isinstance(choose(device, VALVE), Unsuited)
+    assert isinstance(choose(device, TRAVELLING), Unsuited)
 
 
 def test_inrush_counts(choose):

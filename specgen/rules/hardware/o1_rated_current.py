@@ -3,7 +3,7 @@
 from specgen.core.say import amperes
 from specgen.rules.base import Case, Finding, Rule
 from specgen.rules.margin import at_most, over
-from specgen.sizing.candidate import Unsized
+from specgen.sizing.candidate import Unsized, Unsuited
 
 rule = Rule(code="O1", name="Rated current", weight="must")
 
@@ -13,6 +13,8 @@ LISTS = frozenset({"devices.contactors", "devices.relays", "devices.ssrs", "devi
 def examine(case: Case) -> Finding:
     """Break where nothing listed carries the load; where the load itself is not known, leave it open."""
     device = case.device
+    if isinstance(device, Unsuited):
+        return rule.does_not_apply("This kind of device does not suit the element; there is nothing to rate.")
     if isinstance(device, Unsized):
         if set(device.needs) <= LISTS:
             return rule.judge(holds=False, text="Nothing carries the load this way: {because}.", because=device.because)

@@ -2,7 +2,7 @@
 
 import pytest
 
-from specgen.sizing.candidate import Unsized
+from specgen.sizing.candidate import Unsized, Unsuited
 from specgen.sizing.device import DeviceChoice
 
 
@@ -39,3 +39,9 @@ def test_no_device(make, needs, outcome):
     answer = make.ask("O1", case)
     assert answer.outcome == outcome
     assert "no motor rating is given for a solid-state switch" in answer.text
+
+
+def test_nothing_to_rate_where_the_kind_does_not_suit(make):
+    """The mode's rules end such a pair; a rating would add nothing."""
+    case = make.case("heater", "three_point", device_choice=Unsuited("a pair of relays drives a valve that travels"))
+    assert make.ask("O1", case).outcome == "does_not_apply"
