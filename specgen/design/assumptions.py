@@ -43,6 +43,10 @@ def loop_assumptions(read: ReadLoop, traits: Traits) -> tuple[Assumption, ...]:
         for path in sorted(read.inherited, key=str)
         if path[0] == "limits" and len(path) > 1
     ]
+    if read.fitted is not None and traits.resistive_power and loop.plant and loop.plant.step_test and loop.plant.step_test.supply is None:
+        found.append(
+            Assumption("plant.step_test.supply", "not noted", "the supply may have stood anywhere in its tolerance: counted both ways")
+        )
     if loop.limits.after_power_return is None:
         found.append(
             Assumption("limits.after_power_return", "resume", "not written; for injury and fire it must be (rule S4)")

@@ -11,9 +11,9 @@ from specgen.sizing.settings import OnOffSettings
 PLANT = "plant's balance at the case named"
 
 
-def basis_of(case: Case) -> tuple[Figure, ...]:
-    """Return the plant's figures, the measuring error, the device's, the settings' and those of a stuck output."""
-    found: list[Figure] = []
+def basis_of(case: Case, fitted: tuple[Figure, ...] = ()) -> tuple[Figure, ...]:
+    """Return the figures of a fit, the plant's, the measuring error, the device's, the settings' and those of a stuck output."""
+    found = list(fitted)
     if not isinstance(case.box, Unmodelled):
         found += plant_figures(case.box)
     if not isinstance(case.error, Unsized):

@@ -5,12 +5,13 @@ from dataclasses import replace
 
 from specgen.catalogue.load import Catalogue
 from specgen.core.diagnostic import Diagnostic, Span
-from specgen.core.say import Speaker
+from specgen.core.say import Phrasing
 from specgen.design.assumptions import loop_assumptions
 from specgen.design.basis import basis_of
 from specgen.design.choice import because, best, codes, rank, reject
 from specgen.design.missing import missing_inputs
 from specgen.design.types import DecidedLoop, Decision, Examined, Verdict
+from specgen.model.fitted import Fitted
 from specgen.model.loop import Choose, Loop
 from specgen.model.loops import ReadLoop
 from specgen.model.panel import Panel
@@ -48,7 +49,7 @@ def decide(read: ReadLoop, panel: Panel, catalogue: Catalogue) -> tuple[DecidedL
     """
     loop = read.loop
     traits = traits_of(loop.element)
-    examined = examine_candidates(loop, panel, traits, catalogue)
+    examined = examine_candidates(loop, panel, traits, catalogue, read.fitted)
     decision, problem = _decision(read, examined)
     if decision is None:
         return None, (problem,) if problem is not None else ()
@@ -64,14 +65,16 @@ def decide(read: ReadLoop, panel: Panel, catalogue: Catalogue) -> tuple[DecidedL
         verdict=verdict_of(findings),
         assumptions=assumptions,
         missing=missing_inputs(findings, case),
-        basis=basis_of(case),
+        basis=basis_of(case, read.fitted.figures if read.fitted is not None else ()),
     )
     return decided, ()
 
 
-def examine_candidates(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue) -> tuple[Examined, ...]:
+def examine_candidates(
+    loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue, fitted: Fitted | None = None
+) -> tuple[Examined, ...]:
     """Size every candidate and ask every rule about it; pairs that nobody would wire are left out."""
-    box = box_of(loop, panel)
+    box = box_of(loop, panel, fitted.ranges if fitted is not None else None)
     error = measuring_error(loop, panel, catalogue)
     faults = faults_of(loop, box)
     devices = {c.device: choose_device(c, loop, panel, traits, catalogue) for c in CANDIDATES if c.mode != "time_proportioned"}
@@ -140,10 +143,10 @@ def _decision(read: ReadLoop, examined: tuple[Examined, ...]) -> tuple[Decision 
             read, ("choose",), "L302", f"choose sets aside rule {first.rule} without a reason: {_sentence(loop, first)}",
             "write because: with the reason, or leave the choice to the rules",
         )
-    speaker = Speaker(loop.unit, loop.difference_unit)
+    phrasing = Phrasing(loop.unit, loop.difference_unit)
     others = sorted((e for e in examined if e is not chosen), key=rank)
-    rejected = tuple(reject(chosen, other, speaker, by_designer=by_designer) for other in others)
-    why = wish.because if by_designer and wish is not None and wish.because else because(chosen, rejected, speaker)
+    rejected = tuple(reject(chosen, other, phrasing, by_designer=by_designer) for other in others)
+    why = wish.because if by_designer and wish is not None and wish.because else because(chosen, rejected, phrasing)
     return Decision(chosen, why, rejected, by_designer), None
 
 
@@ -185,7 +188,7 @@ def _assumptions(read: ReadLoop, traits: Traits, case: Case) -> tuple[Assumption
 
 
 def _sentence(loop: Loop, finding: Finding) -> str:
-    return Speaker(loop.unit, loop.difference_unit).fill(finding.text, finding.words)
+    return Phrasing(loop.unit, loop.difference_unit).fill(finding.text, finding.words)
 
 
 def _problem(read: ReadLoop, path: tuple[str, ...], code: str, text: str, hint: str) -> Diagnostic:

@@ -6,6 +6,7 @@ from pathlib import Path
 from specgen.catalogue.load import Catalogue, catalogue_digest, load_catalogue, read_devices
 from specgen.core.diagnostic import Diagnostic
 from specgen.design.decide import decide
+from specgen.design.recordings import with_recordings
 from specgen.design.types import VERDICTS, DecidedLoop, Design, SourceFile, Verdict
 from specgen.model.loops import read_loops
 from specgen.model.panel import Panel
@@ -33,11 +34,11 @@ def load_design(project: Path, progress: Progress | None = None) -> Design:
     Design
         Every loop that could be decided and every problem met; nothing is raised for what the files hold.
     """
-    return design_of(read_folder(project / LOOPS, LOOPS), progress)
+    return design_of(read_folder(project / LOOPS, LOOPS), progress, project / LOOPS)
 
 
-def design_of(sources: Sources, progress: Progress | None = None) -> Design:
-    """Decide what was read."""
+def design_of(sources: Sources, progress: Progress | None = None, folder: Path | None = None) -> Design:
+    """Decide what was read; ``folder`` is where the recordings lie that loops name."""
     problems = list(sources.problems)
     panel, found = _read_panel(sources.panel)
     problems += found
@@ -45,20 +46,22 @@ def design_of(sources: Sources, progress: Progress | None = None) -> Design:
     problems += found
     reading = read_loops(sources.loops)
     problems += reading.problems
+    tested = with_recordings(reading.loops, folder, LOOPS)
+    problems += tested.problems
     decided: list[DecidedLoop] = []
     if panel is not None:
-        for done, read in enumerate(reading.loops):
+        for done, read in enumerate(tested.loops):
             loop, faults = decide(read, panel, catalogue)
             problems += faults
             if loop is not None:
                 decided.append(loop)
             if progress is not None:
-                progress(done + 1, len(reading.loops))
+                progress(done + 1, len(tested.loops))
     return Design(
         panel=panel,
         loops=tuple(decided),
         problems=tuple(sorted(set(problems))),
-        sources=tuple(SourceFile(name, content) for name, content in sources.files),
+        sources=tuple(SourceFile(name, content) for name, content in (*sources.files, *tested.files)),
         rules_digest=rules_digest(),
         catalogue_digest=catalogue_digest(),
         verdict=worst_verdict([loop.verdict for loop in decided]),

@@ -10,6 +10,7 @@ from specgen.core.diagnostic import Diagnostic, Path, Span
 from specgen.core.dimension import Dimension, own_dimension
 from specgen.core.quantity import QuantityError, Unit, parse_quantity, written_unit
 from specgen.model.fields import shown
+from specgen.model.fitted import Fitted
 from specgen.model.hints import has
 from specgen.model.loop import Loop
 from specgen.model.reader import Plain, Problem, place, read_model
@@ -32,13 +33,17 @@ _DIMENSIONS: Mapping[str, tuple[tuple[str, str, str], ...]] = {
 
 @dataclass(frozen=True, slots=True)
 class ReadLoop:
-    """A loop that was read without a problem, with the place of every field that was written."""
+    """A loop that was read without a problem, with the place of every field that was written.
+
+    ``fitted`` is what its recorded step test says, once that was identified.
+    """
 
     loop: Loop
     file: str
     line: int
     spans: Mapping[Path, Span]
     inherited: frozenset[Path]
+    fitted: Fitted | None = None
 
     def written(self, path: Path) -> bool:
         """Tell whether the loop file says this field itself (not inherited, not a default)."""
