@@ -124,7 +124,7 @@ _SCALE_OF = {"years": 365.25 * 86400, "days": 86400.0, "h": 3600.0, "min": 60.0}
 
 
 @dataclass(frozen=True, slots=True)
-class Speaker:
+class Phrasing:
     """Writes numbers of one loop: its value's unit and the unit of a difference."""
 
     value: Unit
@@ -135,8 +135,8 @@ class Speaker:
 
         Examples
         --------
-        >>> speaker = Speaker(Unit("degC"), Unit("K"))
-        >>> speaker.say(seconds(10)), speaker.say(share(0.05)), speaker.say(of_value(65))
+        >>> phrasing = Phrasing(Unit("degC"), Unit("K"))
+        >>> phrasing.say(seconds(10)), phrasing.say(share(0.05)), phrasing.say(of_value(65))
         ('10\u202fs', '5\u202fpercent', '65.0\u202f°C')
         """
         if said.dimension == "value":

@@ -3,7 +3,7 @@
 from collections.abc import Sequence
 from math import inf
 
-from specgen.core.say import Speaker
+from specgen.core.say import Phrasing
 from specgen.design.types import Examined, Rejected
 from specgen.rules.base import Finding
 from specgen.sizing.candidate import ORDER
@@ -46,12 +46,12 @@ def separation(chosen: Examined, other: Examined) -> tuple[Finding, ...]:
     return ()
 
 
-def reject(chosen: Examined, other: Examined, speaker: Speaker, *, by_designer: bool) -> Rejected:
+def reject(chosen: Examined, other: Examined, phrasing: Phrasing, *, by_designer: bool) -> Rejected:
     """Say why a candidate was not taken."""
     ending = separation(chosen, other)
     if ending:
         first = ending[0]
-        return Rejected(other, tuple(f.rule for f in ending), speaker.fill(first.text, first.words))
+        return Rejected(other, tuple(f.rule for f in ending), phrasing.fill(first.text, first.words))
     if by_designer and rank(other) < rank(chosen):
         return Rejected(other, (BY_ORDER,), "not taken: the designer chose otherwise")
     ours, theirs = ORDER.index(chosen.case.candidate.device), ORDER.index(other.case.candidate.device)
@@ -59,7 +59,7 @@ def reject(chosen: Examined, other: Examined, speaker: Speaker, *, by_designer: 
     return Rejected(other, (BY_ORDER,), text)
 
 
-def because(chosen: Examined, rejected: Sequence[Rejected], speaker: Speaker) -> str:
+def because(chosen: Examined, rejected: Sequence[Rejected], phrasing: Phrasing) -> str:
     """Explain the choice by the first rule that separates it from the next candidate."""
     if not rejected:
         return "nothing else can be wired here"
@@ -70,7 +70,7 @@ def because(chosen: Examined, rejected: Sequence[Rejected], speaker: Speaker) ->
     if not ending:
         return f"M13: {other} keeps the same rules; {following.text.removeprefix('equal in the rules; ')}"
     first = ending[0]
-    return f"{first.rule} rules out {other}: {speaker.fill(first.text, first.words)}"
+    return f"{first.rule} rules out {other}: {phrasing.fill(first.text, first.words)}"
 
 
 MODE_WORDS = {"on_off": "on-off", "time_proportioned": "time-proportioned", "analogue": "analogue", "three_point": "three-point"}

@@ -191,7 +191,7 @@ def _stuck(stuck: Stuck, numbers: _Numbers) -> Row:
 def _rule(decided: DecidedLoop, finding: Finding) -> Row:
     return {
         "rule": finding.rule, "weight": finding.weight, "outcome": finding.outcome,
-        "text": decided.speaker.fill(finding.text, finding.words), "needs": list(finding.needs),
+        "text": decided.phrasing.fill(finding.text, finding.words), "needs": list(finding.needs),
     }  # fmt: skip
 
 
@@ -213,7 +213,7 @@ def _rejected(rejected: Rejected, numbers: _Numbers) -> Row:
 
 def _figure(decided: DecidedLoop, figure: Figure, numbers: _Numbers) -> Row:
     result, unit = numbers.of(figure)
-    say = decided.speaker.say
+    say = decided.phrasing.say
     put_in = ", ".join(f"{name} = {say(Said(value, dimension))}" for name, (value, dimension) in figure.with_.items())
     return {
         "symbol": figure.symbol, "formula": figure.formula, "with": put_in, "result": result, "unit": unit, "source": figure.source,

@@ -5,7 +5,7 @@ from typing import Literal
 
 from specgen.core.diagnostic import Diagnostic
 from specgen.core.figure import Figure
-from specgen.core.say import Speaker
+from specgen.core.say import Phrasing
 from specgen.model.loop import Loop
 from specgen.model.loops import ReadLoop
 from specgen.model.panel import Panel
@@ -83,9 +83,9 @@ class DecidedLoop:
         return self.read.loop.tag
 
     @property
-    def speaker(self) -> Speaker:
+    def phrasing(self) -> Phrasing:
         """Return what writes numbers in this loop's units."""
-        return Speaker(self.read.loop.unit, self.read.loop.difference_unit)
+        return Phrasing(self.read.loop.unit, self.read.loop.difference_unit)
 
 
 @dataclass(frozen=True, slots=True)

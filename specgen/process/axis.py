@@ -3,7 +3,7 @@
 from dataclasses import dataclass, field, replace
 
 from specgen.core.quantity import Range
-from specgen.core.say import Said, Speaker
+from specgen.core.say import Phrasing, Said
 
 NAMED_APART = 1e-9
 
@@ -36,18 +36,18 @@ class Declared:
         """Return the field with its ends exchanged."""
         return replace(self, at_zero=self.at_one, at_one=self.at_zero)
 
-    def said(self, t: float, speaker: Speaker) -> str:
+    def said(self, t: float, phrasing: Phrasing) -> str:
         """Return the field's value at ``t`` in words, as ``surroundings 30.0 °C``."""
         value = self.at(t)
         if self.dimension == "supply":
             if abs(value - 1) < NAMED_APART:
                 return "rated supply"
-            return f"{self.words} {'+' if value > 1 else ''}{speaker.say(Said(value - 1, 'fraction'))}"
+            return f"{self.words} {'+' if value > 1 else ''}{phrasing.say(Said(value - 1, 'fraction'))}"
         if value == 0:
             return f"no {self.words}"
         if self.dimension == "rate_of_value":
-            return f"{self.words} {speaker.say(Said(value * 60, 'change'))}/min"
-        return f"{self.words} {speaker.say(Said(value, self.dimension))}"
+            return f"{self.words} {phrasing.say(Said(value * 60, 'change'))}/min"
+        return f"{self.words} {phrasing.say(Said(value, self.dimension))}"
 
 
 def declared(path: str, words: str, given: Range, dimension: str) -> Declared:

@@ -12,7 +12,7 @@ from dataclasses import dataclass, field
 from itertools import product
 from typing import NamedTuple
 
-from specgen.core.say import Speaker
+from specgen.core.say import Phrasing
 from specgen.process.axis import Axis, Declared
 from specgen.process.plant import Integrating, ProcessModel, SelfRegulating
 
@@ -71,7 +71,7 @@ class Box:
     dead_time: Axis
     lag: Axis
     sensor_lag: Axis
-    speaker: Speaker
+    phrasing: Phrasing
     form: str
     boost: Axis | None = None
     free: tuple[str, ...] = field(init=False, compare=False, repr=False)
@@ -173,7 +173,7 @@ class Box:
 
     def text(self, point: Point) -> str:
         """Return the case in words: ``supply +10 percent, setpoint 80.0 °C, surroundings 8.0 °C``."""
-        return ", ".join(f.said(t, self.speaker) for f, t in self._fields(point) if f.varies) or "the one declared case"
+        return ", ".join(f.said(t, self.phrasing) for f, t in self._fields(point) if f.varies) or "the one declared case"
 
     def _fields(self, point: Point) -> list[tuple[Declared, float]]:
         """Return every field with how far along it the case lies."""

@@ -5,7 +5,7 @@ from dataclasses import dataclass
 from math import sqrt
 
 from specgen.core.quantity import Range
-from specgen.core.say import Speaker
+from specgen.core.say import Phrasing
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel, Supply
 from specgen.model.plant import Balance, Body, Rates
@@ -151,7 +151,7 @@ class _Making:
             dead_time=single(f"{at}.dead_time", "dead time", plant.dead_time, "time"),
             lag=single(f"{at}.lag", "lag", plant.lag, "time"),
             sensor_lag=self.sensor_lag(),
-            speaker=Speaker(self.loop.unit, self.loop.difference_unit),
+            phrasing=Phrasing(self.loop.unit, self.loop.difference_unit),
             form="balance",
         )
 
@@ -180,7 +180,7 @@ class _Making:
             dead_time=single(f"{at}.dead_time", "dead time", dead_time, "time"),
             lag=single(f"{at}.lag", "lag", lag, "time"),
             sensor_lag=self.sensor_lag(),
-            speaker=Speaker(self.loop.unit, self.loop.difference_unit),
+            phrasing=Phrasing(self.loop.unit, self.loop.difference_unit),
             form="step_test" if at.endswith("step_test") else "response",
         )
 
@@ -199,7 +199,7 @@ class _Making:
             dead_time=single(f"{at}.dead_time", "dead time", plant.dead_time, "time"),
             lag=single(f"{at}.lag", "lag", plant.lag, "time"),
             sensor_lag=self.sensor_lag(),
-            speaker=Speaker(self.loop.unit, self.loop.difference_unit),
+            phrasing=Phrasing(self.loop.unit, self.loop.difference_unit),
             form="rates",
             boost=Axis(((voltage, voltage),), square),
         )

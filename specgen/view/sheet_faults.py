@@ -49,7 +49,7 @@ def _stuck(writer: Writer, name: str, stuck: Stuck) -> Row:
 def _settles(writer: Writer, value: float | None) -> Cell:
     if value is None:
         return Cell("does not settle", number=True, export="")
-    if writer.speaker.value.symbol in ("degC", "degF") and value < ABSOLUTE_ZERO:
+    if writer.phrasing.value.symbol in ("degC", "degF") and value < ABSOLUTE_ZERO:
         # a load that is declared constant draws heat out of a body that has none left: the model ends before
         return Cell("beyond what is real", number=True, export="")
     return number(writer.far_value(value), writer.shown_value(value))

@@ -5,10 +5,10 @@ from dataclasses import dataclass
 from math import ceil, floor, inf, isfinite, log10
 
 from specgen.core.quantity import Range, Unit
-from specgen.core.say import THIN, Said, Speaker, Words, digits, join, to_step
+from specgen.core.say import THIN, Phrasing, Said, Words, digits, join, to_step
 from specgen.design.types import DecidedLoop
 
-FAHRENHEIT = Speaker(Unit("degF", 1.8, 32.0), Unit("degF", 1.8))
+FAHRENHEIT = Phrasing(Unit("degF", 1.8, 32.0), Unit("degF", 1.8))
 _PRINTED = {"degC": "°C", "degF": "°F", "percent": "%", "ohm": "\u03a9", "m3/h": "m³/h"}
 _BEFORE_WORDS = re.compile(f"{THIN}(?=(?:percent|years?|days|an? [hy]|operations))")
 _HAIR = 1e-9  # share of a step by which a number may lie past it and still count as on it
@@ -87,22 +87,22 @@ class Writer:
     power of ten.
     """
 
-    speaker: Speaker
+    phrasing: Phrasing
     step: float
 
     @property
     def value_unit(self) -> str:
         """Return the unit of a value as tables print it."""
-        return printed(self.speaker.value.symbol)
+        return printed(self.phrasing.value.symbol)
 
     @property
     def change_unit(self) -> str:
         """Return the unit of a difference as tables print it."""
-        return printed(self.speaker.change.symbol)
+        return printed(self.phrasing.change.symbol)
 
     def value_number(self, value: float) -> str:
         """Write a value without its unit."""
-        unit = self.speaker.value
+        unit = self.phrasing.value
         return to_step(value * unit.scale + unit.offset, self.step)
 
     def value(self, value: float) -> str:
@@ -111,14 +111,14 @@ class Writer:
 
     def one_digit_more(self, value: float) -> str:
         """Write a value with one decimal more than the tables have."""
-        unit = self.speaker.value
+        unit = self.phrasing.value
         return join(to_step(value * unit.scale + unit.offset, self.step / 10), self.value_unit)
 
     def fine_value(self, value: float, apart: float) -> str:
         """Write a value that lies ``apart`` from another, with as many decimals as that distance has (three at most)."""
-        shown = round(abs(apart) * self.speaker.change.scale, 3)
+        shown = round(abs(apart) * self.phrasing.change.scale, 3)
         places = len(f"{shown:.3f}".rstrip("0").partition(".")[2])
-        unit = self.speaker.value
+        unit = self.phrasing.value
         return join(to_step(value * unit.scale + unit.offset, min(self.step, 10.0**-places)), self.value_unit)
 
     def far_value(self, value: float) -> str:
@@ -127,14 +127,14 @@ class Writer:
 
     def near(self, value: float, apart: float) -> str:
         """Write a value so that its distance ``apart`` from another keeps two digits."""
-        shown = abs(apart) * self.speaker.change.scale
+        shown = abs(apart) * self.phrasing.change.scale
         step = min(self.step, 10.0 ** (floor(log10(shown)) - 1)) if shown > 0 else self.step
-        unit = self.speaker.value
+        unit = self.phrasing.value
         return join(to_step(value * unit.scale + unit.offset, step), self.value_unit)
 
     def fine_change(self, change: float) -> str:
         """Write a difference to three significant digits."""
-        return join(digits(change * self.speaker.change.scale), self.change_unit)
+        return join(digits(change * self.phrasing.change.scale), self.change_unit)
 
     def values(self, span: Range) -> str:
         """Write a range of values, one number where both ends are the same."""
@@ -143,11 +143,11 @@ class Writer:
 
     def setting(self, change: float) -> str:
         """Write a difference that is entered or declared: every digit it has, up to four."""
-        return join(digits(change * self.speaker.change.scale, 4), self.change_unit)
+        return join(digits(change * self.phrasing.change.scale, 4), self.change_unit)
 
     def bounds(self, least: float, most: float) -> str:
         """Write a range of differences, each end rounded into it."""
-        scale = self.speaker.change.scale
+        scale = self.phrasing.change.scale
         low, high = upward(least * scale), inward(most * scale)
         if most < least:
             return f"needs {join(digits(low), self.change_unit)}, may be {join(digits(high), self.change_unit)} at most"
@@ -157,7 +157,7 @@ class Writer:
 
     def excursion_number(self, change: float, limit: float = inf) -> str:
         """Write a predicted difference without its unit; never rounded back to a limit that it passes."""
-        scale = self.speaker.change.scale
+        scale = self.phrasing.change.scale
         if not isfinite(change):
             return digits(change)
         nearest = round(change * scale / self.step) * self.step
@@ -171,7 +171,7 @@ class Writer:
 
     def allowed_number(self, change: float) -> str:
         """Write a declared difference without its unit."""
-        return digits(change * self.speaker.change.scale, 4)
+        return digits(change * self.phrasing.change.scale, 4)
 
     def bare(self, value: float, significant: int = 3) -> str:
         """Write any number without a unit."""
@@ -192,11 +192,11 @@ class Writer:
             return join(digits(value * 100, significant), "%")
         if dimension == "value":
             return self.value(value) if isfinite(value) else digits(value)
-        return _BEFORE_WORDS.sub("\u00a0", self.speaker.say(Said(value, dimension), significant))
+        return _BEFORE_WORDS.sub("\u00a0", self.phrasing.say(Said(value, dimension), significant))
 
     def sentence(self, template: str, words: Words) -> str:
         """Fill a rule's sentence; between a number and a word stands a whole space, not a thin one."""
-        return _BEFORE_WORDS.sub("\u00a0", self.speaker.fill(template, words))
+        return _BEFORE_WORDS.sub("\u00a0", self.phrasing.fill(template, words))
 
     def time(self, seconds: float) -> str:
         """Write a time."""
@@ -204,11 +204,11 @@ class Writer:
 
     def shown_value(self, value: float) -> float:
         """Return a value in the unit of the pages."""
-        return value * self.speaker.value.scale + self.speaker.value.offset
+        return value * self.phrasing.value.scale + self.phrasing.value.offset
 
     def shown_change(self, change: float) -> float:
         """Return a difference in the unit of the pages."""
-        return change * self.speaker.change.scale
+        return change * self.phrasing.change.scale
 
 
 def step_for(tolerance: float) -> float:
@@ -224,8 +224,8 @@ def step_for(tolerance: float) -> float:
 
 def writer_for(decided: DecidedLoop, show: str = "si") -> Writer:
     """Return the writer of a loop, in the units the panel asks its pages to show."""
-    speaker = decided.speaker
-    if show == "us" and speaker.value.symbol == "degC":
-        speaker = FAHRENHEIT
+    phrasing = decided.phrasing
+    if show == "us" and phrasing.value.symbol == "degC":
+        phrasing = FAHRENHEIT
     tolerance = decided.loop.need.tolerance
-    return Writer(speaker, step_for(min(float(tolerance.above), float(tolerance.below)) * speaker.change.scale))
+    return Writer(phrasing, step_for(min(float(tolerance.above), float(tolerance.below)) * phrasing.change.scale))

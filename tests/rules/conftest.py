@@ -6,7 +6,7 @@ from types import SimpleNamespace
 
 import pytest
 
-from specgen.core.say import THIN, Speaker
+from specgen.core.say import THIN, Phrasing
 from specgen.model.loops import read_loops
 from specgen.model.panel import Panel
 from specgen.model.reader import read_model
@@ -132,7 +132,7 @@ class Answer:
 
 def said(found, asked):
     """Fill a finding's sentence."""
-    text = Speaker(asked.loop.unit, asked.loop.difference_unit).fill(found.text, found.words).replace(THIN, " ")
+    text = Phrasing(asked.loop.unit, asked.loop.difference_unit).fill(found.text, found.words).replace(THIN, " ")
     assert "{" not in text
     return Answer(found.outcome, text, found.margin, found.needs)
 
