@@ -23,9 +23,11 @@ from specgen.rules.engine import examine_all
 from specgen.sizing.candidate import CANDIDATES, Assumption, Candidate, Device, NoCandidate, Unsized
 from specgen.sizing.continuous import continuous_settings, three_point_settings
 from specgen.sizing.device import DeviceChoice
-from specgen.sizing.device_choice import choose_device
+from specgen.sizing.device_choice import devices_by_rating
+from specgen.sizing.lasting import longer_lasting
 from specgen.sizing.measurement import MeasuringError, measuring_error
 from specgen.sizing.on_off import on_off_settings
+from specgen.sizing.remembered import same_box
 from specgen.sizing.settings import OnOffSettings, Settings
 from specgen.sizing.stuck import faults_of, with_times
 from specgen.sizing.time_proportioned import proportioned_settings
@@ -35,6 +37,7 @@ PAIRS = (
     "a relay is no choice for motors, three-phase loads or more than its rating"
 )
 Sized = DeviceChoice | Unsized
+Sizes = tuple[DeviceChoice, ...] | Unsized
 _CONTACTOR = Candidate("on_off", "contactor")
 
 
@@ -75,16 +78,17 @@ def examine_candidates(
 ) -> tuple[Examined, ...]:
     """Size every candidate and ask every rule about it; pairs that nobody would wire are left out."""
     box = box_of(loop, panel, fitted.ranges if fitted is not None else None)
+    if not isinstance(box, Unmodelled):
+        box = same_box(box)  # equal boxes share what was computed for one of them
     error = measuring_error(loop, panel, catalogue)
     faults = faults_of(loop, box)
-    devices = {c.device: choose_device(c, loop, panel, traits, catalogue) for c in CANDIDATES if c.mode != "time_proportioned"}
+    devices = {c.device: devices_by_rating(c, loop, panel, traits, catalogue) for c in CANDIDATES if c.mode != "time_proportioned"}
     sizer = _Sizer(loop, panel, box, error, devices)
     found = []
     for candidate in CANDIDATES:
-        device = devices[candidate.device]
-        if isinstance(device, NoCandidate):
+        if isinstance(devices[candidate.device], NoCandidate):
             continue
-        settings = sizer.settings(candidate, device)
+        device, settings = sizer.sized(candidate)
         timed = with_times(faults, loop, box, settings)
         case = Case(loop, panel, traits, candidate, box, device, settings, sizer.on_off_beside(candidate), error, timed)
         found.append(Examined(case, examine_all(case)))
@@ -95,27 +99,41 @@ class _Sizer:
     """Sizes the settings of candidates; what two of them share is computed once."""
 
     def __init__(
-        self, loop: Loop, panel: Panel, box: Box | Unmodelled, error: MeasuringError | Unsized, devices: Mapping[Device, Sized]
+        self, loop: Loop, panel: Panel, box: Box | Unmodelled, error: MeasuringError | Unsized, devices: Mapping[Device, Sizes]
     ) -> None:
         self._loop = loop
         self._panel = panel
         self._box = box
         self._error = error
         self._devices = devices
-        self._on_off: dict[Device, OnOffSettings | Unsized] = {}
+        self._on_off: dict[Device, tuple[Sized, Settings | Unsized]] = {}
 
     def on_off_beside(self, candidate: Candidate) -> OnOffSettings | Unsized:
         """Return on-off through the same device, through a contactor for the rest."""
         device: Device = candidate.device if candidate.device in ("relay", "contactor", "ssr") else _CONTACTOR.device
-        if device not in self._on_off:
-            self._on_off[device] = on_off_settings(self._loop, self._panel, self._box, self._devices[device], self._error)
-        return self._on_off[device]
+        settings = self.sized(Candidate("on_off", device))[1]
+        assert isinstance(settings, OnOffSettings | Unsized)  # noqa: S101  an on-off candidate has no other settings
+        return settings
 
-    def settings(self, candidate: Candidate, device: DeviceChoice | Unsized) -> Settings | Unsized:
-        """Return a candidate's own settings."""
+    def sized(self, candidate: Candidate) -> tuple[Sized, Settings | Unsized]:
+        """Return a candidate's device and settings: the smallest device, or a larger one where only that lasts long enough."""
+        if candidate.mode == "on_off" and candidate.device in self._on_off:
+            return self._on_off[candidate.device]
+        found = self._devices[candidate.device]
+        device: Sized = found if isinstance(found, Unsized) else found[0]
+        settings = self._settings(candidate, device)
+        if not isinstance(found, Unsized):
+            wanted = self._panel.house.contact_life_years
+            lasting = longer_lasting(found, settings, wanted, lambda larger: self._settings(candidate, larger))
+            device, settings = lasting or (device, settings)
+        if candidate.mode == "on_off":
+            self._on_off[candidate.device] = device, settings
+        return device, settings
+
+    def _settings(self, candidate: Candidate, device: Sized) -> Settings | Unsized:
         match candidate.mode:
             case "on_off":
-                return self.on_off_beside(candidate)
+                return on_off_settings(self._loop, self._panel, self._box, device, self._error)
             case "time_proportioned":
                 return proportioned_settings(candidate, self._loop, self._panel, self._box, device, self._error)
             case "analogue":

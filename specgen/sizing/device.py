@@ -31,6 +31,7 @@ class DeviceChoice:
     """The device that switches or throttles the element, rated for its current.
 
     ``rating`` and ``current`` in A, absent for a plain signal; ``category`` is the utilisation category the rating is for.
+    ``because`` says why it is not the smallest that carries the load; empty where it is.
     """
 
     name: str
@@ -43,3 +44,4 @@ class DeviceChoice:
     figures: tuple[Figure, ...] = ()
     assumptions: tuple[Assumption, ...] = ()
     open_points: tuple[Unsized, ...] = ()
+    because: str = ""

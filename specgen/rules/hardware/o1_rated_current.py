@@ -24,6 +24,8 @@ def examine(case: Case) -> Finding:
     return rule.judge(
         holds=at_most(device.current, device.rating),
         margin=over(device.rating, device.current),
-        text="{name} is rated {rating} in {category}, and the load takes {current} at the supply's worse end.",
+        text="{name} is rated {rating} in {category}, and the load takes {current} at the supply's worse end."
+        + (" {instead}" if device.because else ""),
         name=device.name, rating=amperes(device.rating), category=device.category, current=amperes(device.current),
+        instead=device.because,
     )  # fmt: skip
