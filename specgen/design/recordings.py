@@ -8,7 +8,7 @@ from pathlib import Path, PurePosixPath
 from specgen.core.diagnostic import Diagnostic
 from specgen.core.figure import Figure
 from specgen.core.quantity import Range
-from specgen.core.say import Said, Phrasing
+from specgen.core.say import Phrasing, Said
 from specgen.core.unit import fits
 from specgen.model.fields import shown
 from specgen.model.fitted import Fitted
