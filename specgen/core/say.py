@@ -78,6 +78,9 @@ def digits(value: float, significant: int = 3) -> str:
         return "without limit" if value > 0 else f"{MINUS}without limit"
     if value == 0:
         return "0"
+    short = f"{value:.{significant}g}"  # most numbers are done here; what follows is for those it would write with an exponent
+    if "e" not in short:
+        return short.replace("-", MINUS)
     places = significant - 1 - floor(log10(abs(value)))
     rounded = round(value, places)
     text = f"{abs(rounded):,.{max(places, 0)}f}".replace(",", THIN)
