@@ -14,11 +14,15 @@ from specgen.process.on_off import OnOffPrediction, predict_on_off
 from specgen.sizing.candidate import Assumption, Unsized
 from specgen.sizing.device import DeviceChoice
 from specgen.sizing.measurement import MeasuringError
+from specgen.sizing.remembered import remembered
 from specgen.sizing.rounding import chosen_differential
 from specgen.sizing.settings import Bound, OnOffSettings, Placement
 from specgen.sizing.wear import allowed_per_hour, hours_per_year, life_in_years, weakest
 
 CYCLE = "settled on-off cycle in the worst case of the declared ranges; compared with numerical integration in tests/process"
+_least_differential = remembered(least_differential)
+_widest_differential = remembered(widest_differential)
+_predict_on_off = remembered(predict_on_off)
 NOISES = 2  # D2: a differential is at least this many times the noise
 
 
@@ -55,10 +59,10 @@ def _settled(
     most, most_bound = _most(loop, box, error, placement, run, rest)
     chosen = loop.choose.differential if loop.choose else None
     differential = float(chosen) if chosen is not None else chosen_differential(least, most, step, even=placement == "centred")
-    enforced = predict_on_off(box, differential, placement, run, rest)
+    enforced = _predict_on_off(box, differential, placement, run, rest)
     natural = replace(enforced, min_run=0.0, min_rest=0.0)
     if enforced.shortest_on.value < run or enforced.shortest_off.value < rest:
-        natural = predict_on_off(box, differential, placement)
+        natural = _predict_on_off(box, differential, placement)
     starts = enforced.starts_per_hour.value + _defrosts(loop)
     operations = starts * hours_per_year(loop, panel)
     last = weakest(device)
@@ -127,7 +131,7 @@ def _least_bounds(loop: Loop, panel: Panel, box: Box, device: DeviceChoice | Uns
     last = weakest(device)
     per_hour = allowed_per_hour(last.operations, panel, loop) - _defrosts(loop) if last else None
     own = max(starts - _defrosts(loop), 0.0) if starts is not None else None
-    found = least_differential(
+    found = _least_differential(
         box, placement, starts_per_hour=own or None, min_run=run, min_rest=rest,
         switchings_per_hour=per_hour if per_hour and per_hour > 0 else None,
     )  # fmt: skip
@@ -147,7 +151,7 @@ def _most(
     if isinstance(error, Unsized):
         return inf, None
     above, below = float(loop.need.tolerance.above) - error.root_sum, float(loop.need.tolerance.below) - error.root_sum
-    most = widest_differential(box, above, below, placement, run, rest)
+    most = _widest_differential(box, above, below, placement, run, rest)
     return most, Bound("D4", most, "the tolerance less the measuring error")
 
 

@@ -10,6 +10,7 @@ from specgen.process.loop_dynamics import Dynamics
 from specgen.process.loop_run import Band
 from specgen.process.start_up import StartUp, start_up
 from specgen.sizing.candidate import Unsized
+from specgen.sizing.remembered import remembered
 from specgen.sizing.settings import Tuning
 from specgen.sizing.starting_values import Start, dynamics_of
 
@@ -43,6 +44,7 @@ def estimated_deviation(start: Start, change: float) -> float:
     return first_estimate(start.hardest.dynamics.slope, _delay(start), change)
 
 
+@remembered
 def simulated_deviation(start: Start, change: float) -> float:
     """Return the largest simulated deviation after a sudden load, either way, at the ends of the duty range."""
     found = 0.0
@@ -57,7 +59,9 @@ def simulated_deviation(start: Start, change: float) -> float:
 
 def tuning_of(start: Start, box: Box, loop: Loop, deviation: float | None, *, simulate: bool = True) -> Tuning:
     """Return the tuning with its margins, the deviation after a sudden load, and the simulated start-up."""
-    rise = _start_up(start, box, loop) if simulate else None
+    tolerance = loop.need.tolerance
+    below, above = float(tolerance.below), float(tolerance.above)
+    rise = _start_up(start, box, Band(below, above) if loop.raises else Band(above, below)) if simulate else None
     figures = list(start.figures)
     if deviation is not None and isfinite(deviation):
         figures.append(Figure("Δy", "deviation after the sudden load", "simulated", deviation, "change", OWN, {}, start.hardest.text))
@@ -84,10 +88,9 @@ def _with_actuator(start: Start, plant: Dynamics) -> Dynamics:
     return Dynamics(plant.slope, plant.tau, plant.theta + start.actuator, plant.lag, plant.sensor_lag)
 
 
-def _start_up(start: Start, box: Box, loop: Loop) -> tuple[float, float] | None:
+@remembered
+def _start_up(start: Start, box: Box, band: Band) -> tuple[float, float] | None:
     """Simulate from rest: the liveliest case for the overshoot, the weakest for the time."""
-    tolerance = loop.need.tolerance
-    band = Band(*((float(tolerance.below), float(tolerance.above)) if loop.raises else (float(tolerance.above), float(tolerance.below))))
     lively = start.hardest.point
     slow = 1.0 if box.whole_capacity.at(1.0) >= box.whole_capacity.at(0.0) else 0.0
     weak = box.duty_high[1]._replace(capacity=slow, dead_time=lively.dead_time)

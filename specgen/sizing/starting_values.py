@@ -11,6 +11,7 @@ from specgen.process.loop_map import stable_cycle, stated_margins
 from specgen.process.margins import Margins, margins
 from specgen.process.tuning import NothingLimitsTheGainError, Pulse, Settings, cycle_delay, simc
 from specgen.sizing.candidate import Assumption, Unsized
+from specgen.sizing.remembered import remembered
 
 SIMC = "Skogestad, J. Process Control 13 (2003) 291-309"
 ALWAYS = (0.1, 0.9)  # duties at which the latched loop must be stable, whatever is declared
@@ -44,6 +45,7 @@ class Start:
     assumptions: tuple[Assumption, ...]
 
 
+@remembered
 def hardest_case(box: Box, gain_factor: float = 1.0) -> Hardest:
     """Find the case that starting values are made for: highest slope, longest dead time and lags.
 
@@ -99,6 +101,11 @@ def start_of(
     Start or Unsized
         Unsized where nothing limits the gain.
     """
+    return _start_of(hardest, loop.choose, cycle_time, pulse, actuator, scan)
+
+
+@remembered
+def _start_of(hardest: Hardest, choose: Choose | None, cycle_time: float, pulse: Pulse, actuator: float, scan: float) -> Start | Unsized:
     plant = hardest.dynamics
     charged = cycle_delay(cycle_time, max(hardest.duty_high, 0.5), pulse, plant.theta, plant.lag) if cycle_time > 0 else 0.0
     lags = tuple(lag for lag in (plant.lag, plant.sensor_lag) if lag > 0)
@@ -108,8 +115,8 @@ def start_of(
         settings = simc(plant.slope, plant.tau, plant.theta, lags, extra, charged)
     except NothingLimitsTheGainError:
         return Unsized("nothing limits the gain: neither dead time nor lag nor a cycle", ("plant.dead_time",))
-    if loop.choose is not None:
-        settings = with_choice(settings, loop.choose)
+    if choose is not None:
+        settings = with_choice(settings, choose)
     cases = tuple(_delayed(case, extra) for case in (plant, *hardest.others))
     duties = tuple(sorted({hardest.duty_low, hardest.duty_high}))
     if cycle_time > 0:

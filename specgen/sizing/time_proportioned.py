@@ -14,6 +14,7 @@ from specgen.process.tuning import Pulse
 from specgen.sizing.candidate import Assumption, Candidate, Unsized
 from specgen.sizing.device import DeviceChoice
 from specgen.sizing.measurement import MeasuringError
+from specgen.sizing.remembered import remembered
 from specgen.sizing.rounding import SLACK, down_in_series, up_in_series
 from specgen.sizing.scan import scan_and_pulse
 from specgen.sizing.settings import Bound, ProportionedSettings
@@ -26,6 +27,8 @@ RESOLUTION = 0.01  # a duty below this is carried over and not asked of the devi
 HALF = 0.5
 MOST_SENSITIVITY = 2.0  # T2
 LEAST_GAIN_MARGIN = 2.0  # T2
+_longest_cycle = remembered(longest_cycle)
+_predict_ripple = remembered(predict_ripple)
 RIPPLE = "steady ripple of a pulse train in the worst case of the declared ranges; exact, tests/process"
 
 
@@ -183,7 +186,7 @@ def least_pulse(device: DeviceChoice | Unsized, loop: Loop, panel: Panel, scan: 
 def _first_bounds(job: _Job) -> tuple[Bound, ...]:
     """Return what bounds the cycle before any simulation: ripple (C1) and, without a sudden load, the delay it adds (C8)."""
     share, tolerance = float(job.panel.house.swing_share), job.loop.need.tolerance
-    ripple = longest_cycle(job.box, share * float(tolerance.above), share * float(tolerance.below))
+    ripple = _longest_cycle(job.box, share * float(tolerance.above), share * float(tolerance.below))
     bounds = [Bound("C1", ripple, "the ripple's share of the tolerance")]
     if job.change is None:
         bare = start_of(job.loop, job.hardest, scan=job.scan)
@@ -197,7 +200,7 @@ _Bounds = tuple[tuple[Bound, ...], tuple[Bound, ...]]
 
 
 def _result(job: _Job, cycle: float, start: Start, window: tuple[float, float], bounds: _Bounds, *, by_designer: bool) -> ProportionedSettings:
-    ripple = predict_ripple(job.box, cycle)
+    ripple = _predict_ripple(job.box, cycle)
     low, high = asked_duties(job.box)
     deviation = simulated_deviation(start, job.change) if job.change is not None else None
     tuning = tuning_of(start, job.box, job.loop, deviation)
