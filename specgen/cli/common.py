@@ -1,5 +1,6 @@
 """What several commands share: the folder argument, the reading of a design, problems on the terminal, the exit code."""
 
+import sys
 from pathlib import Path
 
 import click
@@ -18,7 +19,7 @@ def read(folder: Path) -> Design:
         raise click.ClickException(f"{folder} is no folder; name the one that holds mkdocs.yml and loops/")
     if not (folder / "loops").is_dir():
         raise click.ClickException(f"{folder} has no folder loops/; `specgen start {folder}` makes one to begin with")
-    with click.progressbar(length=1, label="deciding", file=click.get_text_stream("stderr"), hidden=not _on_terminal()) as bar:
+    with click.progressbar(length=1, label="deciding", file=sys.stderr, hidden=not _on_terminal()) as bar:
 
         def progress(done: int, of: int) -> None:
             bar.length = of
@@ -29,7 +30,7 @@ def read(folder: Path) -> Design:
 
 
 def _on_terminal() -> bool:
-    return click.get_text_stream("stderr").isatty()
+    return sys.stderr.isatty()
 
 
 def exit_code(design: Design) -> int:
