@@ -7,7 +7,7 @@ times are what counts.
 
 from collections.abc import Sequence
 from dataclasses import dataclass
-from math import exp, inf
+from math import exp, inf, log
 
 import numpy as np
 from scipy.optimize import brentq
@@ -19,6 +19,7 @@ SAME = 1e-9
 FIRM = 0.9
 SETTLING = 400
 LONGEST_PATTERN = 64
+STILL = 1e-15  # of the time sought: a step that moves less is rounding
 
 
 @dataclass(frozen=True, slots=True)
@@ -58,19 +59,25 @@ class _Track:
 
     def at(self, s: float, share: float | None) -> float:
         """Return the value a time ``s`` into a phase with full input."""
-        lags = zip(self.weights, self.constants, self.states, strict=True)
-        if share is None:
-            return sum(w * (1 - (1 - y) * exp(-s / t)) for w, t, y in lags)
-        return self.level + (1 - share) * s + sum(w * (1 - (1 - y) * exp(-s / t) - share) for w, t, y in lags)
+        return self.seen(s, share)[0]
 
     def slope(self, s: float, share: float | None) -> float:
         """Return the slope of the value a time ``s`` into a phase with full input."""
-        lags = zip(self.weights, self.constants, self.states, strict=True)
-        return (0.0 if share is None else 1 - share) + sum(w * (1 - y) / t * exp(-s / t) for w, t, y in lags)
+        return self.seen(s, share)[1]
+
+    def seen(self, s: float, share: float | None) -> tuple[float, float]:
+        """Return value and slope a time ``s`` into a phase with full input."""
+        value, slope = (0.0, 0.0) if share is None else (self.level + (1 - share) * s, 1 - share)
+        settled = 1.0 if share is None else 1 - share
+        for weight, constant, state in zip(self.weights, self.constants, self.states, strict=True):
+            left = weight * (1 - state) * exp(-s / constant)
+            value += weight * settled - left
+            slope += left / constant
+        return value, slope
 
     def after(self, length: float, share: float | None) -> "_Track":
         """Return the track at the end of a phase with full input, mirrored for the phase without."""
-        states = tuple((1 - y) * exp(-length / t) for t, y in zip(self.constants, self.states, strict=True))
+        states = tuple([(1 - y) * exp(-length / t) for t, y in zip(self.constants, self.states, strict=True)])
         level = 0.0 if share is None else -(self.level + (1 - share) * length)
         return _Track(self.weights, self.constants, states, level)
 
@@ -86,6 +93,9 @@ def _lowest(track: _Track, length: float, share: float | None) -> float:
         return track.at(0.0, share)
     if track.slope(length, share) <= 0:
         return track.at(length, share)
+    if share is None and len(track.constants) == 2:  # noqa: PLR2004  two falling exponentials meet once
+        (w1, w2), (t1, t2), (y1, y2) = track.weights, track.constants, track.states
+        return track.at(log(-(w2 * (1 - y2) * t1) / (w1 * (1 - y1) * t2)) / (1 / t2 - 1 / t1), share)
     return track.at(float(brentq(track.slope, 0.0, length, args=(share,), xtol=1e-13 * length)), share)
 
 
@@ -110,64 +120,121 @@ def follow(relay: Relay) -> tuple[Cycle, int]:
     """
     share = relay.duty
     turned = None if share is None else 1 - share
-    true, measured = (_track(m, integrates=share is not None) for m in (relay.true, relay.measured))
-    starts: list[tuple[float, ...]] = []
-    phases: list[tuple[float, float, float, float, float, float]] = []
     full = 0.0 if share is not None else 1.0
+    true, measured = (_track(m, integrates=share is not None) for m in (relay.true, relay.measured))
+    phases: list[_Phases] = []
+    on = off = 0.0
     for _ in range(SETTLING + LONGEST_PATTERN):
-        on = _length(relay, measured, relay.high, share, relay.min_run)
-        low, seen_low = _lowest(true, on, share), _lowest(measured, on, share)
+        rising, seen_rising = true, measured
+        on = _length(relay, measured, relay.high, share, relay.min_run, on)
         true, measured = true.after(on, share), measured.after(on, share)
-        off = _length(relay, measured, full - relay.low, turned, relay.min_rest)
-        top, seen_top = full - _lowest(true, off, turned), full - _lowest(measured, off, turned)
+        falling, seen_falling = true, measured
+        off = _length(relay, measured, full - relay.low, turned, relay.min_rest, off)
         true, measured = true.after(off, turned), measured.after(off, turned)
-        phases.append((on, off, top, low, seen_top, seen_low))
-        starts.append((on, off, top, low))
-        pattern = _repeats(starts)
+        phases.append(_Phases(on, off, share, (rising, seen_rising), (falling, seen_falling)))
+        pattern = _repeats(phases)
         if pattern:
-            return _summed(phases[-pattern:], share), pattern
-    return _summed(phases[-LONGEST_PATTERN:], share), 0
+            return _summed(phases[-pattern:]), pattern
+    return _summed(phases[-LONGEST_PATTERN:]), 0
 
 
-def _repeats(starts: list[tuple[float, ...]]) -> int:
+@dataclass(slots=True)
+class _Phases:
+    """One cycle: its times, and the true and the measured value as its two phases begin. Extremes are found when asked for."""
+
+    on: float
+    off: float
+    share: float | None
+    rising: tuple[_Track, _Track]
+    falling: tuple[_Track, _Track]
+    known: tuple[float, float] | None = None
+
+    @property
+    def extremes(self) -> tuple[float, float]:
+        """Return the highest and the lowest true value."""
+        if self.known is None:
+            self.known = self._extremes(0)
+        return self.known
+
+    @property
+    def measured_extremes(self) -> tuple[float, float]:
+        """Return the highest and the lowest measured value."""
+        return self._extremes(1)
+
+    def _extremes(self, which: int) -> tuple[float, float]:
+        turned, full = (None, 1.0) if self.share is None else (1 - self.share, 0.0)
+        return full - _lowest(self.falling[which], self.off, turned), _lowest(self.rising[which], self.on, self.share)
+
+
+def _repeats(phases: list[_Phases]) -> int:
     """Return after how many cycles the last ones repeat; 0 for not yet."""
-    last = starts[-1]
-    near = [SAME * (last[0] + last[1])] * 2 + [SAME * (last[2] - last[3])] * 2
-    for back in range(1, min(LONGEST_PATTERN, len(starts) // 2) + 1):
-        pairs = [(starts[-1 - i], starts[-1 - i - back]) for i in range(back)]
-        if all(abs(x - y) <= e for one, other in pairs for x, y, e in zip(one, other, near, strict=True)):
+    if len(phases) < 2:  # noqa: PLR2004  one cycle repeats nothing
+        return 0
+    last, before = phases[-1], phases[-2]
+    near = SAME * (last.on + last.off)
+    creeping = abs(last.on - before.on) <= near * 1e3 and abs(last.off - before.off) <= near * 1e3
+    for back in range(1, min(LONGEST_PATTERN, len(phases) // 2) + 1):
+        pairs = [(phases[-1 - i], phases[-1 - i - back]) for i in range(back)]
+        if all(abs(x.on - y.on) <= near and abs(x.off - y.off) <= near for x, y in pairs) and _same_extremes(pairs):
             return back
-        if abs(last[0] - starts[-2][0]) <= near[0] * 1e3 and abs(last[1] - starts[-2][1]) <= near[1] * 1e3:
+        if creeping:
             return 0  # still creeping towards one cycle
     return 0
 
 
-def _summed(phases: list[tuple[float, float, float, float, float, float]], share: float | None) -> Cycle:
+def _same_extremes(pairs: list[tuple[_Phases, _Phases]]) -> bool:
+    high, low = pairs[0][0].extremes
+    near = SAME * (high - low)
+    return all(
+        abs(x.extremes[0] - y.extremes[0]) <= near and abs(x.extremes[1] - y.extremes[1]) <= near for x, y in pairs
+    )
+
+
+def _summed(phases: list[_Phases]) -> Cycle:
     """Make one cycle of several: extremes over all, mean times."""
     count = len(phases)
-    on, off = sum(p[0] for p in phases) / count, sum(p[1] for p in phases) / count
-    peak, trough = max(p[2] for p in phases), min(p[3] for p in phases)
-    mean = on / (on + off) if share is None else (peak + trough) / 2
-    return Cycle(peak, trough, on, off, mean, max(p[4] for p in phases), min(p[5] for p in phases))
+    on, off = sum(p.on for p in phases) / count, sum(p.off for p in phases) / count
+    peak, trough = max(p.extremes[0] for p in phases), min(p.extremes[1] for p in phases)
+    seen = [p.measured_extremes for p in phases]
+    mean = on / (on + off) if phases[0].share is None else (peak + trough) / 2
+    return Cycle(peak, trough, on, off, mean, max(top for top, _ in seen), min(low for _, low in seen))
 
 
-def _length(relay: Relay, measured: _Track, target: float, share: float | None, least: float) -> float:
-    """Return how long the output stays as it is [s]; the phase counts from when the plant's input changed."""
+def _length(relay: Relay, measured: _Track, target: float, share: float | None, least: float, before: float) -> float:
+    """Return how long the output stays as it is [s]; the phase counts from when the plant's input changed.
 
-    def left(s: float) -> float:
-        return measured.at(s, share) - target
+    ``before`` is the length of the same phase one cycle earlier, near which the crossing is looked for.
+    """
+    if measured.at(0.0, share) >= target:
+        return max(relay.theta, least)
+    if least > relay.theta and measured.at(least - relay.theta, share) >= target:
+        return least
+    return max(relay.theta + _crossing(relay, measured, target, share, before - relay.theta), least)
 
-    reach = 0.0
-    if left(0.0) < 0:
-        reach = max(relay.theta, least, *measured.constants, 1e-6)
-        for _ in range(200):
-            if left(reach) >= 0:
-                break
-            reach *= 2
+
+def _crossing(relay: Relay, measured: _Track, target: float, share: float | None, near: float) -> float:
+    """Return when the measured value passes the target, once it has turned [s]: Newton's steps inside a bracket."""
+    low, high = 0.0, max(relay.theta, relay.min_run, relay.min_rest, near, *measured.constants, 1e-6)
+    for _ in range(200):
+        if measured.at(high, share) >= target:
+            break
+        low, high = high, high * 2
+    else:
+        raise NoCycle(measured.at(high, share), -inf, target, -inf)
+    at = near if low < near < high else (low + high) / 2
+    for _ in range(200):
+        value, slope = measured.seen(at, share)
+        if value >= target:
+            high = at
         else:
-            raise NoCycle(measured.at(reach, share), -inf, target, -inf)
-        reach = float(brentq(left, 0.0, reach, xtol=1e-14 * reach, rtol=1e-13))
-    return max(relay.theta + reach, least)
+            low = at
+        following = at - (value - target) / slope if slope > 0 else inf
+        if not low < following < high:
+            following = (low + high) / 2
+        if abs(following - at) <= STILL * following:
+            return following
+        at = following
+    return at
 
 
 def attracts(relay: Relay, a: float, b: float, *, run_fixed: bool, rest_fixed: bool) -> bool:
@@ -194,9 +261,6 @@ def attracts(relay: Relay, a: float, b: float, *, run_fixed: bool, rest_fixed: b
     back = _through(relay, a, b, None if share is None else 1 - share, fixed=rest_fixed)
     multipliers = np.abs(np.linalg.eigvals(back @ through))
     return bool(multipliers.max() < FIRM)
-
-
-Matrix = np.ndarray[tuple[int, int], np.dtype[np.float64]]
 
 
 Matrix = np.ndarray[tuple[int, int], np.dtype[np.float64]]
