@@ -18,6 +18,7 @@ from specgen.catalogue.rows import (
     TypicalOutput,
 )
 from specgen.catalogue.table import CatalogueError, Row, catalogue_digest, table, table_names
+from specgen.catalogue.wiring import Wiring, read_wiring
 from specgen.core.diagnostic import Diagnostic
 from specgen.model.devices import Contactor, Devices, PowerController, Relay, SolidState
 from specgen.model.fields import Model
@@ -58,6 +59,7 @@ class Catalogue:
     motors: tuple[Known[MotorProduct], ...]
     converters: tuple[Known[Converter], ...]
     practices: tuple[Known[Practice], ...]
+    wiring: Wiring
     rows: tuple[Row, ...]
     shop: frozenset[str] = frozenset()
 
@@ -197,6 +199,7 @@ def _packaged() -> Catalogue:
         motors=_known("motors", MotorProduct),
         converters=_known("converters", Converter),
         practices=_known("practice", Practice),
+        wiring=read_wiring(),
         rows=tuple(row for name in table_names() for row in table(name)),
     )
 

@@ -67,6 +67,7 @@ class Supply(Model):
     network: Literal["private", "public"] = "private"
     impedance: Resistance | None = None
     prospective_fault_current: Current | None = None
+    incomer: Current | None = None
     isolator: Flag = True
 
     @model_validator(mode="after")
@@ -154,6 +155,7 @@ class House(Model):
     setting_step: SettingStep = SettingStep()
     cycle_time_series: tuple[Number, ...] = tuple(Quantity(s, str(s)) for s in _SERIES)
     spare_outputs: Annotated[Quantity, Written("fraction", sign="not_negative")] = _quantity("20 percent", 0.2)
+    voltage_drop: Share = _quantity("5 percent", 0.05)
 
     @property
     def contact_life_years(self) -> float:
@@ -178,6 +180,7 @@ class Panel(Model):
     enclosure: Enclosure
     duty: Duty = Duty(hours_per_day=_quantity("16 h", 57600.0), days_per_year=250)
     confirmed: tuple[Confirmed, ...] = ()
+    short_circuit_rating: Current | None = None
     code_basis: Literal["iec", "north_america"] = "iec"
     show: Literal["si", "us"] = "si"
     house: House = House()
