@@ -46,7 +46,7 @@ EXPECTED = {
     "TIC-402": ("on_off", "relay", "meets"),  # relaxed, and on-off fits [M6]; 9.6 A is within a 16 A relay
     "TIC-403": ("analogue", "signal", "meets"),  # compressor on a drive [M2]
     "TIC-501": ("on_off", "contactor", "meets"),  # two-stage burner [M7, M11]
-    "PIC-502": ("on_off", "contactor", "meets"),  # burner [M7]
+    "PIC-502": ("on_off", "relay", "meets"),  # burner [M7]; its control circuit of 2 A is within a 16 A relay
     "PIC-503": ("on_off", "contactor", "meets"),  # compressor [M1]
     "LIC-504": ("on_off", "relay", "meets"),  # as TIC-302
     "TIC-601": ("analogue", "power_controller", "meets"),  # silicon carbide [M8]
