@@ -57,7 +57,8 @@ class Box:
     ``sign`` is +1 where more output raises the value, -1 where it lowers it. ``setpoint`` runs from the setpoint that needs least
     output to the one that needs most; ``ambient`` is where the surroundings (or the rest value) hold the value, absent for rates.
     ``boost`` multiplies the sum of the strength and the load for rates on a resistive element, whose speed without output does not
-    follow the supply. ``whole_capacity`` counts every body, ``capacity`` only those that follow fast. ``free`` names the axes that vary.
+    follow the supply. ``whole_capacity`` counts every body, ``capacity`` only those that follow fast. ``free`` names the axes that vary
+    in cycling.
     """
 
     sign: int
@@ -82,7 +83,7 @@ class Box:
             "strength": self.strength.varies or (self.boost is not None and self.boost.varies),
             "load": held or self.heat.varies,
             "loss": self.loss.varies,
-            "capacity": self.capacity.varies or self.whole_capacity.varies,
+            "capacity": self.capacity.varies,
             "dead_time": self.dead_time.varies,
             "lag": self.lag.varies,
             "sensor_lag": self.sensor_lag.varies,
@@ -131,7 +132,7 @@ class Box:
 
     def ends(self, *names: str) -> list[Point]:
         """Return every corner of the named axes that vary, the rest at their first end."""
-        moving = [name for name in names if name in self.free]
+        moving = [name for name in names if name in self.free or (name == "capacity" and self.whole_capacity.varies)]
         return [Point(**dict(zip(moving, ends, strict=True))) for ends in product((0.0, 1.0), repeat=len(moving))]
 
     @property

@@ -1,9 +1,10 @@
 """Between which differentials on-off may be set: what the machine and the contacts need, what the product allows.
 
 Every constraint's figure moves one way with the differential. Its root is sought with the worst case held, then the worst case is sought
-again at the root, until it keeps the limit.
+again at the root, until it keeps the limit: first among the cases on the box's edges alone, at last with the whole search.
 """
 
+from dataclasses import replace
 from math import inf
 
 from scipy.optimize import brentq
@@ -47,7 +48,7 @@ def least_differential(
     dict of str to float
         Keys ``starts``, ``life``, ``run`` and ``rest``, one for each constraint given; infinite where no differential keeps it.
     """
-    enforced = Setting(box, placement, min_run, min_rest)
+    enforced = Setting(box, placement, min_run, min_rest, "edges")
     free = Setting(box, placement, 0.0, 0.0)
     least = 1e-6 * _scale(box)
     made: dict[str, float] = {}
@@ -67,14 +68,17 @@ def _least(setting: Setting, figure: CycleFigure, limit: float, start: float) ->
 
     The root is sought with the worst case held, then the worst case is sought again, until it keeps the limit.
     """
-    differential = start
+    differential, looking = start, replace(setting, look="quick")
     for _ in range(TURNS):
         try:
-            now = setting.worst(figure, differential, setting.cycles(differential))
+            now = looking.worst(figure, differential, setting.cycles(differential))
         except NoCycle:
             return inf
         if now.value >= limit * (1 - HELD):
-            return differential
+            if looking is setting:
+                return differential
+            looking = setting
+            continue
 
         def short(d: float, plant: ProcessModel = now.plant) -> float:
             try:
@@ -117,7 +121,7 @@ def widest_differential(
     """
     if allowed_above <= 0 or allowed_below <= 0:
         return 0.0
-    setting = Setting(box, placement, min_run, min_rest)
+    setting = Setting(box, placement, min_run, min_rest, "edges")
     widest = inf
     # with the points on one side of the setpoint a differential beyond what that side allows can never do
     differential = allowed_above + allowed_below if placement == "centred" else _one_side(placement, allowed_above, allowed_below)
@@ -134,9 +138,10 @@ def _one_side(placement: Placement, allowed_above: float, allowed_below: float) 
 def _most(setting: Setting, side: CycleFigure, allowed: float, span: tuple[float, float]) -> float:
     """Return the largest differential within ``span`` at which an excursion that grows with it keeps to ``allowed``."""
     least, differential = span
+    looking = replace(setting, look="quick")
     for _ in range(TURNS):
         try:
-            now = setting.worst(side, differential, setting.cycles(differential))
+            now = looking.worst(side, differential, setting.cycles(differential))
         except NoCycle:
             # too wide for any case to pass both points
             differential = _widest_that_switches(setting, least, differential)
@@ -144,7 +149,10 @@ def _most(setting: Setting, side: CycleFigure, allowed: float, span: tuple[float
                 return 0.0
             continue
         if now.value <= allowed * (1 + HELD):
-            return differential
+            if looking is setting:
+                return differential
+            looking = setting
+            continue
 
         def over(d: float, plant: ProcessModel = now.plant) -> float:
             return side.read(setting.at(plant, d)) - allowed

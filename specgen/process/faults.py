@@ -4,7 +4,6 @@ Pure functions of one plant. All values of one call are in one sense: the value 
 by the caller. The worst cases over a loop's box are in ``fault_cases``.
 """
 
-from collections.abc import Sequence
 from math import exp, inf, log
 
 from scipy.optimize import brentq
@@ -136,14 +135,14 @@ def coasts_to(start: float, end: float, rest: float, tau: float, theta: float, l
     return value(float(brentq(above_drive, 0.0, reach, xtol=1e-12 * reach)))
 
 
-def warm_up_time(start: float, target: float, end: float, rest: float, constants: Sequence[float], theta: float) -> float:
+def warm_up_time(start: float, target: float, end: float, rest: float, constants: tuple[float, ...], theta: float) -> float:
     """Return the time from switching on at ``start`` until the value first reaches ``target`` with full output [s].
 
     Parameters
     ----------
     start, target, end, rest : float
         The cold value, the near edge of the band, and where full and no output settle.
-    constants : sequence of float
+    constants : tuple of float
         Time constant and, where there is one, the second lag, empty at the start [s].
     theta : float
         Dead time [s]; in it the value moves as without output.

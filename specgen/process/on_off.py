@@ -5,15 +5,17 @@ from dataclasses import dataclass
 from typing import Literal
 
 from specgen.process.box import Box, Point
-from specgen.process.limit_cycle import SECONDS_AN_HOUR, Cycle
+from specgen.process.limit_cycle import SECONDS_AN_HOUR, Cycle, NoCycle
 from specgen.process.plant import ProcessModel
 from specgen.process.worst_case import Sense, Worst, candidates, worst
 
+Look = Literal["quick", "edges", "thorough"]
 Placement = Literal["centred", "below", "above"]
 CycleOf = Callable[[ProcessModel], Cycle]
 
 # less heat capacity always swings wider and switches faster; dead time and lags widen the swing and slow the switching
 WIDEST = Point(capacity=0.0, dead_time=1.0, lag=1.0, sensor_lag=1.0)
+SCATTERED = 48  # cases spread through the box where figures may jump
 FASTEST = Point(capacity=0.0, dead_time=0.0, lag=0.0, sensor_lag=0.0)
 
 
@@ -87,12 +89,17 @@ OFF = CycleFigure(lambda cycle: cycle.t_off, "smallest", FASTEST)
 
 @dataclass(frozen=True, slots=True)
 class Setting:
-    """A box at one setting of the two-position controller."""
+    """A box at one setting of the two-position controller.
+
+    A ``quick`` look takes the worst of the cases on the box's edges; ``edges`` searches on from them and, where least times may bend a
+    figure, from where they begin to act; ``thorough`` then starts inside the box as well.
+    """
 
     box: Box
     placement: Placement
     min_run: float
     min_rest: float
+    look: Look = "thorough"
 
     def at(self, plant: ProcessModel, differential: float, *, timers: bool = True) -> Cycle:
         """Return the cycle of one plant."""
@@ -108,7 +115,45 @@ class Setting:
         def figure(plant: ProcessModel) -> float:
             return of.read(cycle(plant))
 
-        return worst(self.box, figure, of.sense, high=high, low=low, pinned=of.pinned, among=among)
+        scattered = SCATTERED if self.may_jump and self.look == "thorough" else 0
+        if among is None:
+            among = self.candidates(differential, (of.pinned,))
+        search = self.look != "quick"
+        return worst(
+            self.box, figure, of.sense, high=high, low=low, pinned=of.pinned, among=among, scattered=scattered, search=search
+        )
+
+    @property
+    def may_jump(self) -> bool:
+        """Tell whether least times may act: where they begin to, figures bend, and with lags long and short cycles can alternate."""
+        return self.look != "quick" and max(self.min_run, self.min_rest) > 0
+
+    def candidates(self, differential: float, pins: tuple[Point, ...] = (FASTEST, WIDEST)) -> tuple[Point, ...]:
+        """Return the cases to look at: with least times, also where the natural times just equal them."""
+        high, low = switch_points(differential, self.placement, self.box.sign)
+        bends = []
+        for pinned in pins if self.may_jump else ():
+            if self.min_run > 0:
+                bends.append(self._bend(differential, pinned, lambda c: c.t_on, self.min_run))
+            if self.min_rest > 0:
+                bends.append(self._bend(differential, pinned, lambda c: c.t_off, self.min_rest))
+        duties = [0.5]
+        if self.may_jump and min(self.min_run, self.min_rest) > 0:
+            # both least times together hold this duty; which of them gives way changes here
+            both = self.min_run / (self.min_run + self.min_rest)
+            duties += [both * (1 - 1e-6), both * (1 + 1e-6)]
+        return tuple(candidates(self.box, high, low, duties, bends))
+
+    def _bend(self, differential: float, pinned: Point, time: Callable[[Cycle], float], least: float) -> Callable[[Point], float]:
+        def bend(point: Point) -> float:
+            at = pinned._replace(strength=point.strength, load=point.load, loss=point.loss)
+            try:
+                # the ratio, because a time grows without limit towards the edge of what can switch
+                return 1 - least / time(self.at(self.box.plant_at(at), differential, timers=False))
+            except NoCycle:
+                return 1.0
+
+        return bend
 
     def cycles(self, differential: float, *, timers: bool = True) -> CycleOf:
         """Return a plant's cycle at a differential, each plant's computed once."""
@@ -166,7 +211,7 @@ def predict_on_off(
     enforced = setting.cycles(differential)
     natural = enforced if min_run <= 0 and min_rest <= 0 else setting.cycles(differential, timers=False)
     high, low = switch_points(differential, placement, box.sign)
-    among = tuple(candidates(box, high, low))
+    among = setting.candidates(differential)
     return OnOffPrediction(
         differential=differential,
         placement=placement,

@@ -6,6 +6,7 @@ of height 1, on for ``a`` and off for ``b``, with a settled response that has a 
 """
 
 from collections.abc import Sequence
+from functools import lru_cache
 from math import exp, expm1, log
 
 from scipy.optimize import brentq
@@ -20,12 +21,13 @@ APART_THREE = 3e-4
 NEGLIGIBLE = 1e-9
 
 
-def modes_of(constants: Sequence[float]) -> tuple[Mode, ...]:
+@lru_cache(maxsize=4096)
+def modes_of(constants: tuple[float, ...]) -> tuple[Mode, ...]:
     """Split a chain of lags into first-order parts.
 
     Parameters
     ----------
-    constants : sequence of float
+    constants : tuple of float
         Time constants of the chain [s]; those that are zero or below a thousand-millionth of the largest are left out.
 
     Returns
@@ -39,7 +41,7 @@ def modes_of(constants: Sequence[float]) -> tuple[Mode, ...]:
 
     Examples
     --------
-    >>> modes_of([60, 0, 20])
+    >>> modes_of((60, 0, 20))
     ((1.5, 60.0), (-0.5, 20.0))
     """
     largest = max(constants)

@@ -1,10 +1,20 @@
-"""A relay loop followed in time with scipy, from the differential equations alone: the outside reference of the cycles."""
+"""A relay loop followed in time with scipy, from the differential equations alone (the outside reference), and loops to make boxes of."""
 
+import json
 from typing import NamedTuple
 
 import numpy as np
 import pytest
 from scipy.integrate import solve_ivp
+
+from specgen.core.quantity import Unit
+from specgen.core.say import Phrasing
+from specgen.model.loops import read_loops
+from specgen.model.panel import Panel
+from specgen.model.reader import read_model
+from specgen.process.axis import Axis, Declared
+from specgen.process.box import Box
+from specgen.source.read import read_text
 
 
 class Observed(NamedTuple):
@@ -117,3 +127,94 @@ def follow_relay(  # noqa: C901, PLR0912, PLR0915 - one event loop, kept whole s
 def relay_reference():
     """Give the followed loop to a test."""
     return follow_relay
+
+
+PANEL = {
+    "panel": {"reference": "PNL-1", "title": "Boxes", "revision": "A", "status": "for review", "date": "2026-01-01"},
+    "supply": {"voltage": "400 V", "phases": "3", "frequency": "50 Hz"},
+    "enclosure": {"height": "1800 mm", "width": "800 mm", "depth": "400 mm", "ambient": "5 degC to 35 degC"},
+}
+HEATER = {"kind": "resistive_heater", "power": "9 kW", "voltage": "400 V", "phases": "3"}
+WARM = {
+    "tag": "TIC-1",
+    "service": "cabinet",
+    "need": {"quantity": "temperature", "direction": "raise", "setpoint": "65 degC", "range": "40 degC to 80 degC", "tolerance": "1.5 K"},
+    "sensor": {"kind": "pt100"},
+    "element": HEATER,
+}
+COLD = {
+    "tag": "TIC-2",
+    "service": "store",
+    "need": {"quantity": "temperature", "direction": "lower", "setpoint": "4 degC", "tolerance": "1 K"},
+    "sensor": {"kind": "pt100"},
+    "element": {
+        "kind": "fixed_speed_compressor",
+        "current": "8.4 A",
+        "voltage": "400 V",
+        "phases": "3",
+        "min_run": "180 s",
+        "min_rest": "120 s",
+        "starts_per_hour": "10",
+        "capacity": "7 kW",
+    },
+}
+
+
+def read_loop(base, **changes):
+    """Return a loop read by the real models, with sections replaced."""
+    documents, problems = read_text(json.dumps({**base, **changes}), "loops/made.yml")
+    assert not problems
+    reading = read_loops(documents)
+    assert not reading.problems, reading.problems
+    return reading.loops[0].loop
+
+
+def read_panel(**supply):
+    """Return a panel with fields of its supply replaced."""
+    panel, problems = read_model(Panel, {**PANEL, "supply": {**PANEL["supply"], **supply}})
+    assert not problems, problems
+    return panel
+
+
+def made_axis(name, low, high, *more):
+    """Return an axis of one declared field, times fields that are already declared."""
+    return Axis(((Declared(name, name, float(low), float(high), "number"), *more),))
+
+
+def made_box(
+    *, strength, ambient, setpoint, load, loss, capacity, dead_time, lag=(0, 0), sensor_lag=(0, 0), supply=(1, 1), sign=1, rates=False
+):
+    """Return a box straight from pairs of numbers, each ordered as its axis asks."""
+    voltage = Declared("supply", "supply", float(supply[0]), float(supply[1]), "supply")
+    return Box(
+        sign=sign,
+        setpoint=Declared("setpoint", "setpoint", float(setpoint[0]), float(setpoint[1]), "value"),
+        strength=made_axis("strength", *strength) if rates else made_axis("strength", *strength, voltage, voltage),
+        ambient=None if ambient is None else Declared("ambient", "surroundings", float(ambient[0]), float(ambient[1]), "temperature"),
+        heat=made_axis("load", *load),
+        loss=made_axis("loss", *loss),
+        capacity=made_axis("capacity", *capacity),
+        whole_capacity=made_axis("capacity", *capacity),
+        dead_time=made_axis("dead_time", *dead_time),
+        lag=made_axis("lag", *lag),
+        sensor_lag=made_axis("sensor_lag", *sensor_lag),
+        phrasing=Phrasing(Unit("degC"), Unit("K")),
+        form="rates" if rates else "balance",
+        boost=Axis(((voltage, voltage),)) if rates else None,
+    )
+
+
+class Makers(NamedTuple):
+    """What makes loops, panels and boxes."""
+
+    loop: object
+    panel: object
+    box: object
+    warm: dict
+    cold: dict
+
+
+@pytest.fixture(scope="session")
+def make():
+    """Give the makers to a test."""
+    return Makers(read_loop, read_panel, made_box, WARM, COLD)
