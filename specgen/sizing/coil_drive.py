@@ -10,16 +10,17 @@ from specgen.sizing.candidate import Assumption, Unsized
 from specgen.sizing.chain import contact, relay_rating, typical
 from specgen.sizing.connection import CLOSE, control_connection
 from specgen.sizing.controller import OutputSide, controller_side
-from specgen.sizing.device import Contact
+from specgen.sizing.device import Contact, Drawn, Drive
 
 
 @dataclass(frozen=True, slots=True)
 class CoilCurrent:
-    """Holding and inrush current of a coil at the control supply [A]."""
+    """Holding and inrush current of a coil at the control supply [A], and its power there [W]."""
 
     hold: float
     inrush: float
     figures: tuple[Figure, ...]
+    power: float = 0.0
 
 
 def coil_current(coil: Coil, name: str, panel: Panel, *, any_voltage: bool) -> CoilCurrent | Unsized:
@@ -57,7 +58,7 @@ def coil_current(coil: Coil, name: str, panel: Panel, *, any_voltage: bool) -> C
     if coil.inrush is not None:
         given_inrush = given | {"P": (power, "power")}
         figures.append(Figure("I_in", f"inrush current of the coil of {name}", formula, inrush, "current", "Ohm's law", given_inrush, case))
-    return CoilCurrent(hold, inrush, tuple(figures))
+    return CoilCurrent(hold, inrush, tuple(figures), hold * fed.high)
 
 
 def _said(kind: str) -> str:
@@ -66,11 +67,18 @@ def _said(kind: str) -> str:
 
 @dataclass(frozen=True, slots=True)
 class CoilDrive:
-    """The contacts between the controller and a coil, the first being the controller's own relay."""
+    """The contacts between the controller and a coil, the first being the controller's own relay.
+
+    ``drawn`` is what the coils take from the control supply, ``power`` [W] what becomes heat in them, ``drives`` what the
+    controller's own relay is asked for.
+    """
 
     contacts: tuple[Contact, ...]
     figures: tuple[Figure, ...]
     assumptions: tuple[Assumption, ...]
+    drawn: tuple[Drawn, ...] = ()
+    power: float = 0.0
+    drives: tuple[Drive, ...] = ()
 
     @property
     def shortest_life(self) -> float:
@@ -133,7 +141,11 @@ def _carry(side: OutputSide, coil: CoilCurrent, name: str, panel: Panel, catalog
     )  # fmt: skip
     if isinstance(made, Unsized):
         return made
-    return CoilDrive((made,), (*coil.figures, rating), side.assumptions)
+    drawn = Drawn(f"the coil of {name}", coil.hold, coil.inrush)
+    drives = [Drive(f"the holding current of the coil of {name}, in {category}", coil.hold, rating.value)]
+    if coil.inrush > coil.hold:
+        drives.append(Drive(f"the inrush current of the coil of {name}", coil.inrush, resistive))
+    return CoilDrive((made,), (*coil.figures, rating), side.assumptions, (drawn,), coil.power, tuple(drives))
 
 
 def _through(relay: Relay, side: OutputSide, coil: CoilCurrent, name: str, panel: Panel, catalogue: Catalogue) -> CoilDrive | Unsized:
@@ -159,4 +171,6 @@ def _through(relay: Relay, side: OutputSide, coil: CoilCurrent, name: str, panel
     if isinstance(second, Unsized):
         return second
     assumed = (*first.assumptions, *typical(catalogue, "relays", relay.name))
-    return CoilDrive((*first.contacts, second), (*coil.figures, *first.figures, rating), assumed)
+    drawn = (Drawn(f"the coil of {name}", coil.hold, coil.inrush), *first.drawn)
+    figures = (*coil.figures, *first.figures, rating)
+    return CoilDrive((*first.contacts, second), figures, assumed, drawn, coil.power + first.power, first.drives)

@@ -12,6 +12,8 @@ from specgen.sizing.chain import contact, element_contact, typical
 from specgen.sizing.coil_drive import coil_current, coil_drives
 from specgen.sizing.current import LoadCurrent, load_current
 from specgen.sizing.device import DeviceChoice
+from specgen.sizing.drawn import load_drawn, loss_figure
+from specgen.sizing.suppression import suppressors
 
 _MOTOR_LIKE = ("AC-3", "AC-15")
 _MAKE = 10.0  # times its AC-3 current a contactor makes (IEC 60947-4-1 table 7, seen in a secondary text)
@@ -93,6 +95,7 @@ def _with(
         return made
     parts, more, missing = element_contact(loop.element, load.current, catalogue)
     assumed = (*load.assumptions, *typical(catalogue, "contactors", device.name), *_stands_for(load))
+    fed = load_drawn(load, panel)
     return tuple(
         DeviceChoice(
             name=device.name,
@@ -102,11 +105,16 @@ def _with(
             poles=load.connection.lines,
             rating=rating.value,
             current=load.current,
-            figures=(*load.figures, rating, *drive.figures),
+            figures=(*load.figures, rating, *drive.figures, lost),
             assumptions=(*assumed, *drive.assumptions, *more),
             open_points=missing,
+            loss=lost.value,
+            lines=load.connection.lines,
+            drawn=(*drive.drawn, *fed),
+            drives=drive.drives,
+            suppressors=suppressors(drive.drawn, load, panel),
         )
-        for drive in drives
+        for drive, lost in ((drive, loss_figure(device, load, drive.power)) for drive in drives)
     )
 
 

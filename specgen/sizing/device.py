@@ -27,10 +27,50 @@ class Contact:
 
 
 @dataclass(frozen=True, slots=True)
+class Drawn:
+    """What one part takes from the control supply.
+
+    ``hold`` and ``inrush`` in A; ``inside`` tells whether its heat stays in the panel.
+    """
+
+    what: str
+    hold: float
+    inrush: float
+    inside: bool = True
+
+
+@dataclass(frozen=True, slots=True)
+class Drive:
+    """What a controller's output is asked for and what it can give, both in ``dimension``'s base unit."""
+
+    what: str
+    asked: float
+    able: float
+    dimension: Literal["current", "resistance"] = "current"
+
+
+@dataclass(frozen=True, slots=True)
+class Suppressor:
+    """What is fitted across a coil, and why; ``leakage`` [A] flows through it while the contact is closed."""
+
+    across: str
+    kind: str
+    because: str
+    leakage: float = 0.0
+
+
+@dataclass(frozen=True, slots=True)
 class DeviceChoice:
     """The device that switches or throttles the element, rated for its current.
 
     ``rating`` and ``current`` in A, absent for a plain signal; ``category`` is the utilisation category the rating is for.
+    ``loss`` [W] is the heat it leaves in the panel at full output, its coil included, None where nothing is known of it (a
+    signal, a controller's own relay). ``drawn`` is what its coils or input, and a load on the control supply, take from that.
+    ``lines`` is how many live conductors feed the load. Of a solid-state switch: ``heat_sink`` [K/W] is the highest thermal
+    resistance its heat sink may have, None where none would do; ``cooling`` how that is reached; ``leakage`` [A]; ``i2t``
+    [A2 s] is what it survives, also of a power controller where its data give it.
+    ``drives`` is what the controller's output is asked for, ``undriven`` why that is not known; ``suppressors`` are fitted
+    across coils. ``isolator`` names the contactor that opens every line where the device leaves one live.
     ``because`` says why it is not the smallest that carries the load; empty where it is.
     """
 
@@ -45,3 +85,14 @@ class DeviceChoice:
     assumptions: tuple[Assumption, ...] = ()
     open_points: tuple[Unsized, ...] = ()
     because: str = ""
+    loss: float | None = None
+    heat_sink: float | None = None
+    cooling: Literal["", "natural", "forced", "none"] = ""
+    leakage: float | None = None
+    i2t: float | None = None
+    lines: int = 0
+    drives: tuple[Drive, ...] = ()
+    undriven: Unsized | None = None
+    suppressors: tuple[Suppressor, ...] = ()
+    isolator: str = ""
+    drawn: tuple[Drawn, ...] = ()

@@ -14,7 +14,9 @@ from specgen.sizing.chain import contact, element_contact, relay_rating, typical
 from specgen.sizing.coil_drive import coil_current, coil_drives
 from specgen.sizing.controller import OutputSide, controller_side
 from specgen.sizing.current import LoadCurrent, load_current
-from specgen.sizing.device import Contact, DeviceChoice
+from specgen.sizing.device import Contact, DeviceChoice, Drawn, Drive
+from specgen.sizing.drawn import load_drawn, loss_figure
+from specgen.sizing.suppression import suppressors
 
 
 @dataclass(frozen=True, slots=True)
@@ -25,6 +27,9 @@ class _Option:
     chain: tuple[Contact, ...]
     figures: tuple[Figure, ...]
     assumptions: tuple[Assumption, ...]
+    loss: float | None = None
+    drawn: tuple[Drawn, ...] = ()
+    drives: tuple[Drive, ...] = ()
 
 
 def relay_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue) -> tuple[DeviceChoice, ...] | Unsized:
@@ -68,6 +73,7 @@ def _choices(loop: Loop, load: LoadCurrent, panel: Panel, catalogue: Catalogue, 
     found: list[DeviceChoice] = []
     refused: list[Unsized] = []
     parts, more, missing = element_contact(loop.element, load.current, catalogue)
+    fed = load_drawn(load, panel)
     for option in (_own(side, load, catalogue), *_plugged(load, panel, catalogue)):
         if isinstance(option, Unsized):
             refused.append(option)
@@ -84,6 +90,12 @@ def _choices(loop: Loop, load: LoadCurrent, panel: Panel, catalogue: Catalogue, 
                 figures=(*load.figures, option.rating, *option.figures),
                 assumptions=(*load.assumptions, *option.assumptions, *more),
                 open_points=missing,
+                # both of a pair are bought, one is on at a time
+                loss=option.loss,
+                lines=load.connection.lines,
+                drawn=(*option.drawn, *fed),
+                drives=option.drives,
+                suppressors=suppressors(option.drawn, load, panel),
             )
         )
     if not found:
@@ -131,7 +143,9 @@ def _one(relay: Relay, load: LoadCurrent, panel: Panel, catalogue: Catalogue) ->
     if isinstance(made, Unsized):
         return made
     assumed = (*typical(catalogue, "relays", relay.name), *drive.assumptions)
-    return _Option(relay.name, relay.poles, rating, (*drive.contacts, made), drive.figures, assumed)
+    lost = loss_figure(relay, load, drive.power)
+    chain, figures = (*drive.contacts, made), (*drive.figures, lost)
+    return _Option(relay.name, relay.poles, rating, chain, figures, assumed, lost.value, drive.drawn, drive.drives)
 
 
 def _covering(name: str, resistive: float, poles: int, load: LoadCurrent, catalogue: Catalogue) -> Figure | Unsized:

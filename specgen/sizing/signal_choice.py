@@ -6,6 +6,7 @@ from specgen.model.element import GasBurner, ModulatingValve, VariableSpeedMachi
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel
 from specgen.model.traits import Traits
+from specgen.sizing.burden import analogue_drive
 from specgen.sizing.candidate import Unsized, Unsuited
 from specgen.sizing.controller import controller_side
 from specgen.sizing.device import DeviceChoice
@@ -26,7 +27,7 @@ def signal_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogu
 
     Notes
     -----
-    The burden is shown, not judged: whether the output drives it is asked by a rule.
+    The burden is shown, not judged: whether the output drives it is asked by a rule (O6).
     """
     element = loop.element
     if not traits.analogue_input or not isinstance(element, (ModulatingValve, VariableSpeedMachine, GasBurner)):
@@ -37,15 +38,14 @@ def signal_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogu
     if isinstance(side, Unsized):
         return side
     figures: tuple[Figure, ...] = ()
-    open_points: tuple[Unsized, ...] = ()
-    if element.burden is None:
-        open_points = (Unsized("the resistance of the element's input is not declared", ("element.burden",)),)
-    elif side.burden is not None and element.signal.endswith("mA"):
+    if element.burden is not None and side.burden is not None and element.signal.endswith("mA"):
         total = float(element.burden) * element.count
         given = {"n": (float(element.count), "number"), "R_in": (float(element.burden), "resistance"), "R_out": (side.burden, "resistance")}
         source = "the devices' data; the units' inputs in series"
         used = total / side.burden
         figures = (Figure("s", "share of the output's highest burden that is used", "n R_in/R_out", used, "fraction", source, given),)
+    resistance = None if element.burden is None else float(element.burden)
+    drives, undriven = analogue_drive(element.signal, resistance, element.count, side, "element.burden")
     choice = DeviceChoice(
         name=f"{element.signal} signal",
         category="",
@@ -54,6 +54,7 @@ def signal_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogu
         poles=0,
         figures=figures,
         assumptions=side.assumptions,
-        open_points=open_points,
+        drives=drives,
+        undriven=undriven,
     )
     return (choice,)

@@ -6,19 +6,23 @@ from specgen.model.devices import PowerController, SolidState
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel
 from specgen.model.traits import Traits
+from specgen.sizing.burden import analogue_drive
 from specgen.sizing.candidate import Assumption, ControllerOutputKind, Unsized, Unsuited
 from specgen.sizing.chain import contact, typical
 from specgen.sizing.connection import Connection, control_connection
 from specgen.sizing.controller import OutputSide, controller_side
 from specgen.sizing.current import LoadCurrent, load_current
-from specgen.sizing.device import Contact, DeviceChoice
+from specgen.sizing.device import Contact, DeviceChoice, Drawn, Drive
+from specgen.sizing.solid_state import cooled
 
 LEAST_SWITCHED = {3: 2, 2: 1, 1: 1}
 """Live conductors that must at least be switched so that no current flows."""
+COOLINGS = ("natural", "forced", "none")
+"""How a heat sink is cooled, in the order of choice."""
 
 
 def solid_state_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue) -> tuple[DeviceChoice, ...] | Unsized:
-    """Return the solid-state switches that could switch a load: all lines switched before fewer, then the smallest first.
+    """Return the solid-state switches that could switch a load, in the order of choice.
 
     Parameters
     ----------
@@ -32,7 +36,9 @@ def solid_state_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Cat
 
     Notes
     -----
-    The rated current is taken at its own reference; the heat sink that makes it good at the interior limit is an open point.
+    All lines switched come before fewer, then those whose heat sink the panel's air cools before those that need a fan and
+    those no heat sink keeps below the junction's limit, then the smallest. So a larger device is taken where the smallest
+    that carries the current gets too hot at the interior limit.
     """
     if traits.motor:
         return Unsized("no motor rating is given for a solid-state switch")
@@ -57,15 +63,18 @@ def solid_state_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Cat
     # one that leaves a line live comes after all that open every line; poles beyond the lines are waste
     covering.sort(key=lambda device: (device.switched_poles < lines, device.poles, device.current, device.name))
     made = [_one(device, load, panel, catalogue) for device in covering]
-    found = tuple(choice for choice in made if isinstance(choice, DeviceChoice))
-    return found or next(choice for choice in made if isinstance(choice, Unsized))
+    found = [choice for choice in made if isinstance(choice, DeviceChoice)]
+    found.sort(key=lambda choice: (choice.poles < lines, COOLINGS.index(choice.cooling)))
+    return tuple(found) or next(choice for choice in made if isinstance(choice, Unsized))
 
 
 def _one(device: SolidState, load: LoadCurrent, panel: Panel, catalogue: Catalogue) -> DeviceChoice | Unsized:
     driven = _driven_by(device, panel, catalogue)
     if isinstance(driven, Unsized):
         return driven
-    output, contacts, figures, assumed = driven
+    output, contacts, figures, assumed, drawn, drives = driven
+    poles = min(device.switched_poles, load.connection.lines)
+    heat = cooled(device, load.current, poles, panel, catalogue)
     half_cycle = 0.5 / float(panel.supply.frequency)
     given = {"f": (float(panel.supply.frequency), "frequency")}
     pulse = Figure("t_p", "shortest pulse of a zero-crossing switch", "1/(2 f)", half_cycle, "time", "half a mains cycle", given)
@@ -77,16 +86,25 @@ def _one(device: SolidState, load: LoadCurrent, panel: Panel, catalogue: Catalog
         category="AC-51",
         controller_output=output,
         chain=(*contacts, switch),
-        poles=min(device.switched_poles, load.connection.lines),
+        poles=poles,
         rating=float(device.current),
         current=load.current,
-        figures=(*load.figures, rating, *figures),
+        figures=(*load.figures, rating, *heat.figures, *figures),
         assumptions=(*load.assumptions, *typical(catalogue, "ssrs", device.name), *assumed),
-        open_points=(Unsized("the heat sink is not sized yet: the rated current holds on a sufficient one"),),
+        loss=heat.loss,
+        heat_sink=heat.resistance,
+        cooling=heat.cooling,
+        leakage=float(device.leakage),
+        i2t=float(device.i2t),
+        lines=load.connection.lines,
+        drawn=drawn,
+        drives=drives,
     )
 
 
-Driven = tuple[ControllerOutputKind, tuple[Contact, ...], tuple[Figure, ...], tuple[Assumption, ...]]
+Driven = tuple[
+    ControllerOutputKind, tuple[Contact, ...], tuple[Figure, ...], tuple[Assumption, ...], tuple[Drawn, ...], tuple[Drive, ...]
+]
 
 
 def _driven_by(device: SolidState, panel: Panel, catalogue: Catalogue) -> Driven | Unsized:
@@ -110,7 +128,9 @@ def _driven_by(device: SolidState, panel: Panel, catalogue: Catalogue) -> Driven
     if isinstance(made, Unsized):
         return made
     why = "no controller has a logic output: its relay switches the input from the control supply, and wears"
-    return "relay", (made,), (), (*relay.assumptions, Assumption(f"input of {device.name}", "by a relay", why))
+    drawn = Drawn(f"the input of {device.name}", needed, needed)
+    assumed = (*relay.assumptions, Assumption(f"input of {device.name}", "by a relay", why))
+    return "relay", (made,), (), assumed, (drawn,), (Drive(drawn.what, needed, relay.rating or 0.0),)
 
 
 def _by_logic(device: SolidState, side: OutputSide) -> Driven | Unsized:
@@ -126,7 +146,7 @@ def _by_logic(device: SolidState, side: OutputSide) -> Driven | Unsized:
     given = {"I_in": (needed, "current"), "I_out": (side.drive, "current")}
     used = needed / side.drive
     share = Figure("s", "share of the logic output's drive that is used", "I_in/I_out", used, "fraction", "the devices' data", given)
-    return "logic", (), (share,), side.assumptions
+    return "logic", (), (share,), side.assumptions, (), (Drive(f"the input of {device.name}", needed, side.drive),)
 
 
 def power_controller_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue) -> tuple[DeviceChoice, ...] | Unsized:
@@ -171,20 +191,32 @@ def _throttled(device: PowerController, load: LoadCurrent, panel: Panel, catalog
     side = controller_side(panel, catalogue, "analogue", signal=device.signal)
     if isinstance(side, Unsized):
         return side
+    resistance = None if device.input_resistance is None else float(device.input_resistance)
+    drives, undriven = analogue_drive(device.signal, resistance, 1, side, "devices.power_controllers.input_resistance")
     given = {"I_r": (float(device.current), "current")}
     category = load.solid_state_category
     rating = Figure("I_e", "rated current of the power controller", "I_r", float(device.current), "current", "the device's data", given)
+    poles = _poles(load.connection, device)
+    loss = poles * float(device.loss_per_ampere) * load.current
+    put_in = {"p": (float(poles), "number"), "U": (float(device.loss_per_ampere), "voltage"), "I_b": (load.current, "current")}
+    said = "the device's data, watts an ampere and pole"
+    lost = Figure("P_v", "loss in the panel at full output", "p U I_b", loss, "power", said, put_in)
     return DeviceChoice(
         name=device.name,
         category=category,
         controller_output="analogue",
         chain=(),
-        poles=_poles(load.connection, device),
+        poles=poles,
         rating=float(device.current),
         current=load.current,
-        figures=(*load.figures, rating),
+        figures=(*load.figures, rating, lost),
         assumptions=(*load.assumptions, *typical(catalogue, "power_controllers", device.name), *side.assumptions),
         open_points=(Unsized(f"its rated current is not yet held against a data sheet, in {category} and at the interior limit"),),
+        loss=loss,
+        i2t=None if device.i2t is None else float(device.i2t),
+        lines=load.connection.lines,
+        drives=drives,
+        undriven=undriven,
     )
 
 

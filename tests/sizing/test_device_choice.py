@@ -192,7 +192,7 @@ def test_solid_state(choose):
     found = choose("ssr", HEATER)
     assert (found.name, found.poles, found.controller_output) == ("solid-state switch 25 A, three-phase, 3 poles switched", 3, "logic")
     assert [(part.role, part.life, part.pull_in) for part in found.chain] == [("load", None, 0.01)]
-    assert "heat sink" in found.open_points[0].because
+    assert (found.open_points, found.cooling) == ((), "natural")
     assert choose("ssr", SMALL).name == "solid-state switch 10 A, 1-pole"
     between = choose("ssr", SMALL | {"voltage": "400 V"})
     assert (between.name, between.poles) == ("solid-state switch 25 A, 2-pole", 2)
@@ -232,7 +232,7 @@ def test_signal(choose):
     found = choose("signal", VALVE)
     assert (found.name, found.controller_output, found.rating, found.chain) == ("4-20 mA signal", "analogue", None, ())
     assert found.figures[0].value == pytest.approx(0.5)  # 250 of 500 ohm
-    assert choose("signal", {k: v for k, v in VALVE.items() if k != "burden"}).open_points[0].needs == ("element.burden",)
+    assert choose("signal", {k: v for k, v in VALVE.items() if k != "burden"}).undriven.needs == ("element.burden",)
     assert isinstance(choose("signal", HEATER), Unsuited)
     assert choose("signal", VALVE, controllers=[CONTROLLER]).needs == ("controllers.outputs",)
 
