@@ -11,12 +11,14 @@ from specgen.process.box import Box, Unmodelled
 from specgen.sizing.candidate import Candidate, Unsized
 from specgen.sizing.device import DeviceChoice
 from specgen.sizing.faults import Faults
+from specgen.sizing.feeder import Feeder
 from specgen.sizing.measurement import MeasuringError
 from specgen.sizing.settings import OnOffSettings, Settings
 
 Weight = Literal["must", "should", "note"]
 Scope = Literal["loop", "pair", "panel"]
 Outcome = Literal["holds", "broken", "overridden", "unanswered", "does_not_apply"]
+NOT_SIZED = Unsized("what feeds the element is not sized")
 
 
 @dataclass(frozen=True, slots=True)
@@ -56,6 +58,7 @@ class Case:
     on_off: OnOffSettings | Unsized
     error: MeasuringError | Unsized
     faults: Faults | Unsized
+    feeder: Feeder | Unsized = NOT_SIZED
 
 
 @dataclass(frozen=True, slots=True)

@@ -7,8 +7,10 @@ from collections.abc import Callable
 from dataclasses import dataclass
 from functools import lru_cache
 from importlib import resources
+from typing import Any
 
 from specgen.rules.base import Case, Finding, Rule
+from specgen.rules.panel_case import PanelCase
 
 FAMILIES = "AMDCVOEIST"
 _FILE = re.compile(r"([a-z])([0-9]+)_[a-z0-9_]+\.py\Z")
@@ -19,10 +21,11 @@ class LoadedRule:
     """A rule as found in its file: the declaration, what it does, and its plain sentence and explanation."""
 
     rule: Rule
-    examine: Callable[[Case], Finding]
-    applies: Callable[[Case], bool] | None
+    examine: Callable[[Any], Finding]  # a rule of scope panel is asked about a PanelCase
+    applies: Callable[[Any], bool] | None
     sentence: str
     explanation: str
+    examine_loop: Callable[[Case], Finding] | None = None
 
 
 @lru_cache(maxsize=1)
@@ -43,7 +46,7 @@ def all_rules() -> tuple[LoadedRule, ...]:
                 found.append(
                     LoadedRule(
                         module.rule, module.examine, getattr(module, "applies", None), sentence.partition(": ")[2] or sentence,
-                        (more.strip() + "\n\n" + about).strip(),
+                        (more.strip() + "\n\n" + about).strip(), getattr(module, "examine_loop", None),
                     )
                 )
     return tuple(sorted(found, key=lambda loaded: place_of(loaded.rule.code)))
@@ -76,10 +79,25 @@ def rules_digest() -> str:
 
 def examine_all(case: Case) -> tuple[Finding, ...]:
     """Ask every rule of scope loop about one case."""
-    return tuple(_ask(loaded, case) for loaded in all_rules() if loaded.rule.scope == "loop")
+    return tuple(ask(loaded, case) for loaded in all_rules() if loaded.rule.scope == "loop")
 
 
-def _ask(loaded: LoadedRule, case: Case) -> Finding:
+def examine_panel(case: PanelCase) -> tuple[Finding, ...]:
+    """Ask every rule of scope panel about the panel."""
+    asked = (loaded for loaded in all_rules() if loaded.rule.scope == "panel")
+    return tuple(
+        loaded.rule.does_not_apply() if loaded.applies is not None and not loaded.applies(case) else loaded.examine(case)
+        for loaded in asked
+    )
+
+
+def examine_own(case: Case) -> tuple[Finding, ...]:
+    """Ask the rules of scope panel that also hold a loop of their own about it, by what is known of this loop alone."""
+    return tuple(loaded.examine_loop(case) for loaded in all_rules() if loaded.examine_loop is not None)
+
+
+def ask(loaded: LoadedRule, case: Case) -> Finding:
+    """Ask one rule about a case; what does not apply or lacks an input is answered for it."""
     if loaded.applies is not None and not loaded.applies(case):
         return loaded.rule.does_not_apply()
     missing = tuple(path for path in loaded.rule.needs if not _declared(case.loop, path))

@@ -1,0 +1,1 @@
+"""Rules about the panel as a whole, one a file."""
