@@ -3,7 +3,6 @@
 import re
 from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
-from functools import lru_cache
 
 from specgen.core.diagnostic import Diagnostic
 from specgen.design.types import Design
@@ -38,7 +37,8 @@ class MissingLoop:
 class Dossier:
     """A design with what its pages need besides.
 
-    ``held`` and ``unsettled`` are the tags of the loops that every page must name, ``errors`` the number of problems in the input.
+    ``held`` and ``unsettled`` are the tags of the loops that every page must name, ``errors`` the number of problems in the input,
+    ``rule_codes`` the rules that are examined.
     """
 
     design: Design
@@ -49,16 +49,12 @@ class Dossier:
     held: tuple[str, ...]
     unsettled: tuple[str, ...]
     errors: int
+    rule_codes: frozenset[str]
 
     @property
     def title(self) -> str:
         """Return the dossier's title."""
         return self.design.panel.panel.title if self.design.panel else "Design dossier"
-
-    @property
-    def rule_codes(self) -> frozenset[str]:
-        """Return the rules that have a place in the rule book's page."""
-        return _codes(self.rules)
 
     def count(self, verdict: str) -> int:
         """Count the loops of one verdict."""
@@ -78,6 +74,7 @@ def dossier_of(design: Design, own_pages: Sequence[OwnPage] = ()) -> Dossier:
         held=tuple(loop.tag for loop in design.loops if loop.verdict == "held"),
         unsettled=tuple(loop.tag for loop in design.loops if loop.verdict == "open"),
         errors=sum(1 for problem in design.problems if problem.severity == "error"),
+        rule_codes=frozenset(loaded.rule.code for loaded in all_rules()),
     )
 
 
@@ -107,11 +104,6 @@ def _document_at(text: str, problem: Diagnostic) -> tuple[str, int]:
         return "", 1
     match = _TAG_LINE.search(around[-1].text)
     return (match[2] if match else ""), around[-1].first_line + 1
-
-
-@lru_cache(maxsize=4)
-def _codes(rules: tuple[LoadedRule, ...]) -> frozenset[str]:
-    return frozenset(loaded.rule.code for loaded in rules)
 
 
 def not_examined(dossier: Dossier) -> tuple[Planned, ...]:

@@ -99,7 +99,7 @@ def assumptions_page(dossier: Dossier, place: Place) -> PageView:
 
 def _loops_cell(dossier: Dossier, tags: list[str], place: Place) -> Cell:
     if len(tags) == 1:
-        return word(tags[0], place.sheet(tags[0], "assumptions"))
+        return word(tags[0], place.sheet(tags[0], "basis"))
     if len(tags) == len(dossier.design.loops):
         return word(f"all {len(tags)}")
     return word(", ".join(tags))
