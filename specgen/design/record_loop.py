@@ -149,7 +149,9 @@ def predicted(case: Case, numbers: _Numbers) -> Row:
                 "shortest_on": numbers.plain(settings.shortest_on), "shortest_off": numbers.plain(settings.shortest_off),
                 "operations_per_year": numbers.plain(settings.operations_per_year), "contact_life": numbers.plain(settings.contact_life),
             } | _duties(case) | _margins(settings.tuning, numbers)  # fmt: skip
-        case ContinuousSettings() | ThreePointSettings():
+        case ContinuousSettings():
+            made = _duties(case) | _margins(settings.tuning, numbers) | _openings(settings)
+        case ThreePointSettings():
             made = _duties(case) | _margins(settings.tuning, numbers)
         case Unsized():
             pass
@@ -165,6 +167,12 @@ def _duties(case: Case) -> Row:
     # a duty outside 0 to 1 is said by M9 and M10; the record's share of full output ends there
     low, high = (min(max(duty, 0.0), 1.0) for duty in (box.duty_low[0], box.duty_high[0]))
     return {"duty_low": rounded(low), "duty_high": rounded(high)}
+
+
+def _openings(settings: ContinuousSettings) -> Row:
+    # an opening outside 0 to 1 is a valve too small, or a flow below what it controls: V1 and V2 say so
+    ends = {"opening_low": settings.opening_low, "opening_high": settings.opening_high}
+    return {name: None if travel is None else rounded(min(max(travel, 0.0), 1.0)) for name, travel in ends.items()}
 
 
 def _margins(tuning: Tuning, numbers: _Numbers) -> Row:

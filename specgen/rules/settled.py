@@ -17,6 +17,11 @@ def proportioned(case: Case) -> ProportionedSettings | Unsized:
     return Unsized("the candidate is not time-proportioned")
 
 
+def continuous(case: Case) -> ContinuousSettings | Unsized:
+    """Return the settings of an analogue candidate, or why there are none."""
+    return case.settings if isinstance(case.settings, ContinuousSettings | Unsized) else Unsized("the candidate is not analogue")
+
+
 def three_point(case: Case) -> ThreePointSettings | Unsized:
     """Return the settings of a three-point candidate, or why there are none."""
     return case.settings if isinstance(case.settings, ThreePointSettings | Unsized) else Unsized("the candidate is not three-point")

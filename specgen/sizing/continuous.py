@@ -6,15 +6,19 @@ from specgen.core.figure import Figure
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel
 from specgen.process.box import Box, Unmodelled
-from specgen.process.three_point import three_point
+from specgen.process.three_point import motor_work, three_point
 from specgen.sizing.actuator import actuator_delay
 from specgen.sizing.candidate import Assumption, Candidate, Unsized
 from specgen.sizing.device import DeviceChoice
 from specgen.sizing.scan import scan_and_pulse
 from specgen.sizing.settings import ContinuousSettings, ThreePointSettings, Tuning
+from specgen.sizing.signal_table import signal_table
 from specgen.sizing.simulated import load_share, simulated_deviation, tuning_of
 from specgen.sizing.starting_values import hardest_case, start_of
+from specgen.sizing.valve_sizing import valve_sizing
 
+SWEEP = 3600.0  # s, in which the load is taken to sweep its whole declared range there and back
+SWEPT = "every step of travel by a pulse of its own; how often the load sweeps its range is common practice, no source"
 USUAL_PULSE = 0.01  # of the travel time: what a motor follows reliably where nothing is declared
 
 
@@ -24,7 +28,8 @@ def continuous_settings(
     """Return signal and tuning of an analogue candidate."""
     if isinstance(device, Unsized):
         return Unsized(f"no device: {device.because}", device.needs)
-    tuned = _tuned(loop, panel, box, with_actuator=candidate.device == "signal")
+    valve = valve_sizing(loop, box) if candidate.device == "signal" and isinstance(box, Box) else None
+    tuned = _tuned(loop, panel, box, with_actuator=candidate.device == "signal", gain_factor=valve.gain_factor if valve else 1.0)
     if isinstance(tuned, Unsized):
         return tuned
     tuning, figures, assumptions, duties = tuned
@@ -32,7 +37,9 @@ def continuous_settings(
     if signal is None:
         signal = "4-20 mA"
         assumptions = (*assumptions, Assumption("element.signal", signal, "the power controller takes a live-zero signal"))
-    return ContinuousSettings(signal, tuning, *duties, figures, assumptions)
+    figures = (*(valve.figures if valve else ()), *figures, *signal_table(loop, signal).figures)
+    assumptions = (*assumptions, *(valve.assumptions if valve else ()))
+    return ContinuousSettings(signal, tuning, *duties, figures, assumptions, valve)
 
 
 def three_point_settings(
@@ -70,7 +77,17 @@ def three_point_settings(
         Figure("h", "travel of the shortest pulse", "t_p/t_v", zone.travel_step, "fraction", "definition", inputs),
         Figure("z", "neutral zone, whole width", formula, zone.neutral_zone, "change", "rule V3", {**inputs, "K": (gain, "change")}),
     )
-    return ThreePointSettings(zone.neutral_zone, zone.travel_step, tuning, *duties, figures, assumptions)
+    swing = min(box.duty_high[0], 1.0) - max(box.duty_low[0], 0.0)
+    work = motor_work(max(swing, 0.0), SWEEP, zone.travel_step, float(travel))
+    swept = {"Δx": (swing, "fraction"), "P": (SWEEP, "time")}
+    pulse, whole = {"h": (zone.travel_step, "fraction")}, {"t_v": (float(travel), "time")}
+    figures = (
+        *figures,
+        Figure("n_p", "pulses an hour, at most", "2 Δx/(h P)", work.pulses_per_hour, "per_hour", SWEPT, swept | pulse),
+        Figure("D", "share of the time that the motor runs", "2 Δx t_v/P", work.duty, "fraction", SWEPT, swept | whole),
+    )
+    assumptions = (*assumptions, Assumption("load", "its declared range there and back once an hour", SWEPT))
+    return ThreePointSettings(zone.neutral_zone, zone.travel_step, tuning, *duties, figures, assumptions, work.pulses_per_hour, work.duty)
 
 
 def _highest_gain(box: Box, tuning: Tuning) -> float:
@@ -85,7 +102,7 @@ def _highest_gain(box: Box, tuning: Tuning) -> float:
 _Tuned = tuple[Tuning, tuple[Figure, ...], tuple[Assumption, ...], tuple[float, float]]
 
 
-def _tuned(loop: Loop, panel: Panel, box: Box | Unmodelled, *, with_actuator: bool) -> _Tuned | Unsized:
+def _tuned(loop: Loop, panel: Panel, box: Box | Unmodelled, *, with_actuator: bool, gain_factor: float = 1.0) -> _Tuned | Unsized:
     if isinstance(box, Unmodelled):
         return Unsized(box.because, box.needs)
     change = load_share(loop, box)
@@ -93,7 +110,7 @@ def _tuned(loop: Loop, panel: Panel, box: Box | Unmodelled, *, with_actuator: bo
         return change
     delay, figures, assumptions = actuator_delay(loop) if with_actuator else (0.0, (), ())
     scan, _ = scan_and_pulse(panel)
-    start = start_of(loop, hardest_case(box), actuator=delay, scan=scan)
+    start = start_of(loop, hardest_case(box, gain_factor), actuator=delay, scan=scan)
     if isinstance(start, Unsized):
         return start
     deviation = simulated_deviation(start, change) if change is not None else None

@@ -9,6 +9,7 @@ from specgen.sizing.candidate import Assumption
 if TYPE_CHECKING:
     from specgen.process.on_off import OnOffPrediction
     from specgen.process.time_proportioned import RipplePrediction
+    from specgen.sizing.valve_sizing import ValveSizing
 
 Placement = Literal["centred", "below", "above"]
 
@@ -109,7 +110,11 @@ class ProportionedSettings:
 
 @dataclass(frozen=True, slots=True)
 class ContinuousSettings:
-    """Analogue: the signal and the tuning."""
+    """Analogue: the signal and the tuning; where a modulating valve takes it, how the valve is used.
+
+    ``opening_low`` and ``opening_high`` are travels of that valve at the lowest and highest duty [1], None where they could not be
+    computed or the valve shuts; ``lowest_flow`` is the least share of the full flow it can control.
+    """
 
     signal: str
     tuning: Tuning
@@ -117,11 +122,31 @@ class ContinuousSettings:
     duty_high: float
     figures: tuple[Figure, ...] = ()
     assumptions: tuple[Assumption, ...] = ()
+    valve: "ValveSizing | None" = None
+
+    @property
+    def opening_low(self) -> float | None:
+        """Return the valve's opening at the lowest duty."""
+        return self.valve.opening_low if self.valve is not None else None
+
+    @property
+    def opening_high(self) -> float | None:
+        """Return the valve's opening at the highest duty."""
+        return self.valve.opening_high if self.valve is not None else None
+
+    @property
+    def lowest_flow(self) -> float | None:
+        """Return the least share of the full flow that the valve can control."""
+        return self.valve.lowest_flow if self.valve is not None else None
 
 
 @dataclass(frozen=True, slots=True)
 class ThreePointSettings:
-    """Three-point: neutral zone [in the loop's quantity], travel of the shortest pulse [0..1] and the tuning."""
+    """Three-point: neutral zone [in the loop's quantity], travel of the shortest pulse [0..1] and the tuning.
+
+    ``pulses_per_hour`` [1/h] and ``motor_share`` (of the time) are what the actuator works where the load sweeps its declared range
+    there and back once an hour.
+    """
 
     neutral_zone: float
     travel_step: float
@@ -130,6 +155,8 @@ class ThreePointSettings:
     duty_high: float
     figures: tuple[Figure, ...] = ()
     assumptions: tuple[Assumption, ...] = ()
+    pulses_per_hour: float | None = None
+    motor_share: float | None = None
 
 
 Settings = OnOffSettings | ProportionedSettings | ContinuousSettings | ThreePointSettings
