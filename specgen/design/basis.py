@@ -22,6 +22,8 @@ def basis_of(case: Case, fitted: tuple[Figure, ...] = ()) -> tuple[Figure, ...]:
         found += case.device.figures
         for contact in case.device.chain:
             found += contact.figures
+    if not isinstance(case.feeder, Unsized):
+        found += case.feeder.figures
     if not isinstance(case.settings, Unsized):
         if not isinstance(case.settings, OnOffSettings):
             found += case.settings.tuning.figures

@@ -16,6 +16,7 @@ _HOW = (
     ("need.", "process description"),
     ("cable.", "cable schedule, or measured on site"),
     ("controllers", "data sheet of the controller"),
+    ("devices.", "data sheet of the device"),
     ("supply", "supply authority, or measured on site"),
 )
 
@@ -46,4 +47,7 @@ def missing_inputs(findings: Iterable[Finding], case: Case) -> tuple[Missing, ..
             found += [Missing(field, (), point.because) for field in fields if field not in known]
     elif case.device.needs:
         found += [Missing(field, (), case.device.because) for field in case.device.needs if field not in settles]
+    if not isinstance(case.feeder, Unsized):
+        here = {missing.field for missing in found}
+        found += [Missing(field, (), point.because) for point in case.feeder.open_points for field in point.needs if field not in here]
     return tuple(sorted(set(found), key=lambda missing: (not missing.settles, missing.field, missing.how)))
