@@ -6,7 +6,7 @@ from math import inf
 from specgen.core.say import Phrasing
 from specgen.design.types import Examined, Rejected
 from specgen.rules.base import Finding
-from specgen.sizing.candidate import ORDER
+from specgen.sizing.candidate import ORDER, Candidate
 
 _LEVELS = (("broken", "must"), ("broken", "should"), ("unanswered", "must"), ("unanswered", "should"))
 BY_ORDER = "M13"
@@ -65,12 +65,22 @@ def because(chosen: Examined, rejected: Sequence[Rejected], phrasing: Phrasing) 
         return "nothing else can be wired here"
     following = min(rejected, key=lambda r: rank(r.examined))
     ending = separation(chosen, following.examined)
-    candidate = following.examined.case.candidate
-    other = f"{MODE_WORDS[candidate.mode]} through {DEVICE_WORDS[candidate.device]}"
+    other = named(following.examined.case.candidate)
     if not ending:
         return f"M13: {other} keeps the same rules; {following.text.removeprefix('equal in the rules; ')}"
     first = ending[0]
     return f"{first.rule} rules out {other}: {phrasing.fill(first.text, first.words)}"
+
+
+def named(candidate: Candidate) -> str:
+    """Return a candidate in words.
+
+    Examples
+    --------
+    >>> named(Candidate("on_off", "contactor"))
+    'on-off through a contactor'
+    """
+    return f"{MODE_WORDS[candidate.mode]} through {DEVICE_WORDS[candidate.device]}"
 
 
 MODE_WORDS = {"on_off": "on-off", "time_proportioned": "time-proportioned", "analogue": "analogue", "three_point": "three-point"}

@@ -1,18 +1,16 @@
 """Deciding one loop: every candidate sized and examined, the best or the designer's own taken, the rest explained."""
 
 from collections.abc import Mapping
-from dataclasses import replace
 
 from specgen.catalogue.load import Catalogue
-from specgen.core.diagnostic import Diagnostic, Span
-from specgen.core.say import Phrasing
+from specgen.core.diagnostic import Diagnostic
 from specgen.design.assumptions import loop_assumptions
 from specgen.design.basis import basis_of
-from specgen.design.choice import because, best, codes, rank, reject
 from specgen.design.missing import missing_inputs
-from specgen.design.types import DecidedLoop, Decision, Examined, Verdict
+from specgen.design.types import DecidedLoop, Examined, Verdict
+from specgen.design.wish import decided_by, marked, sets_something, unused
 from specgen.model.fitted import Fitted
-from specgen.model.loop import Choose, Loop
+from specgen.model.loop import Loop
 from specgen.model.loops import ReadLoop
 from specgen.model.panel import Panel
 from specgen.model.traits import Traits, traits_of
@@ -32,10 +30,6 @@ from specgen.sizing.settings import OnOffSettings, Settings
 from specgen.sizing.stuck import faults_of, with_times
 from specgen.sizing.time_proportioned import proportioned_settings
 
-PAIRS = (
-    "on_off and time_proportioned go with relay, contactor, ssr; analogue with power_controller, signal; three_point with relay_pair; "
-    "a relay is no choice for motors, three-phase loads or more than its rating"
-)
 Sized = DeviceChoice | Unsized
 Sizes = tuple[DeviceChoice, ...] | Unsized
 _CONTACTOR = Candidate("on_off", "contactor")
@@ -53,10 +47,14 @@ def decide(read: ReadLoop, panel: Panel, catalogue: Catalogue) -> tuple[DecidedL
     loop = read.loop
     traits = traits_of(loop.element)
     examined = examine_candidates(loop, panel, traits, catalogue, read.fitted)
-    decision, problem = _decision(read, examined)
+    own = examined
+    if loop.choose is not None and sets_something(loop.choose):
+        # what the rules would take is asked of the loop without the designer's settings
+        own = examine_candidates(loop.model_copy(update={"choose": None}), panel, traits, catalogue, read.fitted)
+    decision, problem = decided_by(read, examined, own)
     if decision is None:
         return None, (problem,) if problem is not None else ()
-    findings = _marked(decision, loop.choose, examined)
+    findings = marked(decision, loop.choose, own)
     case = decision.chosen.case
     assumptions = _assumptions(read, traits, case)
     decided = DecidedLoop(
@@ -142,45 +140,6 @@ class _Sizer:
                 return three_point_settings(self._loop, self._panel, self._box, device)
 
 
-def _decision(read: ReadLoop, examined: tuple[Examined, ...]) -> tuple[Decision | None, Diagnostic | None]:
-    loop = read.loop
-    free = best(examined)
-    chosen, by_designer = free, False
-    wish = loop.choose
-    if wish is not None and (wish.mode is not None or wish.output is not None):
-        wished = [e for e in examined if wish.mode in (None, e.case.candidate.mode) and wish.output in (None, e.case.candidate.device)]
-        if not wished:
-            return None, _problem(
-                read, ("choose", "output" if wish.output else "mode"), "L301", "no such pair of mode and output is wired here", PAIRS
-            )
-        chosen, by_designer = best(wished), True
-    overridden = _overridden(chosen, free, wish)
-    if overridden and wish is not None and wish.because is None:
-        first = overridden[0]
-        return None, _problem(
-            read, ("choose",), "L302", f"choose sets aside rule {first.rule} without a reason: {_sentence(loop, first)}",
-            "write because: with the reason, or leave the choice to the rules",
-        )
-    phrasing = Phrasing(loop.unit, loop.difference_unit)
-    others = sorted((e for e in examined if e is not chosen), key=rank)
-    rejected = tuple(reject(chosen, other, phrasing, by_designer=by_designer) for other in others)
-    why = wish.because if by_designer and wish is not None and wish.because else because(chosen, rejected, phrasing)
-    return Decision(chosen, why, rejected, by_designer), None
-
-
-def _overridden(chosen: Examined, free: Examined, wish: Choose | None) -> list[Finding]:
-    """Return the recommendations that the designer's choice breaks and the rules' own would not."""
-    if wish is None:
-        return []
-    own = set() if chosen is free else set(codes(free, "broken", "should"))
-    return [f for f in chosen.findings if f.outcome == "broken" and f.weight == "should" and f.rule not in own]
-
-
-def _marked(decision: Decision, wish: Choose | None, examined: tuple[Examined, ...]) -> tuple[Finding, ...]:
-    overridden = {f.rule for f in _overridden(decision.chosen, best(examined), wish)} if wish is not None and wish.because else set()
-    return tuple(replace(f, outcome="overridden") if f.rule in overridden and f.weight == "should" else f for f in decision.chosen.findings)
-
-
 def verdict_of(findings: tuple[Finding, ...]) -> Verdict:
     """Return the verdict that findings add up to: held, open, deviates or meets."""
     binding = {f.outcome for f in findings if f.weight == "must"}
@@ -202,16 +161,5 @@ def _assumptions(read: ReadLoop, traits: Traits, case: Case) -> tuple[Assumption
             parts += case.settings.tuning.assumptions
     if not isinstance(case.error, Unsized):
         parts += case.error.assumptions
+    parts += unused(read.loop.choose, case.candidate)
     return tuple(dict.fromkeys(parts))
-
-
-def _sentence(loop: Loop, finding: Finding) -> str:
-    return Phrasing(loop.unit, loop.difference_unit).fill(finding.text, finding.words)
-
-
-def _problem(read: ReadLoop, path: tuple[str, ...], code: str, text: str, hint: str) -> Diagnostic:
-    spans = read.spans
-    span = next((spans[path[:n]] for n in range(len(path), 0, -1) if path[:n] in spans), Span(read.file, read.line, 1))
-    return Diagnostic(span, code, text, hint)
-
-

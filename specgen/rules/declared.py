@@ -23,3 +23,9 @@ def word(case: Case, path: str) -> str | None:
     """Return a declared word, None where nothing is declared."""
     found = field(case, path)
     return found if isinstance(found, str) else None
+
+
+def longest_asked(case: Case) -> float:
+    """Return the cycle time that the designer asks for, else the longest of the house's series [s]."""
+    asked = number(case, "choose.cycle_time")
+    return float(case.panel.house.cycle_time_series[-1]) if asked is None else asked

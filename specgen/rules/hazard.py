@@ -1,4 +1,4 @@
-"""Which elements can overheat something, where a valve goes by itself, and how far normal running reaches."""
+"""Which elements can overheat something, where a valve goes by itself, and what room is left to something independent."""
 
 from dataclasses import dataclass
 from typing import Literal
@@ -7,9 +7,8 @@ from specgen.core.say import Said, of_value, seconds
 from specgen.process.box import Unmodelled
 from specgen.rules.base import Case
 from specgen.rules.declared import word
-from specgen.rules.deviation import allowed_overshoot
 from specgen.sizing.faults import Stuck
-from specgen.sizing.settings import ContinuousSettings, OnOffSettings, ProportionedSettings, ThreePointSettings
+from specgen.sizing.normal_running import normal_running
 
 Position = Literal["close", "open", "hold"]
 _POSITIONS: dict[str, Position] = {"close": "close", "closed": "close", "open": "open", "hold": "hold"}
@@ -32,30 +31,6 @@ def lost_positions(case: Case) -> dict[str, Position | None]:
     elif case.traits.analogue_input:
         fields = ("element.on_signal_loss", "element.on_supply_loss")
     return {field: _POSITIONS.get(word(case, field) or "") for field in fields}
-
-
-@dataclass(frozen=True, slots=True)
-class Normal:
-    """The lowest and highest true value of normal running over every setpoint [value]."""
-
-    low: float
-    high: float
-
-
-def normal(case: Case) -> Normal:
-    """Return how far normal running reaches: the predicted excursions, or the tolerance where none is predicted."""
-    need, settings = case.loop.need, case.settings
-    above, below = float(need.tolerance.above), float(need.tolerance.below)
-    if isinstance(settings, OnOffSettings):
-        above, below = settings.enforced.above.value, settings.enforced.below.value
-    elif isinstance(settings, ProportionedSettings | ContinuousSettings | ThreePointSettings):
-        if isinstance(settings, ProportionedSettings):
-            above, below = settings.ripple.above.value, settings.ripple.below.value
-        overshoot = settings.tuning.overshoot
-        reaches = allowed_overshoot(case) if overshoot is None else overshoot
-        # an overshoot at start-up goes the way that the output drives
-        above, below = (max(above, reaches), below) if case.loop.raises else (above, max(below, reaches))
-    return Normal(need.setpoints.low - below, need.setpoints.high + above)
 
 
 @dataclass(frozen=True, slots=True)
@@ -129,7 +104,7 @@ def independent_lag(case: Case, state: Literal["on", "off"]) -> float:
 
 def rooms(case: Case, state: Literal["on", "off"], stuck: Stuck) -> tuple[Room, ...]:
     """Return the room on each side whose declared danger is passed."""
-    reach, limits, setpoints = normal(case), case.loop.limits, case.loop.need.setpoints
+    reach, limits, setpoints = normal_running(case.loop, case.settings), case.loop.limits, case.loop.need.setpoints
     lag = independent_lag(case, state)
     found = []
     if stuck.passes_high and limits.danger_high is not None:

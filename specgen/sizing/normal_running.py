@@ -16,14 +16,18 @@ class Normal:
 
 
 def normal_running(loop: Loop, settings: Settings | Unsized) -> Normal:
-    """Return how far normal running reaches: predicted excursions and overshoot, or the tolerance where nothing is predicted."""
+    """Return how far normal running reaches: predicted excursions and overshoot, or the tolerance where nothing is predicted.
+
+    A sudden load that is declared belongs to normal running.
+    """
     need = loop.need
     above, below = float(need.tolerance.above), float(need.tolerance.below)
     if isinstance(settings, OnOffSettings):
         above, below = settings.enforced.above.value, settings.enforced.below.value
     elif isinstance(settings, ProportionedSettings | ContinuousSettings | ThreePointSettings):
         if isinstance(settings, ProportionedSettings):
-            above, below = settings.ripple.above.value, settings.ripple.below.value
+            load = settings.tuning.load_deviation or 0.0
+            above, below = settings.ripple.above.value + load, settings.ripple.below.value + load
         predicted = settings.tuning.overshoot
         allowed = need.overshoot or (need.tolerance.above if loop.raises else need.tolerance.below)
         reaches = float(allowed) if predicted is None else predicted

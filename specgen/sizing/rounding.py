@@ -23,7 +23,8 @@ def chosen_differential(least: float, most: float, step: float, *, even: bool) -
     Parameters
     ----------
     least, most : float
-        What the machine and the product allow [same unit as step]; ``most`` may be infinite: then the least is taken.
+        What the machine and the product allow [same unit as step]; ``most`` may be infinite or below the least: then the
+        least is taken.
     step : float
         Setting step.
     even : bool
@@ -33,6 +34,8 @@ def chosen_differential(least: float, most: float, step: float, *, even: bool) -
     --------
     >>> chosen_differential(1.0, 4.0, 0.1, even=True), chosen_differential(2.0, 1.0, 0.1, even=True)
     (2.0, 2.0)
+    >>> chosen_differential(0.21, 0.99, 0.1, even=True)  # sqrt(0.21 x 0.99) is 0.456
+    0.4
     """
     unit = 2 * step if even else step
     lowest = up_to_step(least, unit)
@@ -43,7 +46,7 @@ def chosen_differential(least: float, most: float, step: float, *, even: bool) -
         # no even number of steps lies between the two: a single step may
         single = up_to_step(least, step)
         return round(single if single <= most + SLACK * step else lowest, 12)
-    middle = max(1, round(sqrt(lowest * highest) / unit)) * unit
+    middle = round(sqrt(least * most) / unit) * unit
     return round(min(max(middle, lowest), highest), 12)
 
 

@@ -20,7 +20,7 @@ INSIDE = 0.02  # a duty nearer to an end than this is no steady cycle
 
 @dataclass(frozen=True, slots=True)
 class Hardest:
-    """The case with the highest slope and longest delay, its neighbours in the remaining ranges, and the duties of the box."""
+    """The case with the highest slope and longest delay, its neighbours in the remaining ranges, the laziest, and the box's duties."""
 
     point: Point
     dynamics: Dynamics
@@ -60,9 +60,13 @@ def hardest_case(box: Box, gain_factor: float = 1.0) -> Hardest:
         dynamics_of(box, base._replace(loss=p.loss, lag=p.lag, sensor_lag=p.sensor_lag), gain_factor)
         for p in box.ends("loss", "lag", "sensor_lag")
     }
+    # settings made for the steepest case can be too lively in time for the laziest: integral action outruns it
+    soft = min(box.ends("strength", "load", "capacity"), key=lambda point: box.plant_at(point).gain_per_second)
+    lazy = base._replace(strength=soft.strength, load=soft.load, capacity=soft.capacity)
+    others |= {dynamics_of(box, lazy._replace(loss=p.loss)) for p in box.ends("loss")}
     low, high = box.duty_low[0], box.duty_high[0]
-    ordered = sorted(others - {own}, key=lambda d: (d.tau, d.lag, d.sensor_lag))
-    return Hardest(base, own, tuple(ordered), _inside(low), _inside(high), box.text(base))
+    ordered = sorted(others - {own}, key=lambda d: (d.slope, d.tau, d.lag, d.sensor_lag))
+    return Hardest(base, own, tuple(ordered), inside(low), inside(high), box.text(base))
 
 
 def dynamics_of(box: Box, point: Point, gain_factor: float = 1.0) -> Dynamics:
@@ -76,7 +80,8 @@ def _longer(box: Box, axis: str) -> float:
     return 1.0 if held.at(1.0) >= held.at(0.0) else 0.0
 
 
-def _inside(duty: float) -> float:
+def inside(duty: float) -> float:
+    """Return a duty as a loop can be steady at it: a little off either end."""
     return min(max(duty, INSIDE), 1 - INSIDE)
 
 

@@ -18,7 +18,7 @@ from specgen.sizing.remembered import remembered
 from specgen.sizing.rounding import SLACK, down_in_series, up_in_series
 from specgen.sizing.scan import scan_and_pulse
 from specgen.sizing.settings import Bound, ProportionedSettings
-from specgen.sizing.simulated import estimated_deviation, load_share, simulated_deviation, tuning_of
+from specgen.sizing.simulated import SuddenLoad, estimated_deviation, load_share, simulated_deviation, tuning_of
 from specgen.sizing.starting_values import Hardest, Start, hardest_case, start_of
 from specgen.sizing.wear import HOUR, hours_per_year, life_in_years, weakest
 
@@ -29,6 +29,7 @@ MOST_SENSITIVITY = 2.0  # T2
 LEAST_GAIN_MARGIN = 2.0  # T2
 _longest_cycle = remembered(longest_cycle)
 _predict_ripple = remembered(predict_ripple)
+LOAD = "a longer cycle lets the sudden load carry the value too far"
 RIPPLE = "steady ripple of a pulse train in the worst case of the declared ranges; exact, tests/process"
 
 
@@ -43,7 +44,7 @@ class _Job:
     solid_state: bool
     scan: float
     pulse: Pulse
-    change: float | None
+    load: SuddenLoad | None
 
 
 def proportioned_settings(
@@ -60,11 +61,11 @@ def proportioned_settings(
         return Unsized(box.because, box.needs)
     if isinstance(device, Unsized):
         return Unsized(f"no device: {device.because}", device.needs)
-    change = load_share(loop, box)
-    if isinstance(change, Unsized):
-        return change
+    load = load_share(loop, box)
+    if isinstance(load, Unsized):
+        return load
     scan, pulse = scan_and_pulse(panel)
-    job = _Job(loop, panel, box, device, error, hardest_case(box), candidate.device == "ssr", scan, pulse, change)
+    job = _Job(loop, panel, box, device, error, hardest_case(box), candidate.device == "ssr", scan, pulse, load)
     try:
         return _settled(job)
     except NoCycle as none:
@@ -94,8 +95,8 @@ def _settled(job: _Job) -> ProportionedSettings | Unsized:
 
 
 def _wanted(job: _Job, series: Sequence[float], least: float, most: float) -> float:
-    """Return the cycle C5 asks for: the longest allowed for contacts, the shortest makeable for solid state."""
-    if job.solid_state:
+    """Return the cycle C5 asks for: the longest allowed where anything wears, the shortest makeable where nothing does."""
+    if weakest(job.device) is None:
         return up_in_series(least, series) or series[-1]
     # where even the shortest of the series is too long, it is taken and the rules say so
     return down_in_series(most, series) or series[0]
@@ -104,7 +105,7 @@ def _wanted(job: _Job, series: Sequence[float], least: float, most: float) -> fl
 def _workable(job: _Job, falling: Sequence[float]) -> tuple[float, Start | Unsized, Bound | None]:
     """Return the longest cycle of a rising list at which the latched loop keeps its margins and holds the sudden load."""
     narrowed: Bound | None = None
-    longest = falling[-1]
+    longest, nearest = falling[-1], falling[0]
     start: Start | Unsized = Unsized("no cycle time was tried")
     for cycle in reversed(falling):
         start = _start(job, cycle)
@@ -115,9 +116,11 @@ def _workable(job: _Job, falling: Sequence[float]) -> tuple[float, Start | Unsiz
             if cycle < longest:
                 narrowed = Bound(narrowed.rule if narrowed else "C2", cycle, narrowed.words if narrowed else "")
             return cycle, start, narrowed
+        if nearest == falling[0] and short.words == LOAD:
+            nearest = cycle
         narrowed = short
-    # none of the series does: the longest that the other rules allow, and C2 or T2 says what is broken
-    return longest, _start(job, longest), None
+    # none of the series does: the longest that keeps its margins, else the shortest, and C2 or T2 says what is broken
+    return nearest, _start(job, nearest), None
 
 
 def _falls_short(job: _Job, start: Start) -> Bound | None:
@@ -125,20 +128,21 @@ def _falls_short(job: _Job, start: Start) -> Bound | None:
         return Bound("C2", start.cycle_time, "the latched loop is unstable at a longer cycle")
     if start.margins.sensitivity > MOST_SENSITIVITY or start.margins.gain < LEAST_GAIN_MARGIN:
         return Bound("T2", start.cycle_time, "a longer cycle leaves too little margin")
-    if job.change is not None and not _holds_load(job, start):
-        return Bound("C2", start.cycle_time, "a longer cycle lets the sudden load carry the value too far")
+    if job.load is not None and not _holds_load(job, start):
+        return Bound("C2", start.cycle_time, LOAD)
     return None
 
 
 def _holds_load(job: _Job, start: Start) -> bool:
-    assert job.change is not None  # noqa: S101  asked only where a sudden load is declared
+    assert job.load is not None  # noqa: S101  asked only where a sudden load is declared
     tolerance = min(float(job.loop.need.tolerance.above), float(job.loop.need.tolerance.below))
     error = job.error.root_sum if not isinstance(job.error, Unsized) else 0.0
-    room = tolerance - error
+    ripple = _predict_ripple(job.box, start.cycle_time)
+    room = tolerance - error - max(ripple.above.value, ripple.below.value)
     # the first estimate is an upper bound for most plants: simulate only where it does not settle the question
-    if estimated_deviation(start, job.change) <= 0.5 * room:
+    if estimated_deviation(start, job.load) <= 0.5 * room:
         return True
-    return simulated_deviation(start, job.change) <= room
+    return simulated_deviation(start, job.load) <= room
 
 
 def _start(job: _Job, cycle: float) -> Start | Unsized:
@@ -175,11 +179,11 @@ def half_cycle(panel: Panel) -> float:
 
 def least_pulse(device: DeviceChoice | Unsized, loop: Loop, panel: Panel, scan: float, *, solid_state: bool) -> float:
     """Return the shortest pulse that the whole chain can make [s]."""
+    own = float(getattr(loop.element, "min_pulse", None) or 0.0)
     if solid_state:
-        return half_cycle(panel)
+        return max(half_cycle(panel), own)
     chain = () if isinstance(device, Unsized) else device.chain
     moving = sum(contact.pull_in + contact.drop_out for contact in chain)
-    own = float(getattr(loop.element, "min_pulse", None) or 0.0)
     return max(scan, moving, own)
 
 
@@ -188,7 +192,7 @@ def _first_bounds(job: _Job) -> tuple[Bound, ...]:
     share, tolerance = float(job.panel.house.swing_share), job.loop.need.tolerance
     ripple = _longest_cycle(job.box, share * float(tolerance.above), share * float(tolerance.below))
     bounds = [Bound("C1", ripple, "the ripple's share of the tolerance")]
-    if job.change is None:
+    if job.load is None:
         bare = start_of(job.loop, job.hardest, scan=job.scan)
         if not isinstance(bare, Unsized) and bare.settings.reduced is not None:
             delay = bare.settings.reduced.delay.total
@@ -199,20 +203,24 @@ def _first_bounds(job: _Job) -> tuple[Bound, ...]:
 _Bounds = tuple[tuple[Bound, ...], tuple[Bound, ...]]
 
 
-def _result(job: _Job, cycle: float, start: Start, window: tuple[float, float], bounds: _Bounds, *, by_designer: bool) -> ProportionedSettings:
-    ripple = _predict_ripple(job.box, cycle)
+def _result(
+    job: _Job, cycle: float, start: Start, window: tuple[float, float], bounds: _Bounds, *, by_designer: bool
+) -> ProportionedSettings:
+    pulse = least_pulse(job.device, job.loop, job.panel, job.scan, solid_state=job.solid_state)
+    ripple = _predict_ripple(job.box, cycle, pulse, pulse)
     low, high = asked_duties(job.box)
-    deviation = simulated_deviation(start, job.change) if job.change is not None else None
+    deviation = simulated_deviation(start, job.load) if job.load is not None else None
     tuning = tuning_of(start, job.box, job.loop, deviation)
     operations = hours_per_year(job.loop, job.panel) * HOUR / cycle
     last = weakest(job.device)
     life = life_in_years(last.operations, operations) if last else None
-    pulse = least_pulse(job.device, job.loop, job.panel, job.scan, solid_state=job.solid_state)
     figures = _figures(cycle, ripple, (low, high), operations, life, last.operations if last else None)
     assumptions: tuple[Assumption, ...] = ()
     if job.solid_state:
         assumptions = (
-            Assumption("controllers.scan", "timed in half-cycles", "a logic output times its pulses itself, not once a scan (common practice)"),
+            Assumption(
+                "controllers.scan", "timed in half-cycles", "a logic output times its pulses itself, not once a scan (common practice)"
+            ),
         )
     return ProportionedSettings(
         cycle_time=cycle, least=window[0], most=window[1], least_bounds=bounds[0], most_bounds=bounds[1], ripple=ripple,

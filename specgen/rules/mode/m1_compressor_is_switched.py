@@ -2,7 +2,7 @@
 
 from specgen.core.say import per_hour, seconds, share
 from specgen.rules.base import Case, Finding, Rule
-from specgen.rules.declared import number
+from specgen.rules.declared import longest_asked, number
 from specgen.sizing.settings import ProportionedSettings
 
 rule = Rule(
@@ -26,7 +26,7 @@ def examine(case: Case) -> Finding:
     starts = number(case, "element.starts_per_hour") or 0.0
     interval = 3600 / starts if starts > 0 else 0.0
     settings = case.settings
-    cycle = settings.cycle_time if isinstance(settings, ProportionedSettings) else float(case.panel.house.cycle_time_series[-1])
+    cycle = settings.cycle_time if isinstance(settings, ProportionedSettings) else longest_asked(case)
     pulse, least_cycle = LOW * cycle, max(run / LOW, rest / (1 - HIGH), interval)
     needed = "; the cycle would have to be {least_cycle}."
     if pulse < run:

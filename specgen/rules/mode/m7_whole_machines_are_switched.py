@@ -2,7 +2,7 @@
 
 from specgen.core.say import Said, per_hour, seconds, share
 from specgen.rules.base import Case, Finding, Rule
-from specgen.rules.declared import number
+from specgen.rules.declared import longest_asked, number
 from specgen.sizing.settings import ProportionedSettings
 
 rule = Rule(code="M7", name="What runs whole is switched", weight="must")
@@ -36,7 +36,7 @@ def _pulsed(case: Case, starts: float | None) -> Finding:
     if case.candidate.mode != "time_proportioned":
         return rule.judge(holds=False, text="It starts and stops whole and follows no such output.")
     settings = case.settings
-    cycle = settings.cycle_time if isinstance(settings, ProportionedSettings) else float(case.panel.house.cycle_time_series[-1])
+    cycle = settings.cycle_time if isinstance(settings, ProportionedSettings) else longest_asked(case)
     words: dict[str, Said] = {"cycle": seconds(cycle), "rate": per_hour(3600 / cycle), "pulse": seconds(LOW * cycle), "low": share(LOW)}
     text = "A {cycle} cycle would start it {rate} and run it for {pulse} at {low}"
     if starts is not None:
