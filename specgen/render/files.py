@@ -55,7 +55,7 @@ def data_files(dossier: Dossier) -> dict[str, bytes]:
     place = Place("data/loops.csv")
     files = {
         "data/record.json": dump(record),
-        "data/loops.csv": csv_bytes(loops_table(dossier, place)),
+        "data/loops.csv": csv_bytes(loops_table(dossier)),
         "data/outputs.csv": csv_bytes(outputs_table(dossier, place)),
         "data/open-points.csv": csv_bytes(open_points_table(dossier, place)),
         "data/assumptions.csv": csv_bytes(assumptions_table(dossier)),

@@ -15,12 +15,51 @@ _WEIGHT_ORDER = {"must": 0, "should": 1, "note": 2}
 
 def loops_page(dossier: Dossier, place: Place) -> PageView:
     """Build the register of loops."""
-    section = Section("1", "loops", "Loops", (loops_table(dossier, place),))
-    return frame(dossier, place, "Loops", (section,), kicker="Every loop with its decision and the figures it rests on")
+    columns = (
+        Column("Tag"),
+        Column("Service"),
+        Column("Verdict"),
+        Column("Decision"),
+        Column("Stays within", number=True),
+        Column("Allowed", number=True),
+        Column("Contact life", "years", number=True),
+    )
+    rows: list[Row] = []
+    area = None
+    for loop in dossier.design.loops:
+        if loop.loop.area != area:
+            area = loop.loop.area
+            rows.append(Row(heading=area))
+        rows.append(_loop_row(dossier, place, loop))
+    table = Table("", columns, tuple(rows), wide=True, empty="No loop could be decided.")
+    return frame(
+        dossier,
+        place,
+        "Loops",
+        (Section("1", "loops", "Loops", (table,)),),
+        kicker="Every loop with its decision and the figures it rests on",
+    )
 
 
-def loops_table(dossier: Dossier, place: Place) -> Table:
-    """Build the table of all loops; excursion and tolerance in each loop's own unit."""
+def _loop_row(dossier: Dossier, place: Place, decided: DecidedLoop) -> Row:
+    writer = dossier.writers[decided.tag]
+    short = summary_of(decided)
+    excursion, life = short.excursion, short.contact_life
+    decision = f"{MODES[short.mode]}, {short.device}"
+    cells = (
+        word(decided.tag, place.sheet(decided.tag)),
+        word(decided.loop.service),
+        verdict_cell(decided.verdict),
+        word(decision, aside=short.entered_with(writer)),
+        NO_NUMBER if excursion is None else number(writer.excursion(excursion, short.allowed), writer.shown_change(excursion)),
+        number(writer.setting(short.allowed), writer.shown_change(short.allowed)),
+        NO_NUMBER if life is None else number(writer.years_number(life), life),
+    )
+    return Row(cells, anchor=decided.tag)
+
+
+def loops_table(dossier: Dossier) -> Table:
+    """Build the table of loops for files, every fact in a column of its own; excursion and tolerance in each loop's own unit."""
     columns = (
         Column("Tag", export="tag"),
         Column("Service", export="service"),
@@ -29,34 +68,24 @@ def loops_table(dossier: Dossier, place: Place) -> Table:
         Column("Mode", export="mode"),
         Column("Through", export="device"),
         Column("Entered", export="entered"),
-        Column("Stays within", number=True, export="within +- [unit]"),
-        Column("Allowed", number=True, export="allowed +- [unit]"),
+        Column("Stays within", number=True, export="stays within [unit]"),
+        Column("Allowed", number=True, export="allowed [unit]"),
         Column("Unit", export="unit"),
-        Column("Contact life", "years", number=True, export="contact life [year]"),
+        Column("Contact life", number=True, export="contact life [year]"),
     )
-    rows = tuple(_loop_row(dossier, place, loop) for loop in dossier.design.loops)
-    return Table("", columns, rows, wide=True, empty="No loop could be decided.")
+    return Table("", columns, tuple(_loop_fields(dossier, loop) for loop in dossier.design.loops))
 
 
-def _loop_row(dossier: Dossier, place: Place, decided: DecidedLoop) -> Row:
+def _loop_fields(dossier: Dossier, decided: DecidedLoop) -> Row:
     writer = dossier.writers[decided.tag]
     short = summary_of(decided)
     loop = decided.loop
-    excursion, life, entered = short.excursion, short.contact_life, short.entered_with(writer)
-    cells = (
-        word(loop.tag, place.sheet(loop.tag)),
-        word(loop.service),
-        word(loop.area),
-        verdict_cell(decided.verdict),
-        word(MODES[short.mode]),
-        word(short.device),
-        word(entered) if entered else DASH,
-        NO_NUMBER if excursion is None else number(writer.excursion_number(excursion, short.allowed), writer.shown_change(excursion)),
-        number(writer.allowed_number(short.allowed), writer.shown_change(short.allowed)),
-        word(writer.change_unit),
-        NO_NUMBER if life is None else number(writer.years_number(life), life),
-    )
-    return Row(cells, anchor=loop.tag)
+    excursion, life = short.excursion, short.contact_life
+    within = NO_NUMBER if excursion is None else number("", writer.shown_change(excursion))
+    allowed = number("", writer.shown_change(short.allowed))
+    lasts = NO_NUMBER if life is None else number("", life)
+    texts = (loop.tag, loop.service, loop.area, decided.verdict, MODES[short.mode], short.device, short.entered_with(writer))
+    return Row((*(word(text) for text in texts), within, allowed, word(writer.change_unit), lasts))
 
 
 def open_points_page(dossier: Dossier, place: Place) -> PageView:

@@ -9,7 +9,7 @@ from specgen.view.words import FAMILIES, OUTCOMES, capital, counted, with_stop
 
 _TOLD = ("broken", "unanswered", "overridden")
 MOST_NAMED = 6
-_COLUMNS = (Column("Rule"), Column("Weight"), Column("What it asks, and why"), Column("Source"), Column("Where it bore"))
+_COLUMNS = (Column("Rule"), Column("What it asks, and why"), Column("Source"), Column("Where it bore"))
 
 
 def rule_book_page(dossier: Dossier, place: Place) -> PageView:
@@ -36,8 +36,7 @@ def _row(loaded: LoadedRule, bore: dict[str, list[str]], place: Place) -> Row:
     why = " ".join(loaded.explanation.split())
     return Row(
         (
-            word(rule.code, aside=rule.name),
-            word(rule.weight),
+            word(f"{rule.code} {rule.weight}", aside=rule.name),
             Cell(with_stop(capital(loaded.sentence)), aside=why),
             word("; ".join(rule.cites)),
             Cell("", spans=_where(bore, place)),
