@@ -16,6 +16,8 @@ from specgen.core.say import Phrasing
 from specgen.process.axis import Axis, Declared
 from specgen.process.plant import Integrating, ProcessModel, SelfRegulating
 
+MOST_KEPT = 4096
+
 
 @dataclass(frozen=True, slots=True)
 class Unmodelled:
@@ -76,6 +78,8 @@ class Box:
     form: str
     boost: Axis | None = None
     free: tuple[str, ...] = field(init=False, compare=False, repr=False)
+    # the searches for different figures ask for the same cases again and again
+    _plants: dict[Point, ProcessModel] = field(init=False, compare=False, repr=False)
 
     def __post_init__(self) -> None:
         held = self.ambient is not None and (self.ambient.varies or self.setpoint.varies)
@@ -88,6 +92,7 @@ class Box:
             "lag": self.lag.varies,
             "sensor_lag": self.sensor_lag.varies,
         }
+        object.__setattr__(self, "_plants", {})
         object.__setattr__(self, "free", tuple(name for name, does in varies.items() if does))
 
     def loss_at(self, point: Point) -> float:
@@ -118,8 +123,17 @@ class Box:
 
     def plant_at(self, point: Point, *, whole: bool = False) -> ProcessModel:
         """Return the plant of a case; with ``whole``, with the heat capacity of every body."""
+        if whole:
+            return self._made(point, self.whole_capacity.at(point.capacity))
+        known = self._plants.get(point)
+        if known is None:
+            if len(self._plants) >= MOST_KEPT:
+                self._plants.clear()
+            known = self._plants[point] = self._made(point, self.capacity.at(point.capacity))
+        return known
+
+    def _made(self, point: Point, capacity: float) -> ProcessModel:
         (load, strength), loss = self.sides_at(point), self.loss.at(point.loss)
-        capacity = (self.whole_capacity if whole else self.capacity).at(point.capacity)
         theta, lag = self.dead_time.at(point.dead_time), self.lag.at(point.lag)
         sensor_lag = self.sensor_lag.at(point.sensor_lag)
         if loss > 0:

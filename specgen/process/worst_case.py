@@ -8,6 +8,7 @@ figure stays within 0.1 percent. Cases that rest or do not reach are cut off the
 
 from collections.abc import Callable, Iterator, Mapping, Sequence
 from dataclasses import dataclass
+from functools import lru_cache
 from itertools import product
 from math import inf
 from typing import Literal
@@ -124,7 +125,7 @@ def worst(
     known = among if among is not None else tuple(candidates(box, high, low, duties))
     starts = [pinned] if pinned is not None and not scattered else box.ends(*PINNED)
     tried = [start._replace(strength=at.strength, load=at.load, loss=at.loss) for start in starts for at in known]
-    tried += spread(box, scattered)
+    tried += spread(box.free, scattered)
     ranked = sorted(tried, key=judge, reverse=True)
     if not ranked or judge(ranked[0]) == -inf:
         point = box.duty_low[1] if box.rests else box.reach.point
@@ -259,14 +260,15 @@ def _crossing(rule: Callable[[float], float], a: float, b: float, close: float =
     return at
 
 
-def spread(box: Box, count: int) -> list[Point]:
+@lru_cache(maxsize=128)
+def spread(free: tuple[str, ...], count: int) -> tuple[Point, ...]:
     """Return cases spread evenly through the axes that vary: Halton's sequence, so that every run tries the same ones.
 
     References
     ----------
     Halton, Numerische Mathematik 2 (1960) 84-90; standing: from memory.
     """
-    return [Point(**{name: _halton(i, base) for name, base in zip(box.free, BASES, strict=False)}) for i in range(1, count + 1)]
+    return tuple(Point(**{name: _halton(i, base) for name, base in zip(free, BASES, strict=False)}) for i in range(1, count + 1))
 
 
 def _halton(index: int, base: int) -> float:

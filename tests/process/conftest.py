@@ -26,6 +26,7 @@ class Observed(NamedTuple):
     t_off: float
     measured_peak: float
     measured_trough: float
+    settled: bool
 
 
 def rates(plant, full):
@@ -46,7 +47,7 @@ def rates(plant, full):
 
 
 def follow_relay(  # noqa: C901, PLR0912, PLR0915 - one event loop, kept whole so that it can be checked by eye
-    plant, high, low, min_run=0.0, min_rest=0.0, start=0.0, cycles=200, rtol=1e-10
+    plant, high, low, min_run=0.0, min_rest=0.0, start=0.0, cycles=400, rtol=1e-10
 ):
     """Follow the loop from ``start`` until two cycles agree to 1e-8, or for ``cycles``; return the last cycle."""
     read = 2 if plant.sensor_lag else 1
@@ -57,6 +58,7 @@ def follow_relay(  # noqa: C901, PLR0912, PLR0915 - one event loop, kept whole s
     pending = []
     marks, top, bottom = [], [], []
     states = []
+    settled = False
     tops, bottoms = [], []
     horizon = 1e3 * (scale / plant.gain_per_second) * 50
     while True:
@@ -89,7 +91,8 @@ def follow_relay(  # noqa: C901, PLR0912, PLR0915 - one event loop, kept whole s
                 on, off = marks[-2] - marks[-3], marks[-1] - marks[-2]
                 was_on, was_off = marks[-4] - marks[-5], marks[-3] - marks[-4]
                 steady = abs(np.subtract(state, states[-3])).max() < 1e-9 * scale
-                if steady and abs(on - was_on) < 1e-9 * on and abs(off - was_off) < 1e-9 * off:
+                settled = bool(steady and abs(on - was_on) < 1e-9 * on and abs(off - was_off) < 1e-9 * off)
+                if settled:
                     break
             if len(marks) > 2 * cycles:
                 break
@@ -119,7 +122,7 @@ def follow_relay(  # noqa: C901, PLR0912, PLR0915 - one event loop, kept whole s
             plant_input = not plant_input
     on, off = marks[-2] - marks[-3], marks[-1] - marks[-2]
     return Observed(
-        max(y[0] for y in tops), min(y[0] for y in bottoms), on, off, max(y[1] for y in tops), min(y[1] for y in bottoms)
+        max(y[0] for y in tops), min(y[0] for y in bottoms), on, off, max(y[1] for y in tops), min(y[1] for y in bottoms), settled
     )
 
 

