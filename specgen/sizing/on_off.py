@@ -23,6 +23,8 @@ CYCLE = "settled on-off cycle in the worst case of the declared ranges; compared
 _least_differential = remembered(least_differential)
 _widest_differential = remembered(widest_differential)
 _predict_on_off = remembered(predict_on_off)
+ON = "θ + τ ln(1 + (hi − trough)/(y_on − hi)), or the exact cycle with lags"
+OFF = "θ + τ ln(1 + (peak − lo)/(lo − y_off)), or the exact cycle with lags"
 NOISES = 2  # D2: a differential is at least this many times the noise
 
 
@@ -87,7 +89,12 @@ def _settled(
         weakest=last.contact.what if last else "",
         chosen_by="choose" if chosen is not None else "computed",
         warm_up=cold.value if cold is not None and isfinite(cold.value) else None,
-        figures=_figures(enforced, natural, starts, operations, life, last.operations if last else None) + _warm_up_figure(cold),
+        figures=(
+            *_window_figures(bounds, least, most_bound, step, differential, "choose.differential" if chosen is not None else ""),
+            *_point_figures(setpoint, enforced, run, rest),
+            *_figures(enforced, natural, starts, operations, life, last.operations if last else None),
+            *_warm_up_figure(cold),
+        ),
         assumptions=() if placement != "centred" or (loop.choose and loop.choose.placement) else (_CENTRED,),
     )
 
@@ -140,6 +147,8 @@ def _least_bounds(loop: Loop, panel: Panel, box: Box, device: DeviceChoice | Uns
         "rest": ("D6", "the least rest"),
     }  # fmt: skip
     bounds += [Bound(words[name][0], value, words[name][1]) for name, value in found.items()]
+    if per_hour is not None and per_hour <= 0:
+        bounds.append(Bound("D5", inf, "the defrosts alone use up the house's contact life"))
     if own == 0.0:
         bounds.append(Bound("D3", inf, "the defrosts alone use up the starts"))
     return tuple(bounds)
@@ -159,7 +168,46 @@ def _warm_up_figure(cold: FaultCase | None) -> tuple[Figure, ...]:
     if cold is None or not isfinite(cold.value):
         return ()
     source = "first rise from the coldest rest at the lowest supply, every body counted"
-    return (Figure("t_b", "time to the band, longest", "", cold.value, "time", source, {}, cold.text),)
+    formula = "θ + τ ln((y_on − y_cold)/(y_on − y_near)), a second lag starting empty"
+    return (Figure("t_b", "time to the band, longest", formula, cold.value, "time", source, {}, cold.text),)
+
+
+def _window_figures(
+    bounds: tuple[Bound, ...], least: float, most: Bound | None, step: float, differential: float, chosen: str
+) -> list[Figure]:
+    """Return what bounds the differential, and the differential."""
+    how = "the differential at which the exact cycle just keeps the limit, found by its root"
+    given: dict[str, tuple[float, str]] = {}
+    made = []
+    for bound in bounds:
+        if isfinite(bound.limit):
+            declared = bound.rule in ("D1", "D2")
+            made.append(Figure(f"d_{bound.rule}", f"least differential for {bound.words}", "declared" if declared else how,
+                               bound.limit, "change", f"rule {bound.rule}"))  # fmt: skip
+            given[f"d_{bound.rule}"] = max(given.get(f"d_{bound.rule}", (0.0, ""))[0], bound.limit), "change"
+    all_of = f"max({', '.join(given) or 'setting step'})"
+    made.append(Figure("d_min", "least differential", all_of, least, "change", "rules D1 to D6", given))
+    if most is not None:
+        made.append(Figure("d_max", "most differential", how, most.limit, "change", f"rule {most.rule}: {most.words}"))
+    window = {"d_min": (least, "change"), "step": (step, "change")} | ({"d_max": (most.limit, "change")} if most is not None else {})
+    called, formula = "differential, the whole distance between the switch points", "sqrt(d_min d_max) on the setting step, not below d_min"
+    if chosen:
+        made.append(Figure("d", f"{called}, chosen", "chosen", differential, "change", chosen))
+    else:
+        made.append(Figure("d", called, formula, differential, "change", "rules D1 to D6", window))
+    return made
+
+
+def _point_figures(setpoint: float, enforced: OnOffPrediction, run: float, rest: float) -> list[Figure]:
+    """Return the switch points at the declared setpoint, and the least times as declared."""
+    made = []
+    for name, apart, words in (("y_1", enforced.switch_on, "switches on at"), ("y_0", enforced.switch_off, "switches off at")):
+        put_in = {"setpoint": (setpoint, "value"), "Δ": (apart, "change")}
+        made.append(Figure(name, words, "setpoint + Δ, by the placement", setpoint + apart, "value", "definition", put_in))
+    for name, least, words in (("run", run, "least run, enforced"), ("rest", rest, "least rest, enforced")):
+        if least > 0:
+            made.append(Figure(f"t_{name}", words, "declared", least, "time", f"element.min_{name}"))
+    return made
 
 
 def _figures(
@@ -167,15 +215,17 @@ def _figures(
 ) -> tuple[Figure, ...]:
     d = {"d": (enforced.differential, "change")}
     above, below = enforced.above, enforced.below
+    fastest = "t_on + t_off of the fastest case, least times enforced"
     found = [
-        Figure("d", "differential, the whole distance between the switch points", "", enforced.differential, "change", "rules D1 to D6"),
         Figure("e+", "largest excursion above the setpoint", "peak − setpoint", above.value, "change", CYCLE, d, above.text),
         Figure("e−", "largest excursion below the setpoint", "setpoint − trough", below.value, "change", CYCLE, d, below.text),
         Figure("s", "largest swing", "peak − trough", enforced.swing.value, "change", CYCLE, d, enforced.swing.text),
-        Figure("P", "shortest period", "t_on + t_off", enforced.period, "time", CYCLE, d, enforced.starts_per_hour.text),
-        Figure("N", "most starts", "3600 s/P, defrosts added", starts, "per_hour", CYCLE, {"P": (enforced.period, "time")}),
-        Figure("t_on", "shortest on time, without timers", "", natural.shortest_on.value, "time", CYCLE, d, natural.shortest_on.text),
-        Figure("t_off", "shortest off time, without timers", "", natural.shortest_off.value, "time", CYCLE, d, natural.shortest_off.text),
+        Figure("P", "shortest period, from start to start", fastest, enforced.period, "time", CYCLE, d, enforced.starts_per_hour.text),
+        Figure("N", "most starts", "3600 s/P + N_d", starts, "per_hour", CYCLE, {
+            "P": (enforced.period, "time"), "N_d": (starts - enforced.starts_per_hour.value, "per_hour")
+        }),
+        Figure("t_on", "shortest on time, without timers", ON, natural.shortest_on.value, "time", CYCLE, d, natural.shortest_on.text),
+        Figure("t_off", "shortest off time, without timers", OFF, natural.shortest_off.value, "time", CYCLE, d, natural.shortest_off.text),
         Figure(
             "n_op", "operations a year", "N × hours × days", operations, "per_year", "ISO 13849-1 annex C, n_op (from memory)",
             {"N": (starts, "per_hour"), "hours a year": (operations / starts if starts else 0.0, "number")},

@@ -1,6 +1,6 @@
 """Starting values for a loop's worst case, with the margins they leave over all cases."""
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from math import isfinite
 
 from specgen.core.figure import Figure
@@ -120,6 +120,7 @@ def _start_of(hardest: Hardest, choose: Choose | None, cycle_time: float, pulse:
         settings = simc(plant.slope, plant.tau, plant.theta, lags, extra, charged)
     except NothingLimitsTheGainError:
         return Unsized("nothing limits the gain: neither dead time nor lag nor a cycle", ("plant.dead_time",))
+    ruled = settings
     if choose is not None:
         settings = with_choice(settings, choose)
     cases = tuple(_delayed(case, extra) for case in (plant, *hardest.others))
@@ -136,7 +137,7 @@ def _start_of(hardest: Hardest, choose: Choose | None, cycle_time: float, pulse:
     if cycle_time > 0:
         asked = tuple(sorted({*ALWAYS, *duties}))
         stable = stable and all(stable_cycle(case, settings, cycle_time, asked) for case in cases)
-    figures = _figures(settings, hardest, worst, cycle_time)
+    figures = tuple(_figures(settings, ruled, choose, hardest, worst, cycle_time))
     return Start(settings, hardest, cycle_time, charged, extra, worst, stable, figures, _assumed(cycle_time, pulse))
 
 
@@ -166,34 +167,102 @@ def _assumed(cycle_time: float, pulse: Pulse) -> tuple[Assumption, ...]:
     )  # fmt: skip
 
 
-def _figures(settings: Settings, hardest: Hardest, worst: Margins, cycle_time: float) -> tuple[Figure, ...]:
-    plant, case = hardest.dynamics, hardest.text
-    slope = (plant.slope, "change_per_second")
-    found = [Figure("k'", "highest slope with full output", "K/τ, or r_on + r_off", plant.slope, "change_per_second", "plant", {}, case)]
-    reduced = settings.reduced
-    if reduced is not None:
-        parts = {
-            "θ": (reduced.delay.dead_time, "time"), "actuator and scan": (reduced.delay.actuator, "time"),
-            "cycle": (reduced.delay.cycle, "time"), "half of the largest lag left out": (reduced.delay.half_lag, "time"),
-            "other lags": (reduced.delay.other_lags, "time"),
-        }  # fmt: skip
-        used = {name: part for name, part in parts.items() if part[0] > 0}
-        source = SIMC + ", half rule"
-        found.append(Figure("θe", "effective delay", " + ".join(used) or "0", reduced.delay.total, "time", source, used, case))
-    series = "" if settings.derivative_time == 0 else ", series form turned into the ideal one"
-    gain = (settings.gain, "share_per_change")
-    found += [
-        Figure("Kc", "gain", "1/(k' · 2 θe)" + series, settings.gain, "share_per_change", SIMC, {"k'": slope}, case),
-        Figure("Xp", "proportional band", "100 %/Kc", settings.proportional_band, "change", "definition", {"Kc": gain}),
-        Figure("Ti", "integral time", "min(τ, 8 θe)" + series, settings.integral_time, "time", SIMC, {}, case),
-    ]
-    if settings.derivative_time > 0:
-        found.append(Figure("Td", "derivative time", "second lag" + series, settings.derivative_time, "time", SIMC, {}, case))
+def _figures(
+    settings: Settings, ruled: Settings, choose: Choose | None, hardest: Hardest, worst: Margins, cycle_time: float
+) -> list[Figure]:
+    """Return the way from the plant to the settings, ``ruled`` by the published rule, and the margins they leave."""
+    case = hardest.text
+    found = [*_reduced_figures(ruled, hardest), *_ruled_figures(ruled, case)]
+    chosen = {} if choose is None else {name: getattr(choose, name) is not None for name in _CHOSEN}
+    if any(chosen.values()):
+        # the computed ones stay in the Basis under a name of their own, beside what somebody chose instead
+        called = {"Kc": "proportional_band", "Xp": "proportional_band", "Ti": "integral_time", "Td": "derivative_time"}
+        found = [replace(f, name=f"{f.name}, by the rule") if chosen.get(called.get(f.symbol, "")) else f for f in found]
+        found += [figure for name, figure in _chosen_figures(settings).items() if chosen[name]]
     how = "exact frequency response with e^(-θs)" + ("; the latched loop's own one-cycle map where that is worse" if cycle_time > 0 else "")
     source = "frequency search, no approximation of the dead time"
     if isfinite(worst.gain):
-        found.append(Figure("GM", "gain margin, worst", how, worst.gain, "number", source, {}, case))
+        found.append(Figure("GM", "gain margin, worst", how, worst.gain, "number", source, {}, WORST))
     if isfinite(worst.phase):
-        found.append(Figure("PM", "phase margin, worst", how, worst.phase, "degrees", source, {}, case))
-    found.append(Figure("Ms", "peak sensitivity, worst", how, worst.sensitivity, "number", source, {}, case))
-    return tuple(found)
+        found.append(Figure("PM", "phase margin, worst", how, worst.phase, "degrees", source, {}, WORST))
+    found.append(Figure("Ms", "peak sensitivity, worst", how, worst.sensitivity, "number", source, {}, WORST))
+    return found
+
+
+WORST = "worst of the steepest and the laziest case, at the longest delay and either end of loss and lags"
+_CHOSEN = ("proportional_band", "integral_time", "derivative_time")
+
+
+def _reduced_figures(ruled: Settings, hardest: Hardest) -> list[Figure]:
+    """Return slope and delay of the hardest case, and of the plant that the half rule makes of it."""
+    plant, case, reduced = hardest.dynamics, hardest.text, ruled.reduced
+    settles = isfinite(plant.tau)
+    tau = {"τ": (plant.tau, "time")} if settles else {}
+    put_in = {"K": (plant.slope * plant.tau, "change")} | tau if settles else {}
+    formula = "K/τ" if settles else "r_on + r_off"
+    found = [Figure("k'", "highest slope with full output", formula, plant.slope, "change_per_second", "plant", put_in, case)]
+    if reduced is None:
+        return found
+    parts = {
+        "θ": (reduced.delay.dead_time, "time"), "actuator and scan": (reduced.delay.actuator, "time"),
+        "cycle": (reduced.delay.cycle, "time"), "half of the largest lag left out": (reduced.delay.half_lag, "time"),
+        "other lags": (reduced.delay.other_lags, "time"),
+    }  # fmt: skip
+    used = {name: part for name, part in parts.items() if part[0] > 0}
+    source = SIMC + ", half rule"
+    found.append(Figure("θe", "effective delay", " + ".join(used) or "0", reduced.delay.total, "time", source, used, case))
+    if settles:
+        lags = {"lag": (plant.lag, "time"), "sensor lag": (plant.sensor_lag, "time")}
+        given = tau | {name: lag for name, lag in lags.items() if lag[0] > 0}
+        kept = "τ, and half of the largest lag left out where there is no derivative action"
+        found.append(Figure("τ1", "time constant that is kept", kept, reduced.tau, "time", source, given, case))
+        flatter = plant.slope * plant.tau / reduced.tau
+        slope = {"k'": (plant.slope, "change_per_second")} | tau | {"τ1": (reduced.tau, "time")}
+        found.append(Figure("k1", "slope of the plant that is kept", "k' τ/τ1", flatter, "change_per_second", source, slope, case))
+    if reduced.lag > 0:
+        found.append(Figure("τ2", "second time constant that is kept", "half rule", reduced.lag, "time", source, {}, case))
+    return found
+
+
+def _ruled_figures(ruled: Settings, case: str) -> list[Figure]:
+    """Return the settings of the rule, by way of the series form where there is derivative action."""
+    reduced = ruled.reduced
+    assert reduced is not None  # noqa: S101  the rule starts from a reduced plant
+    theta = {"θe": (reduced.delay.total, "time")}
+    slope = 1 / ((ruled.series or (ruled.gain,))[0] * 2 * reduced.delay.total)
+    settles = isfinite(reduced.tau)
+    name = "k1" if settles else "k'"
+    gain_of = {name: (slope, "change_per_second")} | theta
+    time_of = theta | ({"τ1": (reduced.tau, "time")} if settles else {})
+    gain, time = f"1/({name} · 2 θe)", "min(τ1, 8 θe)" if settles else "8 θe"
+    gained = {"Kc": (ruled.gain, "share_per_change")}
+    band = Figure("Xp", "proportional band", "100 %/Kc", ruled.proportional_band, "change", "definition", gained)
+    if ruled.series is None:
+        return [
+            Figure("Kc", "gain", gain, ruled.gain, "share_per_change", SIMC, gain_of, case),
+            band,
+            Figure("Ti", "integral time", time, ruled.integral_time, "time", SIMC, time_of, case),
+        ]
+    own_gain, own_time, own_derivative = ruled.series
+    series = {"Kc'": (own_gain, "share_per_change"), "Ti'": (own_time, "time"), "Td'": (own_derivative, "time")}
+    times = {key: series[key] for key in ("Ti'", "Td'")}
+    ideal = "series form multiplied out"
+    return [
+        Figure("Kc'", "gain of the series form", gain, own_gain, "share_per_change", SIMC, gain_of, case),
+        Figure("Ti'", "integral time of the series form", time, own_time, "time", SIMC, time_of, case),
+        Figure("Td'", "derivative time of the series form", "τ2", own_derivative, "time", SIMC, {"τ2": (reduced.lag, "time")}, case),
+        Figure("Kc", "gain", "Kc' (1 + Td'/Ti')", ruled.gain, "share_per_change", ideal, series, case),
+        band,
+        Figure("Ti", "integral time", "Ti' + Td'", ruled.integral_time, "time", ideal, times, case),
+        Figure("Td", "derivative time", "Td'/(1 + Td'/Ti')", ruled.derivative_time, "time", ideal, times, case),
+    ]
+
+
+def _chosen_figures(settings: Settings) -> dict[str, Figure]:
+    """Return what somebody chose in the place of the rule's settings, by its field."""
+    band, said = settings.proportional_band, "chosen"
+    return {
+        "proportional_band": Figure("Xp", "proportional band, chosen", said, band, "change", "choose.proportional_band"),
+        "integral_time": Figure("Ti", "integral time, chosen", said, settings.integral_time, "time", "choose.integral_time"),
+        "derivative_time": Figure("Td", "derivative time, chosen", said, settings.derivative_time, "time", "choose.derivative_time"),
+    }

@@ -2,18 +2,17 @@
 
 from collections.abc import Sequence
 from dataclasses import dataclass
-from math import isfinite
 
-from specgen.core.figure import Figure
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel
 from specgen.process.box import Box, Unmodelled
 from specgen.process.limit_cycle import NoCycle
-from specgen.process.time_proportioned import RipplePrediction, longest_cycle, predict_ripple
+from specgen.process.time_proportioned import longest_cycle, predict_ripple
 from specgen.process.tuning import Pulse
 from specgen.sizing.candidate import Assumption, Candidate, Unsized
 from specgen.sizing.device import DeviceChoice
 from specgen.sizing.measurement import MeasuringError
+from specgen.sizing.proportioned_figures import Bounds, bound_figures, cycle_figure, ripple_figures, wear_figures
 from specgen.sizing.remembered import remembered
 from specgen.sizing.rounding import SLACK, down_in_series, up_in_series
 from specgen.sizing.scan import scan_and_pulse
@@ -30,7 +29,6 @@ LEAST_GAIN_MARGIN = 2.0  # T2
 _longest_cycle = remembered(longest_cycle)
 _predict_ripple = remembered(predict_ripple)
 LOAD = "a longer cycle lets the sudden load carry the value too far"
-RIPPLE = "steady ripple of a pulse train in the worst case of the declared ranges; exact, tests/process"
 
 
 @dataclass(frozen=True, slots=True)
@@ -200,11 +198,8 @@ def _first_bounds(job: _Job) -> tuple[Bound, ...]:
     return tuple(bounds)
 
 
-_Bounds = tuple[tuple[Bound, ...], tuple[Bound, ...]]
-
-
 def _result(
-    job: _Job, cycle: float, start: Start, window: tuple[float, float], bounds: _Bounds, *, by_designer: bool
+    job: _Job, cycle: float, start: Start, window: tuple[float, float], bounds: Bounds, *, by_designer: bool
 ) -> ProportionedSettings:
     pulse = least_pulse(job.device, job.loop, job.panel, job.scan, solid_state=job.solid_state)
     ripple = _predict_ripple(job.box, cycle, pulse, pulse)
@@ -214,7 +209,13 @@ def _result(
     operations = hours_per_year(job.loop, job.panel) * HOUR / cycle
     last = weakest(job.device)
     life = life_in_years(last.operations, operations) if last else None
-    figures = _figures(cycle, ripple, (low, high), operations, life, last.operations if last else None)
+    hours = hours_per_year(job.loop, job.panel)
+    figures = (
+        *bound_figures(bounds),
+        cycle_figure(cycle, bounds, wears=last is not None, by_designer=by_designer),
+        *ripple_figures(cycle, ripple, (low, high)),
+        *wear_figures(cycle, hours, operations, life, last.operations if last else None),
+    )
     assumptions: tuple[Assumption, ...] = ()
     if job.solid_state:
         assumptions = (
@@ -228,24 +229,3 @@ def _result(
         operations_per_year=operations, contact_life=life, weakest=last.contact.what if last else "", tuning=tuning,
         chosen_by="choose" if by_designer else "computed", figures=figures, assumptions=assumptions,
     )  # fmt: skip
-
-
-def _figures(
-    cycle: float, ripple: RipplePrediction, duties: tuple[float, float], operations: float, life: float | None, lasts: float | None
-) -> tuple[Figure, ...]:
-    t, above, below = {"T": (cycle, "time")}, ripple.above, ripple.below
-    low, high = duties
-    found = [
-        Figure("T", "cycle time", "", cycle, "time", "rules C1 to C8"),
-        Figure("r+", "ripple above the mean", "exact, steady", above.value, "change", RIPPLE, t, above.text),
-        Figure("r−", "ripple below the mean", "exact, steady", below.value, "change", RIPPLE, t, below.text),
-        Figure("t_on", "shortest on time", "x T", low * cycle, "time", "rule C4", {**t, "x": (low, "fraction")}),
-        Figure("t_off", "shortest off time", "(1 − x) T", (1 - high) * cycle, "time", "rule C4", {**t, "x": (high, "fraction")}),
-        Figure("n_op", "operations a year", "3600 h/T", operations, "per_year", "ISO 13849-1 annex C, n_op (from memory)", t),
-    ]
-    if life is not None and lasts is not None and isfinite(life):
-        inputs = {"operations": (lasts, "operations"), "n_op": (operations, "per_year")}
-        found.append(Figure("L", "contact life of the weakest contact", "operations/n_op", life, "years", "rule C3", inputs))
-    return tuple(found)
-
-
