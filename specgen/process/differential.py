@@ -10,10 +10,10 @@ from math import inf
 from scipy.optimize import brentq
 
 from specgen.process.box import Box, Point
+from specgen.process.box_edges import candidates
 from specgen.process.limit_cycle import SECONDS_AN_HOUR, NoCycle
 from specgen.process.on_off import OFF, ON, PERIOD, CycleFigure, Placement, Setting, switch_points
 from specgen.process.plant import ProcessModel
-from specgen.process.worst_case import candidates
 
 HELD = 1e-4  # a limit counts as kept within this share
 TURNS = 25

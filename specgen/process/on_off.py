@@ -5,9 +5,10 @@ from dataclasses import dataclass
 from typing import Literal
 
 from specgen.process.box import Box, Point
+from specgen.process.box_edges import candidates
 from specgen.process.limit_cycle import SECONDS_AN_HOUR, Cycle, NoCycle
 from specgen.process.plant import ProcessModel
-from specgen.process.worst_case import Sense, Worst, candidates, worst
+from specgen.process.worst_case import Sense, Worst, worst
 
 Look = Literal["quick", "edges", "thorough"]
 Placement = Literal["centred", "below", "above"]
