@@ -54,7 +54,7 @@ class Suppressor:
     """What is fitted across a coil, and why; ``leakage`` [A] flows through it while the contact is closed."""
 
     across: str
-    kind: str
+    part: str
     because: str
     leakage: float = 0.0
 
@@ -63,14 +63,17 @@ class Suppressor:
 class DeviceChoice:
     """The device that switches or throttles the element, rated for its current.
 
-    ``rating`` and ``current`` in A, absent for a plain signal; ``category`` is the utilisation category the rating is for.
-    ``loss`` [W] is the heat it leaves in the panel at full output, its coil included, None where nothing is known of it (a
-    signal, a controller's own relay). ``drawn`` is what its coils or input, and a load on the control supply, take from that.
-    ``lines`` is how many live conductors feed the load. Of a solid-state switch: ``heat_sink`` [K/W] is the highest thermal
-    resistance its heat sink may have, None where none would do; ``cooling`` how that is reached; ``leakage`` [A]; ``i2t``
-    [A2 s] is what it survives, also of a power controller where its data give it.
-    ``drives`` is what the controller's output is asked for, ``undriven`` why that is not known; ``suppressors`` are fitted
-    across coils. ``isolator`` names the contactor that opens every line where the device leaves one live.
+    ``rating`` and ``current`` in A, absent for a plain signal; ``category`` is the utilisation category the rating is for;
+    ``lines`` is how many live conductors feed the load. ``loss`` [W] is the heat it leaves in the panel at full output, its
+    coil included, None where nothing is known of it (a signal, a controller's own relay). ``drawn`` is what its coils or
+    input, and a load on the control supply, take from that; ``drives`` what the controller's output is asked for,
+    ``undriven`` why that is not known; ``suppressors`` are fitted across coils.
+
+    Of a solid-state switch: ``heat_sink`` [K/W] is the highest thermal resistance its heat sink may have, None where none
+    would do; ``cooling`` how that is reached, ``sink_margin`` how many times what a fan reaches; ``leakage`` [A]; ``i2t``
+    [A2 s] what it survives, also of a power controller where its data give it; ``isolator`` names the contactor that opens
+    every line where the device leaves one live.
+
     ``because`` says why it is not the smallest that carries the load; empty where it is.
     """
 
@@ -88,6 +91,7 @@ class DeviceChoice:
     loss: float | None = None
     heat_sink: float | None = None
     cooling: Literal["", "natural", "forced", "none"] = ""
+    sink_margin: float | None = None
     leakage: float | None = None
     i2t: float | None = None
     lines: int = 0

@@ -91,4 +91,5 @@ def _explained(
     else:
         gain = f"its contacts last {digits(has)} years; with {instead}, {digits(had)} years"
     lasted = Figure("L_0", f"contact life with {instead}", "operations/n_op", had, "years", "rules C3 and D5")
-    return replace(taken, because=f"{taken.name}{through} is taken: {gain}.", figures=(*taken.figures, lasted))
+    said = f"{taken.name}{through} is taken: {gain}."
+    return replace(taken, because=f"{small.because} {said}".strip(), figures=(*taken.figures, lasted))

@@ -53,12 +53,13 @@ def pole_loss(current: float, on_drop: float, slope_resistance: float) -> float:
 class Cooled:
     """Loss of all switched poles [W], the heat sink they need [K/W], and how that is cooled.
 
-    ``resistance`` is None where no heat sink keeps the junction below its limit.
+    ``resistance`` is None where no heat sink keeps the junction below its limit; ``margin`` is it over what a fan reaches.
     """
 
     loss: float
     resistance: float | None
     cooling: Cooling
+    margin: float | None
     figures: tuple[Figure, ...]
 
 
@@ -99,10 +100,6 @@ def cooled(device: SolidState, current: float, poles: int, panel: Panel, catalog
         Figure("P_v", "loss in the panel at full output", "p P_p", total, "power", SINE, given_all),
         Figure("R_s", "highest thermal resistance of the heat sink", SINK, found, "thermal_resistance", SERIES, given),
     )
-    return Cooled(total, found if found > 0 else None, _cooling(found, catalogue), figures)
-
-
-def _cooling(resistance: float, catalogue: Catalogue) -> Cooling:
-    if resistance >= catalogue.practice("heat_sink_natural").value.quantity:
-        return "natural"
-    return "forced" if resistance >= catalogue.practice("heat_sink_forced").value.quantity else "none"
+    natural, forced = (float(catalogue.practice(f"heat_sink_{how}").value.quantity) for how in ("natural", "forced"))
+    cooling: Cooling = "natural" if found >= natural else "forced" if found >= forced else "none"
+    return Cooled(total, found if found > 0 else None, cooling, found / forced if found > 0 else None, figures)

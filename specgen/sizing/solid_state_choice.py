@@ -1,5 +1,7 @@
 """A solid-state switch or a power controller at the load."""
 
+from dataclasses import replace
+
 from specgen.catalogue.load import Catalogue
 from specgen.core.figure import Figure
 from specgen.model.devices import PowerController, SolidState
@@ -10,6 +12,7 @@ from specgen.sizing.burden import analogue_drive
 from specgen.sizing.candidate import Assumption, ControllerOutputKind, Unsized, Unsuited
 from specgen.sizing.chain import contact, typical
 from specgen.sizing.connection import Connection, control_connection
+from specgen.sizing.contactor_choice import contactor_choices
 from specgen.sizing.controller import OutputSide, controller_side
 from specgen.sizing.current import LoadCurrent, load_current
 from specgen.sizing.device import Contact, DeviceChoice, Drawn, Drive
@@ -17,8 +20,10 @@ from specgen.sizing.solid_state import cooled
 
 LEAST_SWITCHED = {3: 2, 2: 1, 1: 1}
 """Live conductors that must at least be switched so that no current flows."""
+PHASES = 3
 COOLINGS = ("natural", "forced", "none")
 """How a heat sink is cooled, in the order of choice."""
+HOT = {"forced": "{} carries the load and would need a fan on its heat sink.", "none": "{} carries the load and gets too hot on any heat sink."}
 
 
 def solid_state_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue) -> tuple[DeviceChoice, ...] | Unsized:
@@ -65,7 +70,33 @@ def solid_state_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Cat
     made = [_one(device, load, panel, catalogue) for device in covering]
     found = [choice for choice in made if isinstance(choice, DeviceChoice)]
     found.sort(key=lambda choice: (choice.poles < lines, COOLINGS.index(choice.cooling)))
-    return tuple(found) or next(choice for choice in made if isinstance(choice, Unsized))
+    if not found:
+        return next(choice for choice in made if isinstance(choice, Unsized))
+    isolating = contactor_choices(loop, panel, catalogue) if any(_leaves_live(choice) for choice in found) else ()
+    isolator = None if isinstance(isolating, Unsized) or not isolating else isolating[0]
+    first = next(choice for choice in made if isinstance(choice, DeviceChoice))
+    if found[0] is not first and first.cooling != found[0].cooling:
+        found = [replace(choice, because=HOT[first.cooling].format(first.name)) for choice in found]
+    return tuple(_isolated(choice, isolator) if _leaves_live(choice) else choice for choice in found)
+
+
+def _leaves_live(choice: DeviceChoice) -> bool:
+    """Tell whether one line of a three-phase load stays closed."""
+    return choice.poles < choice.lines == PHASES
+
+
+def _isolated(choice: DeviceChoice, isolator: DeviceChoice | None) -> DeviceChoice:
+    """Add the contactor that opens every line upstream, with its heat and its coil; without one rule O8 is broken."""
+    if isolator is None:
+        return choice
+    loss = (choice.loss or 0.0) + (isolator.loss or 0.0)
+    given = {"P_v": (choice.loss or 0.0, "power"), "P_q": (isolator.loss or 0.0, "power")}
+    source = "rule O8: the device leaves a line live"
+    both = Figure("P_v+q", "loss in the panel with the isolation contactor", "P_v + P_q", loss, "power", source, given)
+    return replace(
+        choice, isolator=isolator.name, loss=loss, drawn=(*choice.drawn, *isolator.drawn), figures=(*choice.figures, both),
+        assumptions=(*choice.assumptions, *isolator.assumptions), suppressors=(*choice.suppressors, *isolator.suppressors),
+    )  # fmt: skip
 
 
 def _one(device: SolidState, load: LoadCurrent, panel: Panel, catalogue: Catalogue) -> DeviceChoice | Unsized:
@@ -94,6 +125,7 @@ def _one(device: SolidState, load: LoadCurrent, panel: Panel, catalogue: Catalog
         loss=heat.loss,
         heat_sink=heat.resistance,
         cooling=heat.cooling,
+        sink_margin=heat.margin,
         leakage=float(device.leakage),
         i2t=float(device.i2t),
         lines=load.connection.lines,

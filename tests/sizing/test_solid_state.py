@@ -117,6 +117,9 @@ def test_a_larger_device_where_the_smallest_gets_too_hot(ssr):
     loss = 2 * 2**0.5 / pi * current + 0.01 * current**2
     hot, fan, cool = device("hot", "25 A", "3.3 K/W"), device("fan", "30 A", "2.9 K/W"), device("cool", "40 A", "0.6 K/W")
     assert ssr(element, devices=[hot, fan, cool]).name == "cool"
+    assert ssr(element, devices=[hot, fan, cool]).because == "hot carries the load and gets too hot on any heat sink."
+    assert ssr(element, devices=[fan, cool]).because == "fan carries the load and would need a fan on its heat sink."
+    assert ssr(element, devices=[cool]).because == ""
     found = ssr(element, devices=[hot, fan])
     assert (found.name, found.cooling) == ("fan", "forced")
     assert found.heat_sink == pytest.approx(80 / loss - 3.0)

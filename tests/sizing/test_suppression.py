@@ -26,7 +26,7 @@ def choose(loop, panel, catalogue):
 
 def test_direct_current_takes_a_diode_that_lets_go_in_time(choose):
     found = choose("contactor", HEATER)
-    assert [(s.across, s.kind) for s in found.suppressors] == [("the coil of contactor class 9, d.c. coil", "diode with Zener diode")]
+    assert [(s.across, s.part) for s in found.suppressors] == [("the coil of contactor class 9, d.c. coil", "diode with Zener diode")]
 
 
 def test_alternating_current_by_what_the_rc_unit_leaks(choose):
@@ -35,8 +35,8 @@ def test_alternating_current_by_what_the_rc_unit_leaks(choose):
     control = {"voltage": "230 V", "kind": "ac", "capacity": "5 A"}
     small = choose("contactor", HEATER, control_supply=control)
     large = choose("contactor", HEATER | {"power": "66 kW"}, control_supply=control)
-    assert small.suppressors[0].kind == "varistor"
-    assert (large.suppressors[0].kind, large.suppressors[0].leakage) == ("RC unit 100 nF, 100 ohm", rc_leakage(230, 50))
+    assert small.suppressors[0].part == "varistor"
+    assert (large.suppressors[0].part, large.suppressors[0].leakage) == ("RC unit 100 nF, 100 ohm", rc_leakage(230, 50))
 
 
 def test_a_coil_as_load_has_one_of_its_own(choose):
@@ -44,7 +44,7 @@ def test_a_coil_as_load_has_one_of_its_own(choose):
     assert [s.across for s in found.suppressors] == ["the element"]
     mains = choose("relay", SOLENOID | {"voltage": "230 V"})
     # 9 W at 230 V: 39 mA and 10 percent more; 7.2 mA is too near
-    assert mains.suppressors[-1].kind == "varistor"
+    assert mains.suppressors[-1].part == "varistor"
 
 
 def test_heat_of_a_contactor_by_hand(choose):

@@ -8,6 +8,7 @@ from specgen.sizing.candidate import Unsized, Unsuited
 rule = Rule(code="O1", name="Rated current", weight="must")
 
 LISTS = frozenset({"devices.contactors", "devices.relays", "devices.ssrs", "devices.power_controllers"})
+DRIVES = frozenset({"controllers.outputs", "control_supply"})
 
 
 def examine(case: Case) -> Finding:
@@ -16,6 +17,8 @@ def examine(case: Case) -> Finding:
     if isinstance(device, Unsuited):
         return rule.does_not_apply("This kind of device does not suit the element; there is nothing to rate.")
     if isinstance(device, Unsized):
+        if set(device.needs) & DRIVES and set(device.needs) <= LISTS | DRIVES:
+            return rule.does_not_apply("A device carries the load; whether it can be driven is asked by O6.")
         if set(device.needs) <= LISTS:
             return rule.judge(holds=False, text="Nothing carries the load this way: {because}.", because=device.because)
         return rule.unsized(device)
