@@ -1,7 +1,7 @@
 """What feeds a loop's element: protection, wiring inside, cable to the field, and whether the device survives a fault."""
 
 from collections.abc import Sequence
-from dataclasses import dataclass, field
+from dataclasses import dataclass, field, replace
 from math import ceil, floor
 
 from specgen.catalogue.load import Catalogue
@@ -121,7 +121,10 @@ def surviving(
             return tuple(choices)
         if fed.survival is None or fed.survival.survives is not False:
             kept.append(choice)
-    return tuple(kept or choices)
+    if not kept or kept[0] == choices[0]:
+        return tuple(kept or choices)
+    why = f"{choices[0].name} carries the load and would not survive its own short-circuit protection."
+    return tuple(replace(choice, because=why) for choice in kept)
 
 
 def _split(load: LoadCurrent, count: int, panel: Panel, traits: Traits, catalogue: Catalogue) -> list[int]:
