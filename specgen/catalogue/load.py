@@ -10,6 +10,7 @@ from specgen.catalogue.rows import (
     Converter,
     CoupleClass,
     CoupleFunction,
+    FlickerPoint,
     MotorProduct,
     PlatinumClass,
     PlatinumFunction,
@@ -58,6 +59,7 @@ class Catalogue:
     couple_functions: tuple[Known[CoupleFunction], ...]
     motors: tuple[Known[MotorProduct], ...]
     converters: tuple[Known[Converter], ...]
+    flicker: tuple[Known[FlickerPoint], ...]
     practices: tuple[Known[Practice], ...]
     wiring: Wiring
     rows: tuple[Row, ...]
@@ -198,6 +200,7 @@ def _packaged() -> Catalogue:
         couple_functions=_known("couple_functions", CoupleFunction),
         motors=_known("motors", MotorProduct),
         converters=_known("converters", Converter),
+        flicker=_known("flicker", FlickerPoint),
         practices=_known("practice", Practice),
         wiring=read_wiring(),
         rows=tuple(row for name in table_names() for row in table(name)),

@@ -115,6 +115,13 @@ class Converter(Model):
     share: Fraction | None = None
 
 
+class FlickerPoint(Model):
+    """Changes of voltage a minute, and the relative change at which they are just irritating (Pst = 1)."""
+
+    rate: Number
+    change: Fraction
+
+
 class Practice(Model):
     """A single figure of the trade with its dimension."""
 
