@@ -8,13 +8,13 @@ from specgen.design.types import Examined, Rejected
 from specgen.rules.base import Finding
 from specgen.sizing.candidate import ORDER, Candidate
 
-_LEVELS = (("broken", "must"), ("broken", "should"), ("unanswered", "must"), ("unanswered", "should"))
+LEVELS = (("broken", "must"), ("broken", "should"), ("unanswered", "must"), ("unanswered", "should"))
 BY_ORDER = "M13"
 
 
 def rank(examined: Examined) -> tuple[int, int, int, int, int, float]:
     """Return the order of choice: fewest broken musts and shoulds, fewest unanswered, device, larger margin."""
-    counts = [len(codes(examined, outcome, weight)) for outcome, weight in _LEVELS]
+    counts = [len(codes(examined, outcome, weight)) for outcome, weight in LEVELS]
     return counts[0], counts[1], counts[2], counts[3], ORDER.index(examined.case.candidate.device), -margin(examined)
 
 
@@ -37,7 +37,7 @@ def best(candidates: Sequence[Examined]) -> Examined:
 def separation(chosen: Examined, other: Examined) -> tuple[Finding, ...]:
     """Return the findings of ``other`` that separate it from ``chosen``; empty where only order or margin do."""
     ours, theirs = rank(chosen), rank(other)
-    for level, (outcome, weight) in enumerate(_LEVELS):
+    for level, (outcome, weight) in enumerate(LEVELS):
         if theirs[level] > ours[level]:
             mine = set(codes(chosen, outcome, weight))
             return tuple(f for f in other.findings if f.outcome == outcome and f.weight == weight and f.rule not in mine)

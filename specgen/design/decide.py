@@ -1,7 +1,5 @@
 """Deciding one loop: every candidate sized and examined, the best or the designer's own taken, the rest explained."""
 
-from collections.abc import Mapping
-
 from specgen.catalogue.load import Catalogue
 from specgen.core.diagnostic import Diagnostic
 from specgen.design.assumptions import loop_assumptions
@@ -17,13 +15,14 @@ from specgen.model.traits import Traits, traits_of
 from specgen.process.box import Box, Unmodelled
 from specgen.process.box_of import box_of
 from specgen.rules.base import Case, Finding
-from specgen.rules.engine import examine_all
+from specgen.rules.engine import examine_all, examine_own
 from specgen.sizing.candidate import CANDIDATES, Assumption, Candidate, Device, NoCandidate, Unsized
 from specgen.sizing.continuous import continuous_settings, three_point_settings
 from specgen.sizing.device import DeviceChoice
 from specgen.sizing.device_choice import devices_by_rating
+from specgen.sizing.feeder import feeder_of, surviving
 from specgen.sizing.lasting import longer_lasting
-from specgen.sizing.measurement import MeasuringError, measuring_error
+from specgen.sizing.measurement import measuring_error
 from specgen.sizing.on_off import on_off_settings
 from specgen.sizing.remembered import same_box
 from specgen.sizing.settings import OnOffSettings, Settings
@@ -54,8 +53,8 @@ def decide(read: ReadLoop, panel: Panel, catalogue: Catalogue) -> tuple[DecidedL
     decision, problem = decided_by(read, examined, own)
     if decision is None:
         return None, (problem,) if problem is not None else ()
-    findings = marked(decision, loop.choose, own)
     case = decision.chosen.case
+    findings = (*marked(decision, loop.choose, own), *examine_own(case))
     assumptions = _assumptions(read, traits, case)
     decided = DecidedLoop(
         read=read,
@@ -75,36 +74,44 @@ def examine_candidates(
     loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue, fitted: Fitted | None = None
 ) -> tuple[Examined, ...]:
     """Size every candidate and ask every rule about it; pairs that nobody would wire are left out."""
-    box = box_of(loop, panel, fitted.ranges if fitted is not None else None)
-    if not isinstance(box, Unmodelled):
-        box = same_box(box)  # equal boxes share what was computed for one of them
-    error = measuring_error(loop, panel, catalogue)
-    faults = faults_of(loop, box)
-    devices = {c.device: devices_by_rating(c, loop, panel, traits, catalogue) for c in CANDIDATES if c.mode != "time_proportioned"}
-    sizer = _Sizer(loop, panel, box, error, devices)
-    found = []
-    for candidate in CANDIDATES:
-        if isinstance(devices[candidate.device], NoCandidate):
-            continue
-        device, settings = sizer.sized(candidate)
-        timed = with_times(faults, loop, box, settings)
-        case = Case(loop, panel, traits, candidate, box, device, settings, sizer.on_off_beside(candidate), error, timed)
-        found.append(Examined(case, examine_all(case)))
-    return tuple(found)
+    examination = Examination(loop, panel, traits, catalogue, fitted)
+    cases = (examination.case(candidate) for candidate in CANDIDATES if examination.wired(candidate))
+    return tuple(Examined(case, examine_all(case)) for case in cases)
 
 
-class _Sizer:
-    """Sizes the settings of candidates; what two of them share is computed once."""
+class Examination:
+    """Makes the cases of one loop's candidates; what two of them share is computed once, and nothing before it is asked for."""
 
-    def __init__(
-        self, loop: Loop, panel: Panel, box: Box | Unmodelled, error: MeasuringError | Unsized, devices: Mapping[Device, Sizes]
-    ) -> None:
+    def __init__(self, loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue, fitted: Fitted | None = None) -> None:
+        box = box_of(loop, panel, fitted.ranges if fitted is not None else None)
         self._loop = loop
         self._panel = panel
-        self._box = box
-        self._error = error
-        self._devices = devices
+        self._traits = traits
+        self._catalogue = catalogue
+        # equal boxes share what was computed for one of them
+        self.box: Box | Unmodelled = box if isinstance(box, Unmodelled) else same_box(box)
+        self.error = measuring_error(loop, panel, catalogue)
+        self._faults = faults_of(loop, box)
+        self._devices: dict[Device, Sizes] = {}
         self._on_off: dict[Device, tuple[Sized, Settings | Unsized]] = {}
+
+    def wired(self, candidate: Candidate) -> bool:
+        """Tell whether anybody would wire such a pair."""
+        return not isinstance(self._sizes(candidate), NoCandidate)
+
+    def case(self, candidate: Candidate, on_off: OnOffSettings | Unsized | None = None) -> Case:
+        """Return a candidate's case; ``on_off`` takes the place of on-off beside it where that is not wanted."""
+        device, settings = self.sized(candidate)
+        timed = with_times(self._faults, self._loop, self.box, settings)
+        beside = self.on_off_beside(candidate) if on_off is None else on_off
+        feeder = feeder_of(candidate.device, device, self._loop, self._panel, self._traits, self._catalogue)
+        return Case(self._loop, self._panel, self._traits, candidate, self.box, device, settings, beside, self.error, timed, feeder)
+
+    def _sizes(self, candidate: Candidate) -> Sizes:
+        if candidate.device not in self._devices:
+            found = devices_by_rating(candidate, self._loop, self._panel, self._traits, self._catalogue)
+            self._devices[candidate.device] = surviving(candidate.device, found, self._loop, self._panel, self._traits, self._catalogue)
+        return self._devices[candidate.device]
 
     def on_off_beside(self, candidate: Candidate) -> OnOffSettings | Unsized:
         """Return on-off through the same device, through a contactor for the rest."""
@@ -117,7 +124,7 @@ class _Sizer:
         """Return a candidate's device and settings: the smallest device, or a larger one where only that lasts long enough."""
         if candidate.mode == "on_off" and candidate.device in self._on_off:
             return self._on_off[candidate.device]
-        found = self._devices[candidate.device]
+        found = self._sizes(candidate)
         device: Sized = found if isinstance(found, Unsized) else found[0]
         settings = self._settings(candidate, device)
         if not isinstance(found, Unsized):
@@ -131,13 +138,13 @@ class _Sizer:
     def _settings(self, candidate: Candidate, device: Sized) -> Settings | Unsized:
         match candidate.mode:
             case "on_off":
-                return on_off_settings(self._loop, self._panel, self._box, device, self._error)
+                return on_off_settings(self._loop, self._panel, self.box, device, self.error)
             case "time_proportioned":
-                return proportioned_settings(candidate, self._loop, self._panel, self._box, device, self._error)
+                return proportioned_settings(candidate, self._loop, self._panel, self.box, device, self.error)
             case "analogue":
-                return continuous_settings(candidate, self._loop, self._panel, self._box, device)
+                return continuous_settings(candidate, self._loop, self._panel, self.box, device)
             case "three_point":
-                return three_point_settings(self._loop, self._panel, self._box, device)
+                return three_point_settings(self._loop, self._panel, self.box, device)
 
 
 def verdict_of(findings: tuple[Finding, ...]) -> Verdict:
@@ -161,5 +168,7 @@ def _assumptions(read: ReadLoop, traits: Traits, case: Case) -> tuple[Assumption
             parts += case.settings.tuning.assumptions
     if not isinstance(case.error, Unsized):
         parts += case.error.assumptions
+    if not isinstance(case.feeder, Unsized):
+        parts += case.feeder.assumptions
     parts += unused(read.loop.choose, case.candidate)
     return tuple(dict.fromkeys(parts))

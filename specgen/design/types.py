@@ -6,6 +6,7 @@ from typing import Literal
 from specgen.core.diagnostic import Diagnostic
 from specgen.core.figure import Figure
 from specgen.core.say import Phrasing
+from specgen.design.limiter import IndependentLimiter
 from specgen.model.loop import Loop
 from specgen.model.loops import ReadLoop
 from specgen.model.panel import Panel
@@ -55,11 +56,50 @@ class Missing:
 
 
 @dataclass(frozen=True, slots=True)
+class Firm:
+    """How far one uncertain input may be off before the decision changes.
+
+    Attributes
+    ----------
+    input : str
+        The input's path, of the plant without the form's name: ``plant.dead_time``, ``need.tolerance``, ``house.contact_life``.
+    words : str
+        What a sentence calls it: ``dead time``.
+    dimension : str
+        What the figures are, a dimension of ``specgen.core.say`` (``value`` and ``change`` in the loop's quantity).
+    declared : float
+        The figure as declared [base units]: of a range the end of larger size, of a temperature the end farthest from the setpoint.
+        A range is moved as a whole, so that ``declared``, ``below`` and ``above`` are the same end of it.
+    text : str
+        As it was written.
+    below, above : float or None
+        Nearest smaller and larger figure at which mode, output or verdict is another [base units]; None where none is within a factor
+        of ten (of a temperature: within its distance from the setpoint).
+    below_to, above_to : str
+        What it changes to: ``time-proportioned, contactor`` or ``held``; empty where nothing changes.
+    nearness : float
+        Way to the nearer change as a share of the span that was looked at, 0 to 1 (0.3 is a factor of 2); infinite where there is none.
+    """
+
+    input: str
+    words: str
+    dimension: str
+    declared: float
+    text: str
+    below: float | None
+    below_to: str
+    above: float | None
+    above_to: str
+    nearness: float
+
+
+@dataclass(frozen=True, slots=True)
 class DecidedLoop:
     """One loop, decided.
 
     ``findings`` are the chosen candidate's, overrides marked; ``assumptions`` everything taken for granted;
-    ``basis`` every number shown anywhere, in the order of the calculation.
+    ``basis`` every number shown anywhere, in the order of the calculation; ``firmness`` how far each uncertain input may be off,
+    empty where that was not asked for; ``limiter`` what stops a stuck output, ``inject`` what stands for the sensor at site.
     """
 
     read: ReadLoop
@@ -71,6 +111,9 @@ class DecidedLoop:
     assumptions: tuple[Assumption, ...]
     missing: tuple[Missing, ...]
     basis: tuple[Figure, ...]
+    firmness: tuple[Firm, ...] = ()
+    limiter: IndependentLimiter | None = None
+    inject: tuple[Figure, ...] = ()
 
     @property
     def loop(self) -> Loop:

@@ -50,11 +50,11 @@ def decided_by(read: ReadLoop, examined: Sequence[Examined], own: Sequence[Exami
     wish = read.loop.choose
     chosen, by_designer = best(examined), False
     if wish is not None:
-        wished = _wished(wish, examined)
-        if not wished:
+        left = wished(wish, examined)
+        if not left:
             path = ("choose", "output" if wish.output else "mode")
             return None, _problem(read, path, "L301", "no such pair of mode and output is wired here", PAIRS)
-        chosen, by_designer = best(wished), wish.mode is not None or wish.output is not None
+        chosen, by_designer = best(left), wish.mode is not None or wish.output is not None
     set_aside = _set_aside(chosen, own)
     phrasing = Phrasing(read.loop.unit, read.loop.difference_unit)
     if wish is not None and wish.because is None and set_aside:
@@ -73,7 +73,7 @@ def decided_by(read: ReadLoop, examined: Sequence[Examined], own: Sequence[Exami
     return Decision(chosen, why, rejected, by_designer), None
 
 
-def _wished(wish: Choose, examined: Sequence[Examined]) -> list[Examined]:
+def wished(wish: Choose, examined: Sequence[Examined]) -> list[Examined]:
     """Return the candidates that the designer's words leave; a setting that only one mode has asks for that mode where it may be had."""
     named_ones = [e for e in examined if wish.mode in (None, e.case.candidate.mode) and wish.output in (None, e.case.candidate.device)]
     if wish.mode is not None:

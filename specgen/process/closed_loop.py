@@ -44,7 +44,10 @@ class LoopState:
 
 def weighed(weights: tuple[float, ...], states: list[float] | tuple[float, ...]) -> float:
     """Return the sum of the modes as ``weights`` show them."""
-    return sum(weight * state for weight, state in zip(weights, states, strict=True))
+    total = 0.0
+    for weight, state in zip(weights, states, strict=True):
+        total += weight * state
+    return total
 
 
 def advanced(modes: Modes, states: list[float], level: float, load: float, span: float) -> tuple[list[float], float]:

@@ -2,7 +2,7 @@
 
 from collections import OrderedDict
 from collections.abc import Callable
-from functools import lru_cache, wraps
+from functools import lru_cache, update_wrapper
 from typing import Concatenate, ParamSpec, TypeVar
 
 from specgen.process.box import Box
@@ -41,7 +41,6 @@ def remembered(function: Callable[Concatenate[F, P], R]) -> Callable[Concatenate
     """
     memory: OrderedDict[object, tuple[F, tuple[object, ...], R]] = OrderedDict()
 
-    @wraps(function)
     def asked(first: F, *args: P.args, **kwargs: P.kwargs) -> R:
         key = (id(first), *(id(arg) if isinstance(arg, Box) else arg for arg in args), *kwargs.items())
         known = memory.get(key)
@@ -54,4 +53,5 @@ def remembered(function: Callable[Concatenate[F, P], R]) -> Callable[Concatenate
             memory.popitem(last=False)
         return result
 
+    update_wrapper(asked, function)
     return asked
