@@ -6,6 +6,7 @@ from pathlib import Path
 from specgen.catalogue.load import Catalogue, catalogue_digest, load_catalogue, read_devices
 from specgen.core.diagnostic import Diagnostic
 from specgen.design.decide import decide
+from specgen.design.panel import panel_of
 from specgen.design.recordings import with_recordings
 from specgen.design.types import VERDICTS, DecidedLoop, Design, SourceFile, Verdict
 from specgen.model.loops import read_loops
@@ -57,6 +58,8 @@ def design_of(sources: Sources, progress: Progress | None = None, folder: Path |
                 decided.append(loop)
             if progress is not None:
                 progress(done + 1, len(tested.loops))
+    together = panel_of(decided, panel, catalogue) if panel is not None else None
+    own = [together.verdict] if together is not None and decided else []
     return Design(
         panel=panel,
         loops=tuple(decided),
@@ -64,12 +67,13 @@ def design_of(sources: Sources, progress: Progress | None = None, folder: Path |
         sources=tuple(SourceFile(name, content) for name, content in (*sources.files, *tested.files)),
         rules_digest=rules_digest(),
         catalogue_digest=catalogue_digest(),
-        verdict=worst_verdict([loop.verdict for loop in decided]),
+        verdict=worst_verdict([*(loop.verdict for loop in decided), *own]),
+        panel_design=together,
     )
 
 
 def worst_verdict(verdicts: Sequence[Verdict]) -> Verdict:
-    """Return the verdict of a panel: that of its worst loop.
+    """Return the verdict of a panel: the worst of its loops' and of what its own rules find.
 
     Examples
     --------

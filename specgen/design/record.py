@@ -6,6 +6,7 @@ from typing import Any
 from specgen import __version__
 from specgen.core.diagnostic import Diagnostic
 from specgen.design.record_loop import loop_record
+from specgen.design.record_panel import panel_figures, panel_open_points, panel_schedules
 from specgen.design.types import Design
 
 FORMAT = "specgen-record/1"
@@ -39,6 +40,10 @@ def record_of(design: Design) -> dict[str, Any]:
             "reference": head.reference, "revision": head.revision, "status": head.status, "title": head.title,
             "date": head.date.isoformat(), "verdict": design.verdict,
         }  # fmt: skip
+    if design.panel_design is not None:
+        record["panel"] |= panel_figures(design.panel_design)
+        record["schedules"] |= panel_schedules(design.panel_design)
+        record["open_points"] += panel_open_points(design.panel_design)
     return record
 
 

@@ -1,7 +1,7 @@
 """What a decided loop and a whole design are."""
 
 from dataclasses import dataclass
-from typing import Literal
+from typing import TYPE_CHECKING, Literal
 
 from specgen.core.diagnostic import Diagnostic
 from specgen.core.figure import Figure
@@ -14,6 +14,9 @@ from specgen.model.traits import Traits
 from specgen.process.box import Box, Unmodelled
 from specgen.rules.base import Case, Finding
 from specgen.sizing.candidate import Assumption
+
+if TYPE_CHECKING:
+    from specgen.design.panel.types import PanelDesign
 
 Verdict = Literal["meets", "deviates", "open", "held"]
 VERDICTS: tuple[Verdict, ...] = ("held", "open", "deviates", "meets")
@@ -144,7 +147,8 @@ class Design:
     """The whole panel: every loop that could be read, decided, and every problem of the rest.
 
     ``panel`` is None where panel.yml itself could not be read: then there are problems and no loops.
-    ``rules_digest`` and ``catalogue_digest`` change when a rule or a table changes.
+    ``rules_digest`` and ``catalogue_digest`` change when a rule or a table changes. ``verdict`` is the worst of the loops' and
+    of the panel's own; ``panel_design`` is what the loops come to together.
     """
 
     panel: Panel | None
@@ -154,3 +158,4 @@ class Design:
     rules_digest: str
     catalogue_digest: str
     verdict: Verdict
+    panel_design: "PanelDesign | None" = None
