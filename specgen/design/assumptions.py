@@ -3,7 +3,6 @@
 from dataclasses import dataclass
 
 from specgen.model.loops import ReadLoop
-from specgen.model.panel import Panel
 from specgen.model.traits import Traits
 from specgen.sizing.candidate import Assumption
 
@@ -63,21 +62,3 @@ def read_written(read: ReadLoop, path: tuple[str | int, ...]) -> str:
         here = getattr(here, str(step), None) if not isinstance(step, int) else here
     text = getattr(here, "text", None)
     return str(text if text is not None else here)
-
-
-def panel_assumptions(panel: Panel) -> tuple[Assumption, ...]:
-    """Return what the panel takes for granted by its own silence."""
-    found: list[Assumption] = []
-    if "tolerance" not in panel.supply.model_fields_set:
-        found.append(Assumption("supply.tolerance", panel.supply.tolerance.text, "not written in panel.yml: the usual tolerance"))
-    if "duty" not in panel.model_fields_set:
-        hours = f"{panel.duty.hours_per_day.text} a day, {panel.duty.days_per_year} days a year"
-        found.append(Assumption("duty", hours, "not written in panel.yml"))
-    for name in type(panel.house).model_fields:
-        if name not in panel.house.model_fields_set and name not in ("after_power_return", "setting_step", "spare_outputs"):
-            value = getattr(panel.house, name)
-            text = ", ".join(f"{number:g}" for number in value) + " s" if isinstance(value, tuple) else getattr(value, "text", str(value))
-            found.append(Assumption(f"house.{name}", text, "the default; not written in panel.yml"))
-    if "interior_limit" not in panel.enclosure.model_fields_set:
-        found.append(Assumption("enclosure.interior_limit", panel.enclosure.interior_limit.text, "not written: devices are rated at this"))
-    return tuple(found)

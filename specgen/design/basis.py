@@ -3,7 +3,8 @@
 from math import isfinite
 
 from specgen.core.figure import Figure
-from specgen.process.box import Box, Unmodelled
+from specgen.process.box import Box, Point, Unmodelled
+from specgen.process.plant import ProcessModel
 from specgen.rules.base import Case
 from specgen.sizing.candidate import Unsized
 from specgen.sizing.settings import OnOffSettings
@@ -45,18 +46,50 @@ def _once(figures: list[Figure]) -> list[Figure]:
 
 
 def plant_figures(box: Box) -> list[Figure]:
-    """Return duty, time constant, dead time and settled ends of the plant, each at the case where it matters."""
+    """Return settled ends, duty, time constant, gain and dead time of the plant, at the mildest and the hardest case."""
     found: list[Figure] = []
-    for name, (duty, point) in (("lowest", box.duty_low), ("highest", box.duty_high)):
-        found.append(Figure("x", f"{name} share of full output", "load/full output", duty, "fraction", PLANT, {}, box.text(point)))
-    for name, (_, point) in (("mildest", box.duty_low), ("hardest", box.duty_high)):
-        plant = box.plant_at(point)
-        case = box.text(point)
+    for name, end, (duty, point) in (("mildest", "lowest", box.duty_low), ("hardest", "highest", box.duty_high)):
+        plant, case = box.plant_at(point), box.text(point)
         if isfinite(plant.tau):
-            found.append(Figure("τ", f"time constant, {name} case", "C/UA", plant.tau, "time", PLANT, {}, case))
-            found.append(Figure("K", f"change from no to full output, {name} case", "y_on − y_off", plant.gain, "change", PLANT, {}, case))
+            found += _settling(box, point, name, case)
+            inputs = {"setpoint": (box.value_at(point, 0.0), "value")}
+            inputs |= {"y_on": (box.value_at(point, plant.settles_on), "value"), "y_off": (box.value_at(point, plant.settles_off), "value")}
+            formula = "(setpoint − y_off)/(y_on − y_off)"
         else:
-            found.append(Figure("k'", f"speed with full output less speed with none, {name} case", "r_on + r_off", plant.gain_per_second,
-                                "change_per_second", PLANT, {}, case))
+            found += _integrating(plant, name, case)
+            on, off = plant.speed(0.0, 1.0), -plant.speed(0.0, 0.0)
+            inputs = {"r_on": (on, "change_per_second"), "r_off": (off, "change_per_second")}
+            formula = "r_off/(r_on + r_off)"
+        found.append(Figure("x", f"{end} share of full output", formula, duty, "fraction", PLANT, inputs, case))
+        if not 0 <= duty <= 1:
+            clipped = min(max(duty, 0.0), 1.0)
+            found.append(Figure("x", f"{end} share of full output that there is", "x within 0 and 1", clipped, "fraction", PLANT,
+                                {"x": (duty, "fraction")}, case))  # fmt: skip
         found.append(Figure("θ", f"dead time, {name} case", "declared", plant.theta, "time", PLANT, {}, case))
     return found
+
+
+def _settling(box: Box, point: Point, name: str, case: str) -> list[Figure]:
+    """Return where the value settles, how fast, and the change between the ends."""
+    plant, balance = box.plant_at(point), box.form == "balance"
+    made = []
+    for symbol, words, settles, formula in (
+        ("y_on", "full", plant.settles_on, "y_off ± P/UA" if balance else "rest value ± change × supply²"),
+        ("y_off", "no", plant.settles_off, "Ta ∓ Q/UA" if balance else "rest value"),
+    ):
+        value = box.value_at(point, settles)
+        made.append(Figure(symbol, f"settles at with {words} output, {name} case", formula, value, "value", PLANT, {}, case))
+    capacity = {"C": (plant.tau * box.loss_at(point), "heat_capacity"), "UA": (box.loss_at(point), "loss")} if balance else {}
+    formula = "C/UA, bodies that follow fast" if balance else "declared"
+    made.append(Figure("τ", f"time constant, {name} case", formula, plant.tau, "time", PLANT, capacity, case))
+    inputs = {"y_on": (box.value_at(point, plant.settles_on), "value"), "y_off": (box.value_at(point, plant.settles_off), "value")}
+    made.append(Figure("K", f"change from no to full output, {name} case", "|y_on − y_off|", plant.gain, "change", PLANT, inputs, case))
+    return made
+
+
+def _integrating(plant: ProcessModel, name: str, case: str) -> list[Figure]:
+    """Return the speeds of a plant that does not settle."""
+    on, off = plant.speed(0.0, 1.0), -plant.speed(0.0, 0.0)
+    inputs = {"r_on": (on, "change_per_second"), "r_off": (off, "change_per_second")}
+    words = f"speed with full output less speed with none, {name} case"
+    return [Figure("k'", words, "r_on + r_off", plant.gain_per_second, "change_per_second", PLANT, inputs, case)]

@@ -4,6 +4,8 @@ from specgen.catalogue.load import Catalogue
 from specgen.core.diagnostic import Diagnostic
 from specgen.design.assumptions import loop_assumptions
 from specgen.design.basis import basis_of
+from specgen.design.defaults import panel_defaults
+from specgen.design.limiter import limiter_of
 from specgen.design.missing import missing_inputs
 from specgen.design.types import DecidedLoop, Examined, Verdict
 from specgen.design.wish import decided_by, marked, sets_something, unused
@@ -21,6 +23,7 @@ from specgen.sizing.continuous import continuous_settings, three_point_settings
 from specgen.sizing.device import DeviceChoice
 from specgen.sizing.device_choice import devices_by_rating
 from specgen.sizing.feeder import feeder_of, surviving
+from specgen.sizing.injection import inject_values
 from specgen.sizing.lasting import longer_lasting
 from specgen.sizing.measurement import measuring_error
 from specgen.sizing.on_off import on_off_settings
@@ -55,7 +58,9 @@ def decide(read: ReadLoop, panel: Panel, catalogue: Catalogue) -> tuple[DecidedL
         return None, (problem,) if problem is not None else ()
     case = decision.chosen.case
     findings = (*marked(decision, loop.choose, own), *examine_own(case))
-    assumptions = _assumptions(read, traits, case)
+    limiter = limiter_of(case)
+    inject = inject_values(loop, catalogue)
+    put_in = () if isinstance(inject, Unsized) else inject
     decided = DecidedLoop(
         read=read,
         traits=traits,
@@ -63,9 +68,15 @@ def decide(read: ReadLoop, panel: Panel, catalogue: Catalogue) -> tuple[DecidedL
         decision=decision,
         findings=findings,
         verdict=verdict_of(findings),
-        assumptions=assumptions,
+        assumptions=(*_assumptions(read, traits, case), *(limiter.assumptions if limiter is not None else ())),
         missing=missing_inputs(findings, case),
-        basis=basis_of(case, read.fitted.figures if read.fitted is not None else ()),
+        basis=(
+            *basis_of(case, read.fitted.figures if read.fitted is not None else ()),
+            *(limiter.figures if limiter is not None else ()),
+            *put_in,
+        ),
+        limiter=limiter,
+        inject=put_in,
     )
     return decided, ()
 
@@ -170,5 +181,6 @@ def _assumptions(read: ReadLoop, traits: Traits, case: Case) -> tuple[Assumption
         parts += case.error.assumptions
     if not isinstance(case.feeder, Unsized):
         parts += case.feeder.assumptions
+    parts += panel_defaults(case, traits)
     parts += unused(read.loop.choose, case.candidate)
     return tuple(dict.fromkeys(parts))

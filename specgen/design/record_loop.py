@@ -8,6 +8,7 @@ from specgen.core.figure import Figure
 from specgen.core.quantity import Unit
 from specgen.core.say import Said
 from specgen.design.designation import designation
+from specgen.design.limiter import IndependentLimiter
 from specgen.design.rounding import in_unit, rounded
 from specgen.design.types import DecidedLoop, Rejected
 from specgen.process.box import Unmodelled
@@ -54,6 +55,8 @@ UNITS = {
     "time": "s", "fraction": "1", "number": "1", "years": "year", "per_hour": "1/h", "per_year": "1/year", "current": "A", "power": "W",
     "voltage": "V", "resistance": "ohm", "temperature": "degC", "difference": "K", "operations": "1", "degrees": "deg", "pressure": "Pa",
     "pressure_difference": "Pa", "length": "m", "area": "m2", "loss": "W/K", "heat_capacity": "J/K", "thermal_resistance": "K/W",
+    "frequency": "Hz", "mass": "kg", "u_value": "W/(m2 K)", "kv": "m3/h", "i2t": "A2 s", "per_second": "1/s", "density": "kg/m3",
+    "energy": "J", "specific_heat": "J/(kg K)", "flow": "m3/s", "mass_flow": "kg/s", "m³/s": "m3/s",
 }  # fmt: skip
 
 
@@ -75,12 +78,15 @@ def loop_record(decided: DecidedLoop) -> Row:
         "settings": _settings(case, numbers),
         "predicted": predicted(case, numbers),
         "faults": _faults(case, numbers),
+        "inject": [_injected(figure, numbers) for figure in decided.inject],
         "rules": [_rule(decided, finding) for finding in decided.findings],
         "alternatives": [_chosen(decided, numbers), *(_rejected(rejected, numbers) for rejected in decided.decision.rejected)],
         "assumptions": [{"field": a.field, "value": a.value, "why": a.why} for a in decided.assumptions],
         "missing": [{"field": m.field, "settles": list(m.settles), "how": m.how} for m in decided.missing],
         "basis": [_figure(decided, figure, numbers) for figure in decided.basis if isfinite(figure.value)],
     }
+    if decided.limiter is not None:
+        row["limiter"] = _limiter(decided.tag, decided.limiter, numbers)
     return row
 
 
@@ -95,6 +101,7 @@ def _output(tag: str, case: Case) -> Row:
     row: Row = {"device": device, "designation": designation(tag, letter) if letter else None}
     if not isinstance(case.device, Unsized):
         row |= {"rating": case.device.rating, "current": case.device.current, "controller_output": case.device.controller_output}
+        row |= {"loss": case.device.loss, "heat_sink": case.device.heat_sink}
         row = {key: rounded(value) if isinstance(value, float) else value for key, value in row.items()}
     return present(row)
 
@@ -194,6 +201,21 @@ def _stuck(stuck: Stuck, numbers: _Numbers) -> Row:
         "settles_at": numbers.value(stuck.settles_at), "time_to_danger": numbers.plain(stuck.time_to_danger),
         "time_to_spoil": numbers.plain(stuck.time_to_spoil),
     })  # fmt: skip
+
+
+def _limiter(tag: str, limiter: IndependentLimiter, numbers: _Numbers) -> Row:
+    return present({
+        "set": numbers.value(limiter.set), "sensor_lag": numbers.plain(limiter.sensor_lag), "acts_at": numbers.value(limiter.acts_at),
+        "designation": designation(tag, "F2"),
+    })  # fmt: skip
+
+
+_INJECTED = {"resistance": (1.0, "ohm"), "voltage": (1000.0, "mV"), "current": (1000.0, "mA")}
+
+
+def _injected(figure: Figure, numbers: _Numbers) -> Row:
+    scale, unit = _INJECTED[figure.dimension]
+    return {"at": numbers.value(figure.with_["x"][0]), "value": rounded(figure.value * scale), "unit": unit}
 
 
 def _rule(decided: DecidedLoop, finding: Finding) -> Row:

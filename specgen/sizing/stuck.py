@@ -68,12 +68,13 @@ def _timed(stuck: Stuck, loop: Loop, box: Box, start: float, *, on: bool) -> Stu
     state = "stuck on" if on else "stuck off"
     figures = list(stuck.figures)
     times: list[float | None] = []
+    formula = "τ ln((y_end − from)/(y_end − to)), or (to − from)/speed where nothing settles"
     for target, what, whole in ((danger, "danger", False), (spoils, "spoiling", True)):
         seconds = _seconds(box, start, target, upwards=upwards, on=on, whole=whole)
         times.append(None if seconds is None else seconds[0])
         if seconds is not None and target is not None:
             inputs = {"from": (start, "value"), "to": (float(target), "value")}
-            figures.append(Figure("t", f"shortest time to {what}, {state}", "", seconds[0], "time", SOURCE, inputs, seconds[1]))
+            figures.append(Figure("t", f"shortest time to {what}, {state}", formula, seconds[0], "time", SOURCE, inputs, seconds[1]))
     return replace(stuck, time_to_danger=times[0], time_to_spoil=times[1], figures=tuple(figures))
 
 
