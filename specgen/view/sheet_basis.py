@@ -108,7 +108,7 @@ def figure_lines(writer: Writer, basis: tuple[Figure, ...]) -> list[Shape]:
             filled=", ".join(f"{symbol} = {_number(writer, value, dimension)}" for symbol, (value, dimension) in figure.with_.items()),
             result=_number(writer, figure.value, figure.dimension),
             source=figure.source,
-            case=f"worst case: {figure.case}" if figure.case else "",
+            case=figure.case,
         )
         for index, figure in enumerate(basis, 1)
     ]

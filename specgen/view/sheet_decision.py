@@ -1,9 +1,12 @@
 """Section Decision of a sheet: the grounds with their rules, and the alternatives with what ended each."""
 
+from dataclasses import replace
+
 from specgen.design.types import DecidedLoop, Examined
 from specgen.rules.base import Finding
 from specgen.rules.engine import place_of
-from specgen.view.cells import NO_NUMBER, number, says
+from specgen.view.basis_index import BasisIndex, basis_index
+from specgen.view.cells import NO_NUMBER, number
 from specgen.view.dossier import Dossier
 from specgen.view.frame import Place
 from specgen.view.registers import finding_text
@@ -52,8 +55,9 @@ def _grounds(dossier: Dossier, place: Place, decided: DecidedLoop) -> tuple[Shap
     ended = {code for rejected in decided.decision.rejected for code in rejected.ruled_out_by}
     deciding = [f for f in bore if f.outcome != "holds" or f.rule in ended or (f.rule[0] in _DECIDING and f.weight != "note")]
     others = [f for f in bore if f not in deciding]
-    grounds = tuple(_ground(dossier, place, writer, finding) for finding in deciding)
-    rest = tuple(_ground(dossier, place, writer, finding) for finding in others)
+    index = basis_index(decided.basis)
+    grounds = tuple(_ground(dossier, place, writer, finding, index) for finding in deciding)
+    rest = tuple(_ground(dossier, place, writer, finding, index) for finding in others)
     first = List(grounds, numbered=True, empty="No rule bore on this loop.", notes=_sources(deciding))
     if not rest:
         return (first,)
@@ -65,10 +69,13 @@ def _argument(code: str) -> tuple[int, int]:
     return _ARGUMENT.index(code[0]), place_of(code)[1]
 
 
-def _ground(dossier: Dossier, place: Place, writer: Writer, finding: Finding) -> Item:
+def _ground(dossier: Dossier, place: Place, writer: Writer, finding: Finding, index: BasisIndex) -> Item:
     kind = _MARKS.get((finding.outcome, finding.weight))
     mark = Mark(kind, f"{OUTCOMES[finding.outcome]}, {finding.weight}") if kind else None
-    return Item(says(capital(finding_text(writer, finding))), finding.rule, place.rule(dossier, finding.rule), mark)
+    spans = [Span(capital(finding_text(writer, finding)))]
+    for line in index.of_finding(finding):
+        spans += [Span(" "), Span(f"Basis\u00a0{line}" if len(spans) == 1 else str(line), f"#basis-{line}")]
+    return Item(tuple(spans), finding.rule, place.rule(dossier, finding.rule), mark)
 
 
 def _sources(findings: list[Finding]) -> tuple[Note, ...]:
@@ -95,8 +102,18 @@ def _alternatives(dossier: Dossier, place: Place, decided: DecidedLoop) -> Table
         first = rejected.ruled_out_by[0]
         others = f" Also {listed(rejected.ruled_out_by[1:])}." if len(rejected.ruled_out_by) > 1 else ""
         ended = Cell(first, href=place.rule(dossier, first), aside=with_stop(rejected.text) + others)
-        rows.append(_row(writer, rejected.examined, ended))
+        _add(rows, _row(writer, rejected.examined, ended))
     return Table("Alternatives considered", columns, tuple(rows), wide=True)
+
+
+def _add(rows: list[Row], row: Row) -> None:
+    """Add a row, or its device to one that differs in nothing else and has no figures to compare."""
+    for index, before in enumerate(rows):
+        if not before.chosen and (before.cells[0], *before.cells[2:]) == (row.cells[0], *row.cells[2:]) and row.cells[2] == NO_NUMBER:
+            devices = replace(before.cells[1], text=f"{before.cells[1].text}, {row.cells[1].text}")
+            rows[index] = replace(before, cells=(before.cells[0], devices, *before.cells[2:]))
+            return
+    rows.append(row)
 
 
 def _row(writer: Writer, examined: Examined, ended: Cell, *, chosen: bool = False) -> Row:

@@ -7,37 +7,62 @@ from specgen.sizing.candidate import Unsized
 from specgen.sizing.device import Contact, DeviceChoice
 from specgen.view.cells import NO_NUMBER, number, says, word
 from specgen.view.shapes import Cell, Column, Item, List, Row, Section, Sentence, Shape, Table
+from specgen.view.sheet_feeder import feeder_blocks
 from specgen.view.summary import Summary, designated, summary_of
-from specgen.view.words import OUTPUTS, ROLES, capital
+from specgen.view.words import OUTPUTS, ROLES, capital, with_stop
 from specgen.view.writer import Writer
+
+_COOLING = {"natural": "natural air", "forced": "forced air", "none": "none would do"}
 
 
 def hardware_section(writer: Writer, decided: DecidedLoop, number_: str) -> Section:
     """Build the section."""
-    device = decided.decision.chosen.case.device
+    case = decided.decision.chosen.case
+    device = case.device
     if isinstance(device, Unsized):
-        blocks: tuple[Shape, ...] = (Sentence(says(f"No device is sized: {device.because}.")),)
+        blocks: tuple[Shape, ...] = (Sentence(says(f"No device is sized: {with_stop(device.because)}")),)
     else:
-        blocks = (_device(decided, device), *_contacts(writer, decided, device), *_open(device))
-    return Section(number_, "hardware", "Hardware", blocks)
+        blocks = (_device(writer, decided, device), *_contacts(writer, decided, device), *_around(writer, device), *_open(device))
+    return Section(number_, "hardware", "Hardware", (*blocks, *feeder_blocks(writer, case.feeder)))
 
 
-def _device(decided: DecidedLoop, device: DeviceChoice) -> Table:
-    candidate = decided.decision.chosen.case.candidate
+def _device(writer: Writer, decided: DecidedLoop, device: DeviceChoice) -> Table:
+    named = designated(decided.tag, decided.decision.chosen.case.candidate.device)
     rows = [
-        Row((word("designation"), word(named))) if (named := designated(decided.tag, candidate.device)) else None,
-        Row((word("device"), word(device.name))),
-        Row((word("utilisation category"), word(device.category))) if device.category else None,
-        _amperes("rated current", device.rating),
-        _amperes("current at the supply's worse end", device.current),
-        Row((word("poles"), Cell(str(device.poles)))) if device.poles else None,
-        Row((word("controller output it takes"), word(OUTPUTS[device.controller_output]))),
+        ("designation", named, ""),
+        ("device", device.name, device.because),
+        ("utilisation category", device.category, ""),
+        ("rated current", _said(writer, device.rating, "current"), ""),
+        ("current at the supply's worse end", _said(writer, device.current, "current"), ""),
+        ("poles", str(device.poles or ""), ""),
+        ("isolated by", device.isolator, "opens every line where the device leaves one live"),
+        ("heat left in the panel", _said(writer, device.loss, "power"), "at full output"),
+        (
+            "heat sink",
+            f"{_said(writer, device.heat_sink, 'thermal_resistance')} or less" if device.heat_sink else "",
+            _COOLING.get(device.cooling, ""),
+        ),
+        ("leaks when off", _said(writer, device.leakage, "current"), ""),
+        ("controller output it takes", OUTPUTS[device.controller_output], ""),
     ]
-    return Table("", (Column("What"), Column("Chosen")), tuple(row for row in rows if row is not None))
+    made = tuple(Row((word(name), Cell(value, aside=remark))) for name, value, remark in rows if value)
+    return Table("", (Column("What"), Column("Chosen")), made)
 
 
-def _amperes(name: str, value: float | None) -> Row | None:
-    return None if value is None else Row((word(name), Cell(f"{value:.3g}\u202fA")))
+def _said(writer: Writer, value: float | None, dimension: str) -> str:
+    return "" if value is None else writer.say(value, dimension)
+
+
+def _around(writer: Writer, device: DeviceChoice) -> tuple[Shape, ...]:
+    """List what the controller's output has to drive and what is fitted across coils."""
+    items = [
+        Item(says(f"{capital(drive.what)}: {writer.say(drive.asked, drive.dimension)} of {writer.say(drive.able, drive.dimension)}."))
+        for drive in device.drives
+    ]
+    if device.undriven is not None:
+        items.append(Item(says(f"What the controller's output drives is not known: {with_stop(device.undriven.because)}")))
+    items += [Item(says(f"{capital(fitted.part)} across {fitted.across}: {with_stop(fitted.because)}")) for fitted in device.suppressors]
+    return (List(tuple(items), quiet=True, caption="Control side"),) if items else ()
 
 
 def _contacts(writer: Writer, decided: DecidedLoop, device: DeviceChoice) -> tuple[Shape, ...]:
@@ -76,5 +101,5 @@ def _contact(writer: Writer, short: Summary, contact: Contact) -> Row:
 def _open(device: DeviceChoice) -> tuple[Shape, ...]:
     if not device.open_points:
         return ()
-    items = tuple(Item(says(capital(point.because)), aside=", ".join(point.needs)) for point in device.open_points)
+    items = tuple(Item(says(capital(with_stop(point.because))), aside=", ".join(point.needs)) for point in device.open_points)
     return (List(items, caption="Open for the device"),)

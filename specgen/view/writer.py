@@ -10,6 +10,14 @@ from specgen.design.types import DecidedLoop
 
 FAHRENHEIT = Phrasing(Unit("degF", 1.8, 32.0), Unit("degF", 1.8))
 _PRINTED = {"degC": "°C", "degF": "°F", "percent": "%", "ohm": "\u03a9", "m3/h": "m³/h"}
+# below the first number a quantity is written in the smaller unit
+_SMALL = {
+    "area": (1e-3, 1e6, "mm²"),
+    "current": (0.1, 1e3, "mA"),
+    "resistance": (0.1, 1e3, "m\u03a9"),
+    "voltage": (0.1, 1e3, "mV"),
+    "length": (0.1, 1e3, "mm"),
+}
 _BEFORE_WORDS = re.compile(f"{THIN}(?=(?:percent|years?|days|an? [hy]|operations))")
 _HAIR = 1e-9  # share of a step by which a number may lie past it and still count as on it
 
@@ -192,6 +200,13 @@ class Writer:
             return join(digits(value * 100, significant), "%")
         if dimension == "value":
             return self.value(value) if isfinite(value) else digits(value)
+        if dimension == "change_per_second":
+            return join(digits(value * self.phrasing.change.scale, significant), f"{self.change_unit}/s")
+        if dimension == "share_per_change":
+            return join(digits(value / self.phrasing.change.scale, significant), f"1/{self.change_unit}")
+        if dimension in _SMALL and 0 < abs(value) < _SMALL[dimension][0]:
+            _, scale, unit = _SMALL[dimension]
+            return join(digits(value * scale, significant), unit)
         return _BEFORE_WORDS.sub("\u00a0", self.phrasing.say(Said(value, dimension), significant))
 
     def sentence(self, template: str, words: Words) -> str:

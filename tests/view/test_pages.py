@@ -1,5 +1,6 @@
 """What the pages say: nothing missing, nothing faked, every claim where a reader looks for it."""
 
+import re
 from dataclasses import replace
 
 import pytest
@@ -10,6 +11,7 @@ from specgen.view.dossier import dossier_of, missing_loops
 from specgen.view.frame import PAGE_ROWS
 from specgen.view.pages import BUILDERS, page_paths, page_views
 from specgen.view.shapes import FigureLine, Table
+from specgen.view.words import DEVICES, MODES
 
 
 def test_every_row_of_the_page_list_has_a_builder_and_every_builder_a_row():
@@ -111,13 +113,33 @@ def test_both_switch_points_and_half_the_differential_are_to_be_entered(pages, l
     assert (on + off) / 2 == pytest.approx(5.0)
 
 
-def test_every_alternative_names_the_rule_that_ended_it(pages, loop):
-    decision = loop("TIC-1").decision
-    table = next(b for b in _section(pages["loops/TIC-1.html"], "decision").blocks if isinstance(b, Table))
-    assert [row.chosen for row in table.rows] == [True] + [False] * len(decision.rejected)
-    for row, rejected in zip(table.rows[1:], decision.rejected, strict=True):
-        assert row.cells[-1].text == rejected.ruled_out_by[0]
-        assert row.cells[-1].href.endswith(f"rule-book.html#{rejected.ruled_out_by[0]}")
+def test_every_alternative_is_there_with_the_rule_that_ended_it(pages, design):
+    for decided in design.loops:
+        table = next(b for b in _section(pages[f"loops/{decided.tag}.html"], "decision").blocks if isinstance(b, Table))
+        assert [row.chosen for row in table.rows].count(True) == 1
+        assert table.rows[0].chosen
+        shown = {(row.cells[0].text, device, row.cells[-1].text) for row in table.rows[1:] for device in row.cells[1].text.split(", ")}
+        asked = {
+            (MODES[r.examined.case.candidate.mode], DEVICES[r.examined.case.candidate.device], r.ruled_out_by[0])
+            for r in decided.decision.rejected
+        }
+        assert shown == asked
+        assert all(row.cells[-1].href.endswith(f"rule-book.html#{row.cells[-1].text}") for row in table.rows[1:])
+
+
+def test_figures_lead_to_the_line_of_the_basis_that_computed_them(pages, loop):
+    decided = loop("TIC-1")
+    table = next(b for b in _section(pages["loops/TIC-1.html"], "expect").blocks if isinstance(b, Table))
+    swing = next(row.cells[1] for row in table.rows if row.cells[0].text == "swing, peak to trough")
+    line = int(swing.href.removeprefix("#basis-"))
+    assert decided.basis[line - 1].value == decided.decision.chosen.case.settings.enforced.swing.value
+
+
+def test_no_number_carries_the_name_of_its_dimension_for_a_unit(pages, text_of):
+    for page in pages.values():
+        for section in page.sections:
+            said = text_of(page, section.anchor)
+            assert not re.search(r"[0-9][\u202f\u00a0][a-z]+_[a-z_]+", said), said
 
 
 def test_every_figure_of_the_basis_is_a_line(pages, loop):

@@ -91,3 +91,18 @@ def test_plain_numbers_are_read_back(value):
     assert float(text) == pytest.approx(value, rel=1e-8, abs=1e-300)
     assert "," not in text
     assert "\u2212" not in text
+
+
+@pytest.mark.parametrize(
+    ("value", "dimension", "shown"),
+    [
+        (4e-6, "area", "4\u202fmm²"),
+        (0.005, "current", "5\u202fmA"),
+        (0.167, "current", "0.167\u202fA"),
+        (0.01, "change_per_second", "0.01\u202fK/s"),
+        (0.125, "share_per_change", "0.125\u202f1/K"),
+        (float("inf"), "value", "without limit"),
+    ],
+)
+def test_sizes_that_would_be_all_zeros_are_written_in_the_smaller_unit(value, dimension, shown):
+    assert Writer(CELSIUS, 0.1).say(value, dimension) == shown
