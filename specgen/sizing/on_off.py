@@ -9,10 +9,11 @@ from specgen.model.panel import Panel
 from specgen.process.box import Box, Unmodelled
 from specgen.process.differential import least_differential, widest_differential
 from specgen.process.fault_cases import FaultCase, warm_up
-from specgen.process.limit_cycle import NoCycle
+from specgen.process.limit_cycle import SECONDS_AN_HOUR, NoCycle
 from specgen.process.on_off import OnOffPrediction, predict_on_off
 from specgen.sizing.candidate import Assumption, Unsized
 from specgen.sizing.device import DeviceChoice
+from specgen.sizing.flicker import Flicker, flicker_of
 from specgen.sizing.measurement import MeasuringError
 from specgen.sizing.remembered import remembered
 from specgen.sizing.rounding import chosen_differential
@@ -72,6 +73,9 @@ def _settled(
     setpoint = float(loop.need.setpoint)
     near = loop.need.tolerance.below if loop.raises else loop.need.tolerance.above
     cold = warm_up(box, float(near))
+    lights = flicker_of(loop, panel)
+    seen = lights if isinstance(lights, Flicker) and starts > 0 else None
+    placed = () if placement != "centred" or (loop.choose and loop.choose.placement) else (_CENTRED,)
     return OnOffSettings(
         differential=differential,
         placement=placement,
@@ -94,8 +98,9 @@ def _settled(
             *_point_figures(setpoint, enforced, run, rest),
             *_figures(enforced, natural, starts, operations, life, last.operations if last else None),
             *_warm_up_figure(cold),
+            *(seen.figures_at(SECONDS_AN_HOUR / starts) if seen is not None else ()),
         ),
-        assumptions=() if placement != "centred" or (loop.choose and loop.choose.placement) else (_CENTRED,),
+        assumptions=(*placed, *(seen.assumptions if seen is not None else ())),
     )
 
 

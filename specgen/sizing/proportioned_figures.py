@@ -35,7 +35,7 @@ def bound_figures(bounds: Bounds) -> list[Figure]:
 
 _HOW = {
     "C1": "the cycle at which the exact ripple takes its share, found by its root", "C2": "tried through the house's series",
-    "C3": "hours × 3600 × life/operations", "C4": "t_min/x, t_min/(1 − x)", "C7": "tried through the house's series",
+    "C3": "hours × 3600 × life/operations", "C4": "t_min/x, t_min/(1 − x)", "C7": "120 s/r at the rate r where the curve allows d/0.65",
     "C8": "θ0/2 over the highest duty, at least one half", "T2": "tried through the house's series",
 }  # fmt: skip
 

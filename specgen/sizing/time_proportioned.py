@@ -1,7 +1,7 @@
 """Settings of a time-proportioned loop: the cycle between what contacts and pulses ask and what product and control allow."""
 
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel
@@ -11,6 +11,7 @@ from specgen.process.time_proportioned import longest_cycle, predict_ripple
 from specgen.process.tuning import Pulse
 from specgen.sizing.candidate import Assumption, Candidate, Unsized
 from specgen.sizing.device import DeviceChoice
+from specgen.sizing.flicker import Flicker, OutOfScope, flicker_of
 from specgen.sizing.measurement import MeasuringError
 from specgen.sizing.proportioned_figures import Bounds, bound_figures, cycle_figure, ripple_figures, wear_figures
 from specgen.sizing.remembered import remembered
@@ -72,24 +73,50 @@ def proportioned_settings(
 
 def _settled(job: _Job) -> ProportionedSettings | Unsized:
     series = [float(step) for step in job.panel.house.cycle_time_series]
-    least_bounds = _least_bounds(job)
-    least = max(bound.limit for bound in least_bounds)
+    lights = flicker_of(job.loop, job.panel)
+    least_bounds = (*_least_bounds(job), *_flicker_bound(lights))
+    least, *without_flicker = _leasts(least_bounds)
     most_bounds = _first_bounds(job)
     most = min(bound.limit for bound in most_bounds)
     chosen = job.loop.choose.cycle_time if job.loop.choose else None
     if chosen is not None:
         cycle = float(chosen)
         start = _start(job, cycle)
+        least = min((least, *without_flicker)) if least > most else least
     else:
-        wanted = _wanted(job, series, least, most)
-        found = _workable(job, [step for step in series if step <= wanted * (1 + SLACK)] or [series[0]])
-        cycle, start, narrowed = found
+        cycle, start, narrowed = _taken(job, series, least, most)
+        if without_flicker and not least * (1 - SLACK) <= cycle <= most * (1 + SLACK):
+            # C7 is a recommendation: where control allows no such cycle it shows its window, and does not move the others'
+            least = without_flicker[0]
+            cycle, start, narrowed = _taken(job, series, least, most)
         if narrowed is not None:
             most_bounds = (*most_bounds, narrowed)
             most = min(most, narrowed.limit)
     if isinstance(start, Unsized):
         return start
-    return _result(job, cycle, start, (least, most), (least_bounds, most_bounds), by_designer=chosen is not None)
+    made = _result(job, cycle, start, (least, most), (least_bounds, most_bounds), by_designer=chosen is not None)
+    if not isinstance(lights, Flicker):
+        return made
+    return replace(made, figures=(*made.figures, *lights.figures_at(cycle)), assumptions=(*made.assumptions, *lights.assumptions))
+
+
+def _flicker_bound(lights: Flicker | OutOfScope | Unsized) -> tuple[Bound, ...]:
+    if not isinstance(lights, Flicker) or lights.shortest <= 0:
+        return ()
+    return (Bound("C7", lights.shortest, "lamps that do not flicker on the public network"),)
+
+
+def _leasts(bounds: Sequence[Bound]) -> list[float]:
+    """Return the least cycle with what C7 asks for and, where it asks, without."""
+    every = max(bound.limit for bound in bounds)
+    others = max(bound.limit for bound in bounds if bound.rule != "C7")
+    return [every] if every <= others else [every, others]
+
+
+def _taken(job: _Job, series: Sequence[float], least: float, most: float) -> tuple[float, Start | Unsized, Bound | None]:
+    """Return the cycle that C5 asks for, or the longest below it that keeps the loop's margins."""
+    wanted = _wanted(job, series, least, most)
+    return _workable(job, [step for step in series if step <= wanted * (1 + SLACK)] or [series[0]])
 
 
 def _wanted(job: _Job, series: Sequence[float], least: float, most: float) -> float:

@@ -26,7 +26,7 @@ def examine(case: Case) -> Finding:
         return rule.judge(
             holds=False,
             text="No cycle of the house's series, {first} to {last}, "
-            + ("is as short as the {most} that control allows." if wears else "is as long as the {least} that the device asks for."),
+            + ("is as short as the {most} that control allows." if wears else "is as long as the {least} that is asked for."),
             first=seconds(series[0]), last=seconds(series[-1]), most=seconds(settings.most), least=seconds(settings.least),
         )  # fmt: skip
     right = max(allowed) if wears else min(allowed)
@@ -34,7 +34,7 @@ def examine(case: Case) -> Finding:
     text = (
         "Contacts take the longest cycle of the house's series within the {most} that control allows: {right}"
         if wears
-        else "Solid state takes the shortest cycle of the house's series from the {least} that the device asks for: {right}"
+        else "Solid state takes the shortest cycle of the house's series from the {least} that is asked for: {right}"
     )
     return rule.judge(
         holds=same, text=text + ("." if same else "; {cycle} is set."),
