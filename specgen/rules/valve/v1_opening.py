@@ -7,6 +7,11 @@ from specgen.rules.settled import continuous
 from specgen.sizing.candidate import Unsized
 
 LOW, HIGH = 0.10, 0.90
+# in the order in which a data sheet and a flow diagram are asked for them
+READS = (
+    "element.kvs", "element.characteristic", "element.medium", "element.flow", "element.inlet_pressure", "element.outlet_pressure",
+    "element.medium_temperature", "element.density",
+)  # fmt: skip
 
 rule = Rule(
     code="V1",
@@ -35,7 +40,8 @@ def examine(case: Case) -> Finding:
     valve = settings.valve
     if valve is None:
         return rule.unanswered("How far the valve opens was not computed.")
-    needs = tuple(dict.fromkeys(path for point in valve.open_points for path in point.needs))
+    lacking = {path for point in valve.open_points for path in point.needs}
+    needs = tuple(path for path in READS if path in lacking)
     why = "; ".join(point.because for point in valve.open_points)
     if valve.opening_high is None:
         return rule.unanswered("{why}.", needs, why=why[:1].upper() + why[1:])

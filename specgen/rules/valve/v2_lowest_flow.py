@@ -3,9 +3,11 @@
 from specgen.core.say import share
 from specgen.process.box import Unmodelled
 from specgen.rules.base import Case, Finding, Rule
+from specgen.rules.declared import number
 from specgen.rules.margin import at_most
 from specgen.rules.settled import continuous
 from specgen.sizing.candidate import Unsized
+from specgen.sizing.valve_sizing import RANGEABILITY
 
 rule = Rule(code="V2", name="Lowest flow", weight="should", cites=("IEC 60534-2-4 (rangeability)", "common practice, no source"))
 
@@ -35,6 +37,8 @@ def examine(case: Case) -> Finding:
         return rule.unanswered("The least flow that the valve controls is not known.", needs)
     duty = max(case.box.duty_low[0], 0.0)
     piped = "" if valve.is_installed else ", the pipes not counted"
+    if number(case, "element.rangeability") is None:
+        piped += f", at the usual rangeability of {RANGEABILITY:g}"
     text = "The valve controls no less than {lowest} of its full flow" + piped
     if duty == 0:
         text += "; the mildest case needs none, and on the way there the valve opens and shuts in turn."

@@ -33,7 +33,7 @@ def examine(case: Case) -> Finding:
     return rule.judge(
         holds=at_most(pulses, allowed),
         margin=over(allowed, pulses),
-        text="Where the load sweeps its declared range there and back in {sweep} the actuator makes up to {pulses} pulses an hour, of {allowed} "
-        "allowed; a sweep in {reached} would take them all. Its motor then runs {motor} of the time.",
+        text="Where the load sweeps its declared range there and back in {sweep} the actuator makes up to {pulses} pulses an hour, of "
+        "{allowed} allowed; a sweep in {reached} would take them all. Its motor then runs {motor} of the time.",
         sweep=seconds(SWEEP), pulses=plain(pulses), allowed=plain(allowed), reached=seconds(reached), motor=share(motor),
     )  # fmt: skip

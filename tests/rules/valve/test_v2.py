@@ -6,10 +6,11 @@ from specgen.sizing.candidate import Unsized
 from specgen.sizing.valve_sizing import ValveSizing
 
 
-def ask(make, lowest, rest="20 degC", points=()):
+def ask(make, lowest, rest="20 degC", points=(), rangeability="30"):
     used = ValveSizing(0.3, 0.8, is_installed=True, lowest_flow=lowest, gain_factor=1.0, open_points=points)
+    element = {"rangeability": rangeability} if rangeability else {}
     plant = {"response": {"change": "100 K", "time_constant": "20 min", "dead_time": "25 s", "rest_value": rest}}
-    return make.ask("V2", make.case("valve", "analogue", "signal", plant=plant, settings=make.continuous(valve=used)))
+    return make.ask("V2", make.case("valve", "analogue", "signal", plant=plant, settings=make.continuous(valve=used), element=element))
 
 
 def test_a_flow_that_the_trim_controls(make):
@@ -18,6 +19,10 @@ def test_a_flow_that_the_trim_controls(make):
     assert answer.outcome == "holds"
     assert answer.text == "The valve controls no less than 4 percent of its full flow; the lowest duty needs 10 percent."
     assert answer.margin == pytest.approx(2.5)
+
+
+def test_a_rangeability_that_is_taken_is_said(make):
+    assert "at the usual rangeability of 50" in ask(make, 0.04, "20 degC to 55 degC", rangeability=None).text
 
 
 def test_a_flow_below_it(make):
