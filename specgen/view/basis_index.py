@@ -26,9 +26,9 @@ class BasisIndex:
         return f"#basis-{line}" if line else ""
 
     def of_finding(self, finding: Finding) -> tuple[int, ...]:
-        """Return the lines that a finding's numbers come from, each once."""
+        """Return the lines that a finding's numbers come from, in their order."""
         said = (word for word in finding.words.values() if isinstance(word, Said))
-        return tuple(dict.fromkeys(line for word in said if (line := self.line(word.value, word.dimension)) is not None))
+        return tuple(sorted({line for word in said if (line := self.line(word.value, word.dimension)) is not None}))
 
 
 def basis_index(basis: Iterable[Figure]) -> BasisIndex:

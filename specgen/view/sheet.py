@@ -1,6 +1,7 @@
 """A loop's sheet: title, decision, settings, expectations, hardware, failures, basis."""
 
 from specgen.design.types import DecidedLoop
+from specgen.view.basis_index import basis_index
 from specgen.view.cells import says, verdict_mark
 from specgen.view.dossier import Dossier
 from specgen.view.frame import Place, frame
@@ -12,16 +13,17 @@ from specgen.view.sheet_faults import faults_section
 from specgen.view.sheet_hardware import hardware_section
 from specgen.view.sheet_settings import settings_section
 from specgen.view.sheet_title import kicker, title_sentence
-from specgen.view.words import capital, with_stop
+from specgen.view.words import capital, listed, with_stop
 
 
 def sheet_page(dossier: Dossier, place: Place, decided: DecidedLoop, before: DecidedLoop | None, after: DecidedLoop | None) -> PageView:
     """Build a loop's sheet."""
     writer = dossier.writers[decided.tag]
+    index = basis_index(decided.basis)
     sections = [
-        decision_section(dossier, place, decided, "1"),
+        decision_section(dossier, place, decided, index, "1"),
         settings_section(dossier, place, decided, "2"),
-        expect_section(writer, decided, "3"),
+        expect_section(writer, decided, index, "3"),
         hardware_section(writer, decided, "4"),
         faults_section(writer, decided, "5"),
     ]
@@ -29,7 +31,9 @@ def sheet_page(dossier: Dossier, place: Place, decided: DecidedLoop, before: Dec
         sections.append(Section("6", "notes", "Notes", tuple(_notes(decided))))
     sections.append(basis_section(dossier, place, decided, str(len(sections) + 1)))
     span = decided.read
-    lead_note = Note("Source", f"{span.file}, line {span.line}", place.to(f"data/source/{span.file}"), "as read")
+    lead_notes: tuple[Note, ...] = (Note("Source", f"{span.file}, line {span.line}", place.to(f"data/source/{span.file}"), "as read"),)
+    if decided.verdict == "deviates":
+        lead_notes = (_deviates(decided), *lead_notes)
     return frame(
         dossier,
         place,
@@ -37,12 +41,24 @@ def sheet_page(dossier: Dossier, place: Place, decided: DecidedLoop, before: Dec
         tuple(sections),
         kicker=kicker(decided),
         mark=verdict_mark(decided.verdict),
-        lead=Sentence((Span(title_sentence(decided, writer)),), lead=True, notes=(lead_note,)),
+        lead=Sentence((Span(title_sentence(decided, writer)),), lead=True, notes=lead_notes),
         notices=_missing(dossier, place, decided),
         before=_neighbour(place, before),
         after=_neighbour(place, after),
         sheet=decided.tag,
     )
+
+
+def _deviates(decided: DecidedLoop) -> Note:
+    """Say beside the verdict what it deviates from, and the reason that was given."""
+    parts = []
+    for outcome in ("broken", "overridden"):
+        rules = [f.rule for f in decided.findings if f.weight == "should" and f.outcome == outcome]
+        if rules:
+            parts.append(f"{listed(rules)} {outcome}")
+    choose = decided.loop.choose
+    reason = f" Reason given: {with_stop(choose.because)}" if choose is not None and choose.because else ""
+    return Note("Deviates", f"{'; '.join(parts)}.{reason}")
 
 
 def _neighbour(place: Place, loop: DecidedLoop | None) -> Link | None:

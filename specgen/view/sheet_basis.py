@@ -17,6 +17,7 @@ from specgen.view.words import FAMILIES
 from specgen.view.writer import Writer
 
 _HOW_TO_READ = "The calculation in its order: formula, result, numbers put in; source and worst case beside it."
+LONG = 32  # characters from which a repeated source or case is referred to
 _NOT_INPUTS = frozenset({"tag", "service", "same_as"})
 _ALIASES = {("sensor", "class"): "class_", ("sensor", "range"): "measured_range"}
 
@@ -97,21 +98,32 @@ def _dotted(path: Path) -> str:
 
 
 def figure_lines(writer: Writer, basis: tuple[Figure, ...]) -> list[Shape]:
-    """Write every figure as a numbered line."""
-    return [
-        FigureLine(
-            number=str(index),
-            anchor=f"basis-{index}",
-            name=figure.name,
-            symbol=figure.symbol,
-            formula="" if figure.formula == figure.symbol else figure.formula,
-            filled=", ".join(f"{symbol} = {_number(writer, value, dimension)}" for symbol, (value, dimension) in figure.with_.items()),
-            result=_number(writer, figure.value, figure.dimension),
-            source=figure.source,
-            case=figure.case,
+    """Write every figure as a numbered line; source and case that repeat the line before refer to where they stand in full."""
+    lines: list[Shape] = []
+    sources: dict[str, int] = {}
+    cases: dict[str, int] = {}
+    for index, figure in enumerate(basis, 1):
+        filled = ", ".join(f"{symbol} = {_number(writer, value, dimension)}" for symbol, (value, dimension) in figure.with_.items())
+        lines.append(
+            FigureLine(
+                number=str(index),
+                anchor=f"basis-{index}",
+                name=figure.name,
+                symbol=figure.symbol,
+                formula="" if figure.formula == figure.symbol else figure.formula,
+                filled=filled,
+                result=_number(writer, figure.value, figure.dimension),
+                source=_once(sources, figure.source, index, "source"),
+                case=_once(cases, figure.case, index, "case"),
+            )
         )
-        for index, figure in enumerate(basis, 1)
-    ]
+    return lines
+
+
+def _once(known: dict[str, int], text: str, index: int, what: str) -> str:
+    """Return a text where it stands first, and later, if it is long, where that was."""
+    first = known.setdefault(text, index)
+    return text if first == index or len(text) < LONG else f"{what} as in {first}"
 
 
 def _number(writer: Writer, value: float, dimension: str) -> str:

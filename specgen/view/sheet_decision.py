@@ -5,7 +5,7 @@ from dataclasses import replace
 from specgen.design.types import DecidedLoop, Examined
 from specgen.rules.base import Finding
 from specgen.rules.engine import place_of
-from specgen.view.basis_index import BasisIndex, basis_index
+from specgen.view.basis_index import BasisIndex
 from specgen.view.cells import NO_NUMBER, number
 from specgen.view.dossier import Dossier
 from specgen.view.frame import Place
@@ -27,13 +27,13 @@ _MARKS = {
 }  # fmt: skip
 
 
-def decision_section(dossier: Dossier, place: Place, decided: DecidedLoop, number_: str) -> Section:
+def decision_section(dossier: Dossier, place: Place, decided: DecidedLoop, index: BasisIndex, number_: str) -> Section:
     """Build the section."""
     return Section(
         number_,
         "decision",
         "Decision",
-        (_chosen(decided), *_grounds(dossier, place, decided), _alternatives(dossier, place, decided)),
+        (_chosen(decided), *_grounds(dossier, place, decided, index), _alternatives(dossier, place, decided)),
     )
 
 
@@ -47,7 +47,7 @@ def _chosen(decided: DecidedLoop) -> Sentence:
     return Sentence((Span(chosen, strong=True), Span(f". {capital(with_stop(decided.decision.because))}")))
 
 
-def _grounds(dossier: Dossier, place: Place, decided: DecidedLoop) -> tuple[Shape, ...]:
+def _grounds(dossier: Dossier, place: Place, decided: DecidedLoop, index: BasisIndex) -> tuple[Shape, ...]:
     """List what decided the loop, then what it was held against besides."""
     writer = dossier.writers[decided.tag]
     bore = [finding for finding in decided.findings if finding.outcome != "does_not_apply"]
@@ -55,7 +55,6 @@ def _grounds(dossier: Dossier, place: Place, decided: DecidedLoop) -> tuple[Shap
     ended = {code for rejected in decided.decision.rejected for code in rejected.ruled_out_by}
     deciding = [f for f in bore if f.outcome != "holds" or f.rule in ended or (f.rule[0] in _DECIDING and f.weight != "note")]
     others = [f for f in bore if f not in deciding]
-    index = basis_index(decided.basis)
     grounds = tuple(_ground(dossier, place, writer, finding, index) for finding in deciding)
     rest = tuple(_ground(dossier, place, writer, finding, index) for finding in others)
     first = List(grounds, numbered=True, empty="No rule bore on this loop.", notes=_sources(deciding))

@@ -7,7 +7,7 @@ from specgen.design.types import DecidedLoop
 from specgen.process.box import Box
 from specgen.sizing.candidate import Unsized
 from specgen.sizing.settings import ContinuousSettings, OnOffSettings, ProportionedSettings, Settings, ThreePointSettings, Tuning
-from specgen.view.basis_index import BasisIndex, basis_index
+from specgen.view.basis_index import BasisIndex
 from specgen.view.cells import says, word
 from specgen.view.cycle_drawing import CyclePlot, cycle_drawing
 from specgen.view.cycle_plot import on_off_plot, ripple_plot
@@ -30,14 +30,13 @@ class Line(NamedTuple):
     dimension: str = "change"
 
 
-def expect_section(writer: Writer, decided: DecidedLoop, number_: str) -> Section:
+def expect_section(writer: Writer, decided: DecidedLoop, index: BasisIndex, number_: str) -> Section:
     """Build the section."""
     settings = decided.decision.chosen.case.settings
     blocks: list[Shape] = []
     if isinstance(settings, Unsized):
         blocks.append(Sentence(says(f"Nothing can be predicted: {settings.because}.")))
     else:
-        index = basis_index(decided.basis)
         rows = tuple(_row(line, index) for line in _lines(writer, decided, settings))
         blocks.append(Table("", _COLUMNS, rows, wide=True))
         blocks += _drawing(writer, decided)
@@ -104,7 +103,7 @@ def _proportioned(writer: Writer, decided: DecidedLoop, settings: ProportionedSe
     return [
         Line("ripple of the switching, above", writer.fine_change(up.value), writer.fine_change(above), up.text, up.value),
         Line("ripple of the switching, below", writer.fine_change(down.value), writer.fine_change(below), down.text, down.value),
-        Line("output, lowest to highest", _shares(writer, settings.lowest_duty, settings.highest_duty)),
+        Line("shares of full output it is held to", _shares(writer, settings.lowest_duty, settings.highest_duty)),
         Line("shortest pulse on", writer.time(settings.shortest_on), least, "", settings.shortest_on, "time"),
         Line("shortest pause", writer.time(settings.shortest_off), least, "", settings.shortest_off, "time"),
     ]
