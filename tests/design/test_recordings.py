@@ -218,3 +218,12 @@ def test_two_loops_may_name_one_recording(tmp_path):
     assert not again.problems
     assert len(again.loops) == 2
     assert len(again.sources) == len(design.sources) + 1
+
+
+def test_a_drift_is_taken_out_and_shown(tmp_path):
+    """1.8 K/h over the whole recording, beside a step that is known."""
+    design = project(tmp_path, rows(lambda t: course(t) + 1.8 * t / 3600))
+    assert not design.problems
+    figure = next(figure for figure in design.loops[0].basis if figure.symbol == "drift")
+    assert figure.value * 3600 == pytest.approx(1.8, rel=0.02)
+    assert design.loops[0].read.fitted.ranges["change"].low <= GAIN <= design.loops[0].read.fitted.ranges["change"].high

@@ -225,3 +225,10 @@ def test_pulses_of_a_three_point_valve():
     assert settings.pulses_per_hour == pytest.approx(2 * (HIGH - LOW) * 120 / 0.5)
     assert settings.motor_share == pytest.approx(2 * (HIGH - LOW) * 120 / 3600)
     assert isinstance(loop.element.travel_time, Quantity)
+
+
+def test_cold_water_is_taken_where_density_and_temperature_are_not_declared():
+    """998 kg/m3: 4 sqrt(0.998/1.5); both stand among the assumptions."""
+    found = kv_of(WATER, density=None, medium_temperature=None)
+    assert found.high == pytest.approx(4 * sqrt(0.998 / 1.5), rel=1e-3)
+    assert {assumption.field for assumption in found.assumptions} == {"element.density", "element.medium_temperature"}
