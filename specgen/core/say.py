@@ -113,6 +113,7 @@ _FIXED = {
     "loss": ("W/K", 1.0), "mass": ("kg", 1.0), "u_value": ("W/(m² K)", 1.0), "thermal_resistance": ("K/W", 1.0), "kv": ("m³/h", 1.0),
     "per_year": ("a year", 1.0), "operations": ("operations", 1.0), "degrees": ("°", 1.0), "temperature": ("°C", 1.0),
     "difference": ("K", 1.0), "i2t": ("A² s", 1.0), "per_second": ("1/s", 1.0), "density": ("kg/m³", 1.0),
+    "flow_volume": ("m³/h", 3600.0),
 }  # fmt: skip
 _LADDERS = {
     "time": ((365.25 * 86400, "years"), (2 * 86400, "days"), (3 * 3600, "h"), (600, "min"), (1, "s"), (1e-3, "ms")),

@@ -17,8 +17,8 @@ def panel_figures(panel: PanelDesign) -> Row:
     Returns
     -------
     dict
-        ``demand`` [A] by conductor, ``imbalance``, ``incoming_protection`` [A], ``rules``, ``phases`` by loop; what does
-        not apply is absent.
+        ``demand`` [A] by conductor, ``imbalance``, ``incoming_protection`` [A], ``rules``, ``phases`` by loop; ``heat`` [W, m2,
+        degC, air in m3/s] and ``control_supply`` [A]; what does not apply is absent.
     """
     made: Row = {
         "demand": {conductor: rounded(current) for conductor, current in panel.demand.currents.items()},
@@ -26,6 +26,15 @@ def panel_figures(panel: PanelDesign) -> Row:
         "phases": [{"loop": load.tag, "on": load.phases, "written": load.written} for load in panel.placed],
         "moved": [{"loop": moved.tag, "on": moved.phases, "in_turn": moved.in_turn} for moved in panel.moved],
     }
+    if panel.interior is not None:
+        heat = panel.interior
+        made["heat"] = _present({
+            "loss": heat.loss, "surface": heat.surface, "interior": heat.interior, "limit": heat.limit, "shortfall": heat.shortfall,
+            "surface_needed": heat.surface_needed, "air": heat.air,
+        })  # fmt: skip
+    if panel.control is not None:
+        control = panel.control
+        made["control_supply"] = _present({"continuous": control.continuous, "inrush": control.inrush, "capacity": control.capacity})
     if panel.demand.imbalance is not None:
         made["imbalance"] = rounded(panel.demand.imbalance)
     if not isinstance(panel.incoming.rating, Unsized):

@@ -122,6 +122,7 @@ class Enclosure(Model):
     altitude: Annotated[Quantity, Written("length", sign="not_negative")] = _quantity("200 m", 200.0)
     interior_limit: Annotated[Quantity, Written("temperature")] = _quantity("45 degC", 45.0)
     other_heat: Annotated[Quantity, Written("power", sign="not_negative")] = _quantity("60 W", 60.0)
+    cooling: Annotated[Quantity, Written("power", sign="not_negative")] = _quantity("0 W", 0.0)
 
 
 class Confirmed(Model):

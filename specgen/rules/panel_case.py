@@ -7,6 +7,8 @@ from specgen.catalogue.wiring import Wiring
 from specgen.model.panel import Panel
 from specgen.model.traits import Traits
 from specgen.sizing.candidate import Unsized
+from specgen.sizing.control_supply import ControlLoad
+from specgen.sizing.enclosure import Interior
 from specgen.sizing.feeder import Feeder
 
 
@@ -39,7 +41,8 @@ class PanelCase:
 
     ``lines`` [A] are the line conductors' currents with the declared coincidence; ``imbalance`` the difference of the
     largest and the smallest over the largest, None where there is one line or no load. ``carries`` [A] is what the
-    incomer has to carry; ``incomer`` its rating [A], ``declared`` where panel.yml states it.
+    incomer has to carry; ``incomer`` its rating [A], ``declared`` where panel.yml states it. ``interior`` is the enclosure's
+    heat balance, ``control`` what the control supply carries; None where a panel is looked at without them.
     """
 
     panel: Panel
@@ -51,3 +54,5 @@ class PanelCase:
     declared: bool
     outputs: tuple[OutputCount, ...]
     wiring: Wiring
+    interior: Interior | None = None
+    control: ControlLoad | None = None

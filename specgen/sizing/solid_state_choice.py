@@ -23,7 +23,10 @@ LEAST_SWITCHED = {3: 2, 2: 1, 1: 1}
 PHASES = 3
 COOLINGS = ("natural", "forced", "none")
 """How a heat sink is cooled, in the order of choice."""
-HOT = {"forced": "{} carries the load and would need a fan on its heat sink.", "none": "{} carries the load and gets too hot on any heat sink."}
+HOT = {
+    "forced": "{} carries the load and would need a fan on its heat sink.",
+    "none": "{} carries the load and gets too hot on any heat sink.",
+}
 
 
 def solid_state_choices(loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue) -> tuple[DeviceChoice, ...] | Unsized:

@@ -7,10 +7,12 @@ from specgen.core.say import amperes
 from specgen.design.decide import verdict_of
 from specgen.design.missing import how_to_get
 from specgen.design.panel.demand import demand_of, incoming_of
+from specgen.design.panel.heat import heat_assumptions, interior
 from specgen.design.panel.lines import NEUTRAL, lines_of
 from specgen.design.panel.parts import part_rows
 from specgen.design.panel.placing import place_loads
 from specgen.design.panel.schedules import conductor_rows, protection_rows
+from specgen.design.panel.supply24 import control_supply_load, supply_assumptions
 from specgen.design.panel.types import Demand, PanelDesign, Placed, Remark
 from specgen.design.types import DecidedLoop, Missing
 from specgen.model.panel import Panel
@@ -50,6 +52,8 @@ def panel_of(loops: Sequence[DecidedLoop], panel: Panel, catalogue: Catalogue) -
     largest = max((row.rating for row in protection if row.loop in by_tag), default=0.0)
     incoming = incoming_of(demand, placed, largest, panel, catalogue)
     outputs = output_counts(loops, panel)
+    control = control_supply_load(loops, panel, catalogue)
+    heat = interior(loops, control, panel, catalogue)
     case = PanelCase(
         panel=panel,
         fed=tuple(FedLoop(loop.tag, loop.traits, loop.decision.chosen.case.feeder) for loop in loops),
@@ -60,6 +64,8 @@ def panel_of(loops: Sequence[DecidedLoop], panel: Panel, catalogue: Catalogue) -
         declared=incoming.declared,
         outputs=outputs,
         wiring=catalogue.wiring,
+        interior=heat,
+        control=control,
     )
     findings = examine_panel(case)
     return PanelDesign(
@@ -74,9 +80,11 @@ def panel_of(loops: Sequence[DecidedLoop], panel: Panel, catalogue: Catalogue) -
         conductors=conductor_rows(loops, by_tag),
         parts=part_rows(loops, incoming, panel, catalogue),
         open_points=(*unfit, *_open_points(findings, panel)),
-        assumptions=_assumptions(panel, catalogue),
+        assumptions=(*_assumptions(panel, catalogue), *supply_assumptions(loops), *heat_assumptions(loops, panel)),
         remarks=tuple(_remarks(demand, placed)),
-        basis=(*demand.figures, *incoming.figures),
+        basis=(*demand.figures, *incoming.figures, *control.figures, *heat.figures),
+        interior=heat,
+        control=control,
     )
 
 

@@ -12,6 +12,8 @@ from specgen.design.types import Missing, Verdict
 from specgen.rules.base import Finding
 from specgen.rules.panel_case import OutputCount
 from specgen.sizing.candidate import Assumption, Unsized
+from specgen.sizing.control_supply import ControlLoad
+from specgen.sizing.enclosure import Interior
 
 
 @dataclass(frozen=True, slots=True)
@@ -149,6 +151,8 @@ class PanelDesign:
     assumptions: tuple[Assumption, ...]
     remarks: tuple[Remark, ...]
     basis: tuple[Figure, ...]
+    interior: Interior | None = None
+    control: ControlLoad | None = None
 
     @property
     def phrasing(self) -> Phrasing:
