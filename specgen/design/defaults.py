@@ -21,7 +21,7 @@ def panel_defaults(case: Case, traits: Traits) -> tuple[Assumption, ...]:
 def _unwritten(section: Model, path: str, *names: str) -> Iterator[Assumption]:
     for name in names:
         if name not in section.model_fields_set:
-            yield Assumption(f"{path}.{name}" if path else name, _text(getattr(section, name)), WHY)
+            yield Assumption(f"{path}.{name}", _text(getattr(section, name)), WHY)
 
 
 def _text(value: object) -> str:
@@ -29,8 +29,6 @@ def _text(value: object) -> str:
         return value.text
     if isinstance(value, tuple):
         return ", ".join(f"{number:g}" for number in value) + " s"
-    if isinstance(value, Model):
-        return ", ".join(_text(getattr(value, name)) for name in type(value).model_fields)
     return str(value)
 
 
@@ -46,8 +44,8 @@ def _of_plant(case: Case, traits: Traits) -> Iterator[Assumption]:
 def _of_settings(case: Case) -> Iterator[Assumption]:
     panel, need, settings = case.panel, case.loop.need, case.settings
     if isinstance(settings, OnOffSettings | ProportionedSettings):
-        if need.duty is None:
-            yield from _unwritten(panel, "", "duty")
+        if need.duty is None and "duty" not in panel.model_fields_set:
+            yield Assumption("duty", f"{panel.duty.hours_per_day.text} a day, {panel.duty.days_per_year} days a year", WHY)
         if settings.contact_life is not None:
             yield from _unwritten(panel.house, "house", "contact_life")
     if isinstance(settings, OnOffSettings) and need.quantity in type(panel.house.setting_step).model_fields:

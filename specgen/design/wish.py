@@ -60,6 +60,9 @@ def decided_by(read: ReadLoop, examined: Sequence[Examined], own: Sequence[Exami
     if wish is not None and wish.because is None and set_aside:
         first = set_aside[0]
         said = f"choose sets aside rule {first.rule} without a reason: {phrasing.fill(first.text, first.words)}"
+        never = next((f for f in chosen.findings if f.outcome == "broken" and f.weight == "must"), None)
+        if never is not None:
+            said += f" And no reason would do for {never.rule}: {phrasing.fill(never.text, never.words)}"
         return None, _problem(read, ("choose",), "L302", said, "write because: with the reason, or leave the choice to the rules")
     others = sorted((e for e in examined if e is not chosen), key=rank)
     rejected = tuple(reject(chosen, other, phrasing, by_designer=by_designer) for other in others)
