@@ -4,7 +4,7 @@ from pathlib import Path
 
 import click
 
-from specgen.cli.common import exit_code, folder_argument, read, show_problems
+from specgen.cli.common import Trouble, exit_code, folder_argument, read, show_problems
 from specgen.render.site import SiteError, write_site
 
 
@@ -15,13 +15,13 @@ def build(context: click.Context, folder: Path) -> None:
     """Write the dossier of DIR into its site/; the one before stays until the new one is whole.
 
     Exit code: 2 with any problem in the files (the site is still built from the good loops), else 1 with a held
-    loop, else 0.
+    loop or panel, else 0.
     """
     design = read(folder)
     show_problems(design, err=True)
     try:
         index = write_site(folder, design) / "index.html"
     except SiteError as error:
-        raise click.ClickException(str(error)) from None
+        raise Trouble(str(error)) from None
     click.echo(f"{len(design.loops)} loops; open {index.resolve().as_uri()}")
     context.exit(exit_code(design))

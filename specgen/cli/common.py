@@ -2,6 +2,7 @@
 
 import sys
 from pathlib import Path
+from typing import IO, Any
 
 import click
 
@@ -13,12 +14,22 @@ from specgen.source.excerpt import excerpt
 folder_argument = click.argument("folder", default=".", type=click.Path(file_okay=False, path_type=Path), metavar="[DIR]")
 
 
+class Trouble(click.ClickException):
+    """What ends a command in one line; its exit code is not that of a held loop."""
+
+    exit_code = 2
+
+    def show(self, file: IO[Any] | None = None) -> None:
+        """Print the line."""
+        click.echo(f"specgen: {self.format_message()}", err=file is None, file=file)
+
+
 def read(folder: Path) -> Design:
     """Read and decide a folder, or say in one line why that cannot be."""
     if not folder.is_dir():
-        raise click.ClickException(f"{folder} is no folder; name the one that holds mkdocs.yml and loops/")
+        raise Trouble(f"{folder} is no folder; name the one that holds mkdocs.yml and loops/")
     if not (folder / "loops").is_dir():
-        raise click.ClickException(f"{folder} has no folder loops/; `specgen start {folder}` makes one to begin with")
+        raise Trouble(f"{folder} has no folder loops/; `specgen start {folder}` makes one to begin with")
     with click.progressbar(length=1, label="deciding", file=sys.stderr, hidden=not _on_terminal()) as bar:
 
         def progress(done: int, of: int) -> None:

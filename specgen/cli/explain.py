@@ -4,7 +4,7 @@ from pathlib import Path
 
 import click
 
-from specgen.cli.common import exit_code, folder_argument, read, show_problems
+from specgen.cli.common import Trouble, exit_code, folder_argument, read, show_problems
 from specgen.view.terminal import reasoning
 
 
@@ -20,6 +20,6 @@ def explain(context: click.Context, tag: str, folder: Path) -> None:
         if design.problems:
             show_problems(design, err=True)
         known = ", ".join(loop.tag for loop in design.loops)
-        raise click.ClickException(f"no loop {tag} could be read; there are: {known or 'none'}")
+        raise Trouble(f"no loop {tag} could be read; there are: {known or 'none'}")
     click.echo(reasoning(found))
     context.exit(exit_code(design))

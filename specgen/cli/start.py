@@ -5,6 +5,8 @@ from pathlib import Path
 
 import click
 
+from specgen.cli.common import Trouble
+
 FILES = ("mkdocs.yml", "loops/panel.yml", "loops/first-loops.yml")
 
 
@@ -14,7 +16,7 @@ def start(folder: Path) -> None:
     """Make a new dossier folder DIR with a commented panel and two loops; never overwrite anything."""
     standing = [name for name in FILES if (folder / name).exists()]
     if standing:
-        raise click.ClickException(f"{folder / standing[0]} is already there; nothing was written")
+        raise Trouble(f"{folder / standing[0]} is already there; nothing was written")
     starter = resources.files("specgen.cli") / "starter"
     for name in FILES:
         target = folder / name

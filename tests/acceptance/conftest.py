@@ -69,16 +69,21 @@ def loop_text(name, stability="steady", tolerance="2.5 K", tag="TIC-1", more="")
     return f"tag: {tag}\nservice: {name}\n{plant % {'stability': stability, 'tolerance': tolerance}}element: {element}\n{more}"
 
 
-def record(text, panel=PANEL):
-    """Return the record of a loop text that has no problem."""
+def decided(text, panel=PANEL):
+    """Decide a loop text: the loop or None, and the problems of the decision."""
     heads, problems = read_text(panel, "loops/panel.yml")
     made, faults = read_model(Panel, heads[0].data)
     documents, found = read_text(text, "loops/loop.yml")
     reading = read_loops(documents)
     assert not [*problems, *faults, *found, *reading.problems], [*problems, *faults, *found, *reading.problems]
-    decided, refused = decide(reading.loops[0], made, load_catalogue(None))
+    return decide(reading.loops[0], made, load_catalogue(None))
+
+
+def record(text, panel=PANEL):
+    """Return the record of a loop text that has no problem."""
+    found, refused = decided(text, panel)
     assert not refused, refused
-    return loop_record(decided)
+    return loop_record(found)
 
 
 def lay(folder, **files):
@@ -93,4 +98,4 @@ def lay(folder, **files):
 @pytest.fixture(scope="session")
 def make():
     """Give everything an acceptance test builds from."""
-    return SimpleNamespace(loop_text=loop_text, record=record, lay=lay, panel=PANEL, site=SITE, elements=tuple(ELEMENTS))
+    return SimpleNamespace(loop_text=loop_text, decided=decided, record=record, lay=lay, panel=PANEL, site=SITE, elements=tuple(ELEMENTS))
