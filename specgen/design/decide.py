@@ -5,8 +5,8 @@ from specgen.core.diagnostic import Diagnostic
 from specgen.design.assumptions import loop_assumptions
 from specgen.design.basis import basis_of
 from specgen.design.defaults import panel_defaults
-from specgen.design.limiter import limiter_of
 from specgen.design.missing import missing_inputs
+from specgen.design.safety import safety_of
 from specgen.design.types import DecidedLoop, Examined, Verdict
 from specgen.design.wish import decided_by, marked, sets_something, unused
 from specgen.model.fitted import Fitted
@@ -58,7 +58,7 @@ def decide(read: ReadLoop, panel: Panel, catalogue: Catalogue) -> tuple[DecidedL
         return None, (problem,) if problem is not None else ()
     case = decision.chosen.case
     findings = (*marked(decision, loop.choose, own), *examine_own(case))
-    limiter = limiter_of(case)
+    safety = safety_of(case)
     inject = inject_values(loop, catalogue)
     put_in = () if isinstance(inject, Unsized) else inject
     decided = DecidedLoop(
@@ -68,14 +68,14 @@ def decide(read: ReadLoop, panel: Panel, catalogue: Catalogue) -> tuple[DecidedL
         decision=decision,
         findings=findings,
         verdict=verdict_of(findings),
-        assumptions=(*_assumptions(read, traits, case), *(limiter.assumptions if limiter is not None else ())),
+        assumptions=(*_assumptions(read, traits, case), *safety.assumptions),
         missing=missing_inputs(findings, case),
         basis=(
             *basis_of(case, read.fitted.figures if read.fitted is not None else ()),
-            *(limiter.figures if limiter is not None else ()),
+            *safety.figures,
             *put_in,
         ),
-        limiter=limiter,
+        safety=safety,
         inject=put_in,
     )
     return decided, ()

@@ -8,13 +8,13 @@ from specgen.core.figure import Figure
 from specgen.core.quantity import Unit
 from specgen.core.say import Said
 from specgen.design.designation import designation
-from specgen.design.limiter import IndependentLimiter
 from specgen.design.rounding import in_unit, rounded
-from specgen.design.types import DecidedLoop, Rejected
+from specgen.design.types import DecidedLoop, Firm, Rejected
 from specgen.process.box import Unmodelled
 from specgen.rules.base import Case, Finding
 from specgen.sizing.candidate import Unsized
 from specgen.sizing.faults import Stuck
+from specgen.sizing.limiter import LimiterDesign
 from specgen.sizing.settings import ContinuousSettings, OnOffSettings, ProportionedSettings, ThreePointSettings, Tuning
 
 DEVICE_LETTER = {"contactor": "Q1", "ssr": "Q1", "power_controller": "Q1", "relay": "K1", "relay_pair": "K1"}
@@ -82,6 +82,7 @@ def loop_record(decided: DecidedLoop) -> Row:
         "rules": [_rule(decided, finding) for finding in decided.findings],
         "alternatives": [_chosen(decided, numbers), *(_rejected(rejected, numbers) for rejected in decided.decision.rejected)],
         "assumptions": [{"field": a.field, "value": a.value, "why": a.why} for a in decided.assumptions],
+        "firmness": [_firm(firm, numbers) for firm in decided.firmness],
         "missing": [{"field": m.field, "settles": list(m.settles), "how": m.how} for m in decided.missing],
         "basis": [_figure(decided, figure, numbers) for figure in decided.basis if isfinite(figure.value)],
     }
@@ -203,7 +204,7 @@ def _stuck(stuck: Stuck, numbers: _Numbers) -> Row:
     })  # fmt: skip
 
 
-def _limiter(tag: str, limiter: IndependentLimiter, numbers: _Numbers) -> Row:
+def _limiter(tag: str, limiter: LimiterDesign, numbers: _Numbers) -> Row:
     return present({
         "set": numbers.value(limiter.set), "sensor_lag": numbers.plain(limiter.sensor_lag), "acts_at": numbers.value(limiter.acts_at),
         "designation": designation(tag, "F2"),
@@ -239,6 +240,14 @@ def _rejected(rejected: Rejected, numbers: _Numbers) -> Row:
         "mode": case.candidate.mode, "device": case.candidate.device, "chosen": False, "ruled_out_by": list(rejected.ruled_out_by),
         "predicted": predicted(case, numbers), "text": rejected.text,
     }  # fmt: skip
+
+
+def _firm(firm: Firm, numbers: _Numbers) -> Row:
+    made: Row = {"input": firm.input}
+    for name, value in (("declared", firm.declared), ("below", firm.below), ("above", firm.above)):
+        if value is not None:
+            made[name], made["unit"] = numbers.of(Figure("", "", "", value, firm.dimension, ""))
+    return made | {key: to for key, to in (("below_to", firm.below_to), ("above_to", firm.above_to)) if to}
 
 
 def _figure(decided: DecidedLoop, figure: Figure, numbers: _Numbers) -> Row:

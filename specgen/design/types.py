@@ -6,7 +6,7 @@ from typing import TYPE_CHECKING, Literal
 from specgen.core.diagnostic import Diagnostic
 from specgen.core.figure import Figure
 from specgen.core.say import Phrasing
-from specgen.design.limiter import IndependentLimiter
+from specgen.design.safety import SafetyDesign
 from specgen.model.loop import Loop
 from specgen.model.loops import ReadLoop
 from specgen.model.panel import Panel
@@ -14,6 +14,7 @@ from specgen.model.traits import Traits
 from specgen.process.box import Box, Unmodelled
 from specgen.rules.base import Case, Finding
 from specgen.sizing.candidate import Assumption
+from specgen.sizing.limiter import LimiterDesign
 
 if TYPE_CHECKING:
     from specgen.design.panel.types import PanelDesign
@@ -102,7 +103,7 @@ class DecidedLoop:
 
     ``findings`` are the chosen candidate's, overrides marked; ``assumptions`` everything taken for granted;
     ``basis`` every number shown anywhere, in the order of the calculation; ``firmness`` how far each uncertain input may be off,
-    empty where that was not asked for; ``limiter`` what stops a stuck output, ``inject`` what stands for the sensor at site.
+    empty where that was not asked for; ``safety`` what stops a stuck output, ``inject`` what stands for the sensor at site.
     """
 
     read: ReadLoop
@@ -115,8 +116,8 @@ class DecidedLoop:
     missing: tuple[Missing, ...]
     basis: tuple[Figure, ...]
     firmness: tuple[Firm, ...] = ()
-    limiter: IndependentLimiter | None = None
     inject: tuple[Figure, ...] = ()
+    safety: SafetyDesign | None = None
 
     @property
     def loop(self) -> Loop:
@@ -127,6 +128,11 @@ class DecidedLoop:
     def tag(self) -> str:
         """Return the loop's tag."""
         return self.read.loop.tag
+
+    @property
+    def limiter(self) -> LimiterDesign | None:
+        """Return the independent limiter, None where there is none."""
+        return self.safety.limiter if self.safety is not None else None
 
     @property
     def phrasing(self) -> Phrasing:
