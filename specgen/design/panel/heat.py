@@ -4,7 +4,7 @@ from collections.abc import Iterator, Sequence
 
 from specgen.catalogue.enclosure import EnclosureTables, enclosure_tables
 from specgen.catalogue.load import Catalogue
-from specgen.design.panel.limiter_switch import limiter_switch
+from specgen.design.panel.limiter_switch import Switches
 from specgen.design.types import DecidedLoop
 from specgen.model.panel import Panel
 from specgen.sizing.candidate import Assumption, Unsized
@@ -17,13 +17,15 @@ REPLACE = "typical; to be replaced by the data sheet before construction"
 SQUARE_MM = 1e-6
 
 
-def interior(loops: Sequence[DecidedLoop], control: ControlLoad, panel: Panel, catalogue: Catalogue) -> Interior:
+def interior(loops: Sequence[DecidedLoop], switches: Switches, control: ControlLoad, panel: Panel, catalogue: Catalogue) -> Interior:
     """Return the enclosure's heat balance.
 
     Parameters
     ----------
     loops : sequence of DecidedLoop
         Every loop, held and open ones too.
+    switches : mapping of str to DeviceChoice
+        Switching devices of the safety chains, by tag.
     control : ControlLoad
         What the control supply delivers.
     panel, catalogue
@@ -39,18 +41,20 @@ def interior(loops: Sequence[DecidedLoop], control: ControlLoad, panel: Panel, c
     A cold plant starts with every loop at full output for longer than the enclosure takes to warm up, so that the loops' mean
     duty is no relief; the coincidence is the designer's own word on how many are on at once.
     """
-    return interior_of(panel.enclosure, tuple(losses(loops, control, panel, catalogue)), enclosure_tables())
+    return interior_of(panel.enclosure, tuple(losses(loops, switches, control, panel, catalogue)), enclosure_tables())
 
 
-def losses(loops: Sequence[DecidedLoop], control: ControlLoad, panel: Panel, catalogue: Catalogue) -> Iterator[Loss]:
+def losses(
+    loops: Sequence[DecidedLoop], switches: Switches, control: ControlLoad, panel: Panel, catalogue: Catalogue
+) -> Iterator[Loss]:
     """Yield every source of heat [W] at the duty that counts; parameters as `interior`."""
     tables, share = enclosure_tables(), float(panel.panel.coincidence)
     for loop in sorted(loops, key=lambda loop: loop.tag):
         for what, watts in _at_full_output(loop, tables, catalogue):
             yield Loss(what, share * watts, loop.tag)
-        switch = limiter_switch(loop, panel, catalogue)
+        switch = switches.get(loop.tag)
         if switch is not None:
-            yield Loss(f"{switch.name}, switching device of the limiter", switch.loss or 0.0, loop.tag)
+            yield Loss(f"{switch.name}, switching device of the safety chain", switch.loss or 0.0, loop.tag)
         if isinstance(loop.decision.chosen.case.device, DeviceChoice):
             yield Loss("controller, its share", float(tables.figure("controller_power").value.quantity), loop.tag)
     delivered = control.continuous * float(panel.control_supply.voltage)

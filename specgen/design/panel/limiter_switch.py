@@ -1,4 +1,6 @@
-"""The switching device of an independent limiter: a contactor of its own in the power path."""
+"""The switching device of a loop's safety chain: a contactor of its own in the power path."""
+
+from collections.abc import Mapping, Sequence
 
 from specgen.catalogue.load import Catalogue
 from specgen.design.types import DecidedLoop
@@ -6,21 +8,23 @@ from specgen.model.panel import Panel
 from specgen.sizing.candidate import Unsized
 from specgen.sizing.contactor_choice import contactor_choices
 from specgen.sizing.device import DeviceChoice
-from specgen.sizing.faults import Faults
+
+Switches = Mapping[str, DeviceChoice]
+IN_THE_PANEL = ("contactor", "drive_contactor")  # a shut-off valve stands in the field, a burner has its own
 
 
-def limited(loop: DecidedLoop) -> bool:
-    """Tell whether an independent limiter is part of the loop: one is declared, or a stuck output passes a danger (S1)."""
-    faults = loop.decision.chosen.case.faults
-    return loop.loop.limits.limiter is not None or (isinstance(faults, Faults) and faults.on.passes)
+def limiter_switches(loops: Sequence[DecidedLoop], panel: Panel, catalogue: Catalogue) -> Switches:
+    """Return the switching devices of the loops' safety chains by tag, each as `limiter_switch` finds it."""
+    found = ((loop.tag, limiter_switch(loop, panel, catalogue)) for loop in loops)
+    return {tag: switch for tag, switch in found if switch is not None}
 
 
 def limiter_switch(loop: DecidedLoop, panel: Panel, catalogue: Catalogue) -> DeviceChoice | None:
-    """Return the smallest contactor that carries the loop's load, None where there is no limiter or it opens no load of this panel.
+    """Return the smallest contactor that carries the loop's load, None where the chain ends in nothing of this panel.
 
-    It opens only when the limiter acts, so that its life is no question and it is on whenever the plant runs.
+    It opens only when the chain does, so that its life is no question and it is on whenever the plant runs.
     """
-    if not limited(loop):
+    if loop.safety is None or loop.safety.switch not in IN_THE_PANEL:
         return None
     found = contactor_choices(loop.loop, panel, catalogue)
     return None if isinstance(found, Unsized) else found[0]

@@ -8,6 +8,7 @@ from specgen.design.decide import verdict_of
 from specgen.design.missing import how_to_get
 from specgen.design.panel.demand import demand_of, incoming_of
 from specgen.design.panel.heat import heat_assumptions, interior
+from specgen.design.panel.limiter_switch import limiter_switches
 from specgen.design.panel.lines import NEUTRAL, lines_of
 from specgen.design.panel.parts import part_rows
 from specgen.design.panel.placing import place_loads
@@ -52,8 +53,9 @@ def panel_of(loops: Sequence[DecidedLoop], panel: Panel, catalogue: Catalogue) -
     largest = max((row.rating for row in protection if row.loop in by_tag), default=0.0)
     incoming = incoming_of(demand, placed, largest, panel, catalogue)
     outputs = output_counts(loops, panel)
-    control = control_supply_load(loops, panel, catalogue)
-    heat = interior(loops, control, panel, catalogue)
+    switches = limiter_switches(loops, panel, catalogue)
+    control = control_supply_load(loops, switches, panel)
+    heat = interior(loops, switches, control, panel, catalogue)
     case = PanelCase(
         panel=panel,
         fed=tuple(FedLoop(loop.tag, loop.traits, loop.decision.chosen.case.feeder) for loop in loops),
@@ -78,7 +80,7 @@ def panel_of(loops: Sequence[DecidedLoop], panel: Panel, catalogue: Catalogue) -
         outputs=outputs,
         protection=protection,
         conductors=conductor_rows(loops, by_tag),
-        parts=part_rows(loops, incoming, panel, catalogue),
+        parts=part_rows(loops, switches, incoming, panel, catalogue),
         open_points=(*unfit, *_open_points(findings, panel)),
         assumptions=(*_assumptions(panel, catalogue), *supply_assumptions(loops), *heat_assumptions(loops, panel)),
         remarks=tuple(_remarks(demand, placed)),

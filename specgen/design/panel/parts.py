@@ -1,16 +1,18 @@
 """Schedule of parts: one row a designation."""
 
 from collections.abc import Iterator, Sequence
+from dataclasses import replace
 
 from specgen.catalogue.load import Catalogue
+from specgen.core.say import digits
 from specgen.design.designation import designation
+from specgen.design.panel.limiter_switch import Switches
 from specgen.design.panel.schedules import circuits, load_letter, numbered
 from specgen.design.panel.types import Incoming, PartRow
 from specgen.design.types import DecidedLoop
 from specgen.model.panel import Panel
 from specgen.sizing.candidate import Unsized
 from specgen.sizing.device import DeviceChoice
-from specgen.sizing.faults import Faults
 from specgen.sizing.feeder import Branch, Feeder
 
 DEVICE_LETTER = {"contactor": "Q1", "ssr": "Q1", "power_controller": "Q1", "relay": "K1", "relay_pair": "K1"}
@@ -20,11 +22,13 @@ _KINDS = {
 }  # fmt: skip
 
 
-def part_rows(loops: Sequence[DecidedLoop], incoming: Incoming, panel: Panel, catalogue: Catalogue) -> tuple[PartRow, ...]:
-    """Return every part of the loops, by tag, and what they share."""
+def part_rows(
+    loops: Sequence[DecidedLoop], switches: Switches, incoming: Incoming, panel: Panel, catalogue: Catalogue
+) -> tuple[PartRow, ...]:
+    """Return every part of the loops, by tag, and what they share; ``switches`` are those of the safety chains."""
     found: list[PartRow] = []
     for loop in sorted(loops, key=lambda loop: loop.tag):
-        own = [*_circuits(loop), *_devices(loop, catalogue), *_limiter(loop), *_field(loop)]
+        own = [*_circuits(loop), *_devices(loop, catalogue), *_safety(loop, switches), *_suppressors(loop, switches), *_field(loop)]
         found += [PartRow(designation(loop.tag, product), what, rating, quantity, (loop.tag,)) for product, what, rating, quantity in own]
     return (*found, *_shared(loops, incoming, panel))
 
@@ -58,22 +62,35 @@ def _devices(loop: DecidedLoop, catalogue: Catalogue) -> Iterator[Part]:
     device = case.device
     letter = DEVICE_LETTER[case.candidate.device]
     listed = catalogue.device(device.name) is not None
+    sink = f", heat sink of at most {digits(device.heat_sink)} K/W" if device.heat_sink else ""
     # an output of the controller is used here and bought with the controller
-    yield letter, device.name if listed else f"{device.name}, part of it", device.rating, 2 if case.candidate.device == "relay_pair" else 1
+    what = f"{device.name}{sink}" if listed else f"{device.name}, part of it"
+    yield letter, what, device.rating, 2 if case.candidate.device == "relay_pair" else 1
+    if device.isolator:
+        yield "Q3", f"{device.isolator}, opens every line", None, 1
     between = [contact for contact in device.chain if contact.role == "interposing"]
     for number, contact in enumerate(between):
         yield f"K{number + (2 if letter == 'K1' else 1)}", f"{contact.name}, interposing", None, 1
 
 
-def _limiter(loop: DecidedLoop) -> Iterator[Part]:
-    faults, declared = loop.decision.chosen.case.faults, loop.loop.limits.limiter
-    if declared is None and not (isinstance(faults, Faults) and faults.on.passes):
-        return
-    quantity = loop.loop.need.quantity
-    resets = declared.resets if declared is not None else "manual"
-    yield "F2", f"limiter, {quantity if quantity != 'other' else loop.loop.unit.symbol}, {resets} reset", None, 1
-    yield "B2", f"sensor of the limiter, {quantity}", None, 1
-    yield "Q2", "switching device of the limiter", None, 1
+def _suppressors(loop: DecidedLoop, switches: Switches) -> Iterator[Part]:
+    device, switch = loop.decision.chosen.case.device, switches.get(loop.tag)
+    fitted = [] if isinstance(device, Unsized) else list(device.suppressors)
+    if switch is not None:
+        # the load, where it is a coil, has its own already
+        own = (part for part in switch.suppressors if part.across != "the element")
+        fitted += [replace(part, across=f"{part.across}, of the safety chain") for part in own]
+    for number, part in enumerate(fitted, 1):
+        yield f"R{number}", f"{part.part}, across {part.across}", None, 1
+
+
+def _safety(loop: DecidedLoop, switches: Switches) -> Iterator[Part]:
+    switch = switches.get(loop.tag)
+    for part in loop.safety.parts if loop.safety is not None else ():
+        if part.product == "Q2" and switch is not None:
+            yield part.product, f"{switch.name}, {part.what}", switch.rating, part.quantity
+        else:
+            yield part.product, part.what, part.rating, part.quantity
 
 
 def _field(loop: DecidedLoop) -> Iterator[Part]:

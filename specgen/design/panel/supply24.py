@@ -1,10 +1,9 @@
-"""What the control supply feeds: coils and inputs of every loop, its controllers, valves and limiters."""
+"""What the control supply feeds: coils and inputs of every loop, its controllers, valves and safety chains."""
 
 from collections.abc import Iterator, Sequence
 
 from specgen.catalogue.enclosure import enclosure_tables
-from specgen.catalogue.load import Catalogue
-from specgen.design.panel.limiter_switch import limiter_switch
+from specgen.design.panel.limiter_switch import Switches
 from specgen.design.types import DecidedLoop
 from specgen.model.panel import Panel
 from specgen.sizing.candidate import Assumption
@@ -14,25 +13,27 @@ from specgen.sizing.device import DeviceChoice
 REPLACE = "typical; to be replaced by the data sheet before construction"
 
 
-def control_supply_load(loops: Sequence[DecidedLoop], panel: Panel, catalogue: Catalogue) -> ControlLoad:
+def control_supply_load(loops: Sequence[DecidedLoop], switches: Switches, panel: Panel) -> ControlLoad:
     """Return what the control supply carries.
 
     Parameters
     ----------
     loops : sequence of DecidedLoop
         Every loop, held and open ones too.
-    panel, catalogue
-        Its control supply, and what is looked up.
+    switches : mapping of str to DeviceChoice
+        Switching devices of the safety chains, by tag.
+    panel : Panel
+        Its control supply.
 
     Returns
     -------
     ControlLoad
         Continuous and at switch-on, with the list.
     """
-    return control_load(panel.control_supply, tuple(taken(loops, panel, catalogue)))
+    return control_load(panel.control_supply, tuple(taken(loops, switches, panel)))
 
 
-def taken(loops: Sequence[DecidedLoop], panel: Panel, catalogue: Catalogue) -> Iterator[Taken]:
+def taken(loops: Sequence[DecidedLoop], switches: Switches, panel: Panel) -> Iterator[Taken]:
     """Yield every taker of the control supply; parameters as `control_supply_load`."""
     tables, voltage = enclosure_tables(), float(panel.control_supply.voltage)
     controller = float(tables.figure("controller_power").value.quantity) / voltage
@@ -45,10 +46,10 @@ def taken(loops: Sequence[DecidedLoop], panel: Panel, catalogue: Catalogue) -> I
         if _driven(loop):
             drives = loop.loop.element.count * valve
             yield Taken("drive of the valve", drives, drives, loop.tag)
-        switch = limiter_switch(loop, panel, catalogue)
+        switch = switches.get(loop.tag)
         if switch is not None:
             coils = (drawn for drawn in switch.drawn if drawn.inside)
-            yield from (Taken(f"{drawn.what}, of the limiter", drawn.hold, drawn.inrush, loop.tag) for drawn in coils)
+            yield from (Taken(f"{drawn.what}, of the safety chain", drawn.hold, drawn.inrush, loop.tag) for drawn in coils)
 
 
 def _driven(loop: DecidedLoop) -> bool:
