@@ -23,5 +23,5 @@ def build(context: click.Context, folder: Path) -> None:
         index = write_site(folder, design) / "index.html"
     except SiteError as error:
         raise Trouble(str(error)) from None
-    click.echo(f"{len(design.loops)} loops; open {index.resolve().as_uri()}")
+    click.echo(f"{len(design.loops)} loop{'' if len(design.loops) == 1 else 's'}; open {index.resolve().as_uri()}")
     context.exit(exit_code(design))

@@ -50,4 +50,5 @@ def _print_text(design: Design) -> None:
     counts = ", ".join(f"{n} {v}" for v in ("meets", "deviates", "open", "held") if (n := sum(1 for x in design.loops if x.verdict == v)))
     problems = f"{len(design.problems)} problem{'' if len(design.problems) == 1 else 's'} in the files"
     held = "; the panel is held" if design.panel_design is not None and design.panel_design.verdict == "held" else ""
-    click.echo(f"\n{len(design.loops)} loop{"" if len(design.loops) == 1 else "s"}: {counts or 'none'}{held}; {problems}")
+    loops = f"{len(design.loops)} loop{'' if len(design.loops) == 1 else 's'}"
+    click.echo(f"\n{loops}: {counts or 'none'}{held}; {problems}")

@@ -85,7 +85,8 @@ def test_the_verdict_table_and_the_sum(tmp_path):
 
 def test_a_held_panel_says_why(tmp_path):
     """A box too small for its heat: every loop meets, the panel does not."""
-    small = PANEL.replace("height: 1800 mm, width: 800 mm, depth: 400 mm", "height: 200 mm, width: 200 mm, depth: 120 mm, other_heat: 400 W")
+    size = "height: 200 mm, width: 200 mm, depth: 120 mm, other_heat: 400 W"
+    small = PANEL.replace("height: 1800 mm, width: 800 mm, depth: 400 mm", size)
     result = run("check", lay(tmp_path, GOOD, panel=small))
     assert result.exit_code == 1
     assert "\npanel broken E5 (must): " in result.output
