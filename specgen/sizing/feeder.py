@@ -114,12 +114,14 @@ def surviving(
     """
     if isinstance(choices, Unsized):
         return choices
+    fed = feeder_of(device, choices[0], loop, panel, traits, catalogue)
+    if isinstance(fed, Unsized):
+        return tuple(choices)
+    # what feeds them is the same for all; only what each stands differs
     kept = []
     for choice in choices:
-        fed = feeder_of(device, choice, loop, panel, traits, catalogue)
-        if isinstance(fed, Unsized):
-            return tuple(choices)
-        if fed.survival is None or fed.survival.survives is not False:
+        survival = _survival(device, choice, fed.branches, panel, catalogue)
+        if survival is None or survival.survives is not False:
             kept.append(choice)
     if not kept or kept[0] == choices[0]:
         return tuple(kept or choices)

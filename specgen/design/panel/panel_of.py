@@ -6,6 +6,7 @@ from specgen.catalogue.load import Catalogue
 from specgen.core.say import amperes
 from specgen.design.decide import verdict_of
 from specgen.design.missing import how_to_get
+from specgen.design.panel.confirmed import unknown_confirmations
 from specgen.design.panel.demand import demand_of, incoming_of
 from specgen.design.panel.heat import heat_assumptions, interior
 from specgen.design.panel.limiter_switch import limiter_switches
@@ -81,7 +82,7 @@ def panel_of(loops: Sequence[DecidedLoop], panel: Panel, catalogue: Catalogue) -
         protection=protection,
         conductors=conductor_rows(loops, by_tag),
         parts=part_rows(loops, switches, incoming, panel, catalogue),
-        open_points=(*unfit, *_open_points(findings, panel)),
+        open_points=(*unfit, *_open_points(findings, panel), *_unconfirmed(panel, catalogue)),
         assumptions=(*_assumptions(panel, catalogue), *supply_assumptions(loops), *heat_assumptions(loops, panel)),
         remarks=tuple(_remarks(demand, placed)),
         basis=(*demand.figures, *incoming.figures, *control.figures, *heat.figures),
@@ -118,6 +119,11 @@ def _open_points(findings: Sequence[Finding], panel: Panel) -> Iterator[Missing]
                 settles.setdefault(field, []).append(finding.rule)
     for field, rules in sorted(settles.items()):
         yield Missing(field, tuple(dict.fromkeys(rules)), how_to_get(field))
+
+
+def _unconfirmed(panel: Panel, catalogue: Catalogue) -> Iterator[Missing]:
+    for row in unknown_confirmations(panel, catalogue.rows):
+        yield Missing("confirmed", (), f"'{row}' is no row of any table and no group of rows: it confirms nothing")
 
 
 def _assumptions(panel: Panel, catalogue: Catalogue) -> tuple[Assumption, ...]:

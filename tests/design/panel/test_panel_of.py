@@ -165,6 +165,9 @@ def test_rows_from_memory(shop):
     panel = shop.panel(confirmed=[{"row": row, "by": "ab", "against": "x"} for row in ("conductors/B", "conductors/B1")])
     assert not is_confirmed("conductors/B2/2.5", panel)
     assert unknown_confirmations(panel, shop.catalogue.rows) == ("conductors/B",)
+    points = [point for point in shop.panel_of([], panel).open_points if point.field == "confirmed"]
+    assert len(points) == 1
+    assert "'conductors/B'" in points[0].how
 
 
 def test_record(shop):
