@@ -7,6 +7,7 @@ from specgen.core.figure import Figure
 from specgen.model.loop import Loop
 from specgen.model.traits import traits_of
 from specgen.process.box import Box, Point
+from specgen.process.fault_cases import warm_up
 from specgen.process.load_step import first_estimate, load_step
 from specgen.process.loop_dynamics import Dynamics
 from specgen.process.loop_run import Band
@@ -116,10 +117,15 @@ def tuning_of(start: Start, box: Box, loop: Loop, deviation: float | None, *, si
         figures.append(Figure("Δy", called, "simulated", deviation, "change", OWN, {}, start.hardest.text))
     overshoot = time_to_band = None
     if rise is not None:
-        overshoot, time_to_band = rise
+        overshoot, simulated = rise
         figures.append(Figure("y_os", "overshoot on start-up", "simulated from rest", overshoot, "change", OWN))
+        # the loop is simulated with what follows fast; at a cold start full output has to warm the rest as well
+        cold = warm_up(box, below if loop.raises else above)
+        time_to_band = simulated if cold is None else max(simulated, cold.value)
         if isfinite(time_to_band):
-            figures.append(Figure("t_b", "time to the band, longest", "simulated from rest", time_to_band, "time", OWN))
+            how = "the longer of the simulated start and the first rise with every body counted"
+            case = "" if cold is None else cold.text
+            figures.append(Figure("t_b", "time to the band, longest", how, time_to_band, "time", OWN, {}, case))
     settings, found = start.settings, start.margins
     return Tuning(
         settings.gain, settings.proportional_band, settings.integral_time, settings.derivative_time, _delay(start),

@@ -16,6 +16,7 @@ def examine(case: Case) -> Finding:
     duty, reach = box.duty_high[0], box.reach
     words: dict[str, Said | str] = {"case": box.text(reach.point), "duty": share(duty), "short": of_change(reach.shortfall)}
     if box.reaches:
+        words["case"] = box.text(box.duty_high[1])
         return rule.judge(
             holds=True, margin=over(1.0, duty), text="In the hardest case ({case}) the setpoint takes {duty} of full output.", **words
         )
