@@ -1,11 +1,12 @@
 """From a folder to a design: read everything, decide every loop that could be read."""
 
-from collections.abc import Callable, Sequence
+from collections.abc import Sequence
 from pathlib import Path
 
 from specgen.catalogue.load import Catalogue, catalogue_digest, load_catalogue, read_devices
 from specgen.core.diagnostic import Diagnostic
-from specgen.design.decide import decide
+from specgen.design.cache import Cache
+from specgen.design.many import Progress, Task, decide_all
 from specgen.design.panel import panel_of
 from specgen.design.recordings import with_recordings
 from specgen.design.types import VERDICTS, DecidedLoop, Design, SourceFile, Verdict
@@ -17,10 +18,12 @@ from specgen.source.document import Document
 from specgen.source.folder import Sources, read_folder
 
 LOOPS = "loops"
-Progress = Callable[[int, int], None]
+DEVICES = f"{LOOPS}/devices.yml"
 
 
-def load_design(project: Path, progress: Progress | None = None) -> Design:
+def load_design(
+    project: Path, progress: Progress | None = None, *, firmness: bool = False, workers: int = 1, remember: bool = True
+) -> Design:
     """Read a project's ``loops`` folder and decide every loop in it.
 
     Parameters
@@ -29,17 +32,28 @@ def load_design(project: Path, progress: Progress | None = None) -> Design:
         The folder that holds ``mkdocs.yml`` and ``loops/``.
     progress : callable, optional
         Called with the loops decided and their number.
+    firmness : bool
+        Whether to tell how firm each decision is, which takes many times as long as the decision itself.
+    workers : int
+        Processes to decide over where there are many loops; 0 for as many as the machine has processors. More than one
+        needs a main module that may be imported again, as every command has; a bare script has none.
+    remember : bool
+        Whether decisions are taken from ``.specgen/`` beside the dossier and kept there.
 
     Returns
     -------
     Design
         Every loop that could be decided and every problem met; nothing is raised for what the files hold.
     """
-    return design_of(read_folder(project / LOOPS, LOOPS), progress, project / LOOPS)
+    sources = read_folder(project / LOOPS, LOOPS)
+    return design_of(sources, progress, project / LOOPS, firmness=firmness, workers=workers, beside=project if remember else None)
 
 
-def design_of(sources: Sources, progress: Progress | None = None, folder: Path | None = None) -> Design:
-    """Decide what was read; ``folder`` is where the recordings lie that loops name."""
+def design_of(
+    sources: Sources, progress: Progress | None = None, folder: Path | None = None, *, firmness: bool = False, workers: int = 1,
+    beside: Path | None = None,
+) -> Design:  # fmt: skip
+    """Decide what was read; ``folder`` is where the recordings lie that loops name, ``beside`` where decisions are remembered."""
     problems = list(sources.problems)
     panel, found = _read_panel(sources.panel)
     problems += found
@@ -51,13 +65,12 @@ def design_of(sources: Sources, progress: Progress | None = None, folder: Path |
     problems += tested.problems
     decided: list[DecidedLoop] = []
     if panel is not None:
-        for done, read in enumerate(tested.loops):
-            loop, faults = decide(read, panel, catalogue)
+        devices = dict(sources.files).get(DEVICES, b"")
+        cache = None if beside is None else Cache(beside, panel, devices, firmness=firmness)
+        for loop, faults in decide_all(tested.loops, Task(panel, catalogue, firmness), cache, progress, workers):
             problems += faults
             if loop is not None:
                 decided.append(loop)
-            if progress is not None:
-                progress(done + 1, len(tested.loops))
     together = panel_of(decided, panel, catalogue) if panel is not None else None
     own = [together.verdict] if together is not None and decided else []
     return Design(
