@@ -23,7 +23,7 @@ class BasisIndex:
     def href(self, value: float, dimension: str) -> str:
         """Return a link to the line that computed a number, empty where there is none."""
         line = self.line(value, dimension)
-        return f"#basis-{line}" if line else ""
+        return f"#b{line}" if line else ""
 
     def of_finding(self, finding: Finding) -> tuple[int, ...]:
         """Return the lines that a finding's numbers come from, in their order."""
@@ -41,7 +41,7 @@ def basis_index(basis: Iterable[Figure]) -> BasisIndex:
     --------
     >>> index = basis_index([Figure("P", "period", "", 169.571, "time", ""), Figure("T", "cycle", "", 60.0, "time", "")])
     >>> index.href(169.571, "time"), index.href(60.0, "time"), index.href(169.571, "change")
-    ('#basis-1', '', '')
+    ('#b1', '', '')
     """
     lines: dict[tuple[str, float], int] = {}
     for number, figure in enumerate(basis, 1):

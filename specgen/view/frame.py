@@ -115,10 +115,14 @@ def standing_notice(dossier: Dossier, place: Place) -> Standing | None:
         where = counted(errors, "problem") + " in the input"
         lost = f"; {_missing(dossier.missing)}" if dossier.missing else ""
         items.append(Item((Span(where, place.to("index.html", "problems")), Span(lost))))
+    panel = dossier.design.panel_design
+    if panel is not None and panel.verdict in ("held", "open"):
+        items.append(Item((Span("the panel", place.to("index.html", "panel")),), mark=verdict_mark(panel.verdict)))
     items += [_tags_item(verdict, tags, place) for verdict, tags in (("held", dossier.held), ("open", dossier.unsettled)) if tags]
     if not items:
         return None
-    return Standing("problem" if errors else "held" if dossier.held else "open", tuple(items))
+    held = bool(dossier.held) or (panel is not None and panel.verdict == "held")
+    return Standing("problem" if errors else "held" if held else "open", tuple(items))
 
 
 def _missing(loops: tuple[MissingLoop, ...]) -> str:

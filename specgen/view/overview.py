@@ -5,20 +5,25 @@ from specgen.design.types import VERDICTS, DecidedLoop
 from specgen.view.cells import says, verdict_cell, verdict_mark, word
 from specgen.view.dossier import Dossier, not_examined
 from specgen.view.frame import PAGE_ROWS, Place, frame
+from specgen.view.panel_rules import panel_blocks
+from specgen.view.registers import open_points_table
 from specgen.view.shapes import Column, Item, List, PageView, Row, Section, Sentence, Shape, Span, Table
 from specgen.view.sheet_title import decision_words
-from specgen.view.words import VERDICT_SAYS, capital, counted, listed
+from specgen.view.words import VERDICT_SAYS, VERDICT_VERBS, capital, counted, listed
 
 _READERS = (
     ("reviewer", "To challenge the decisions"),
     ("panel builder", "To order and to build"),
 )
+DIGEST = 12  # characters of a digest that a page shows
 
 
 def overview_page(dossier: Dossier, place: Place) -> PageView:
     """Build the overview."""
     design = dossier.design
     parts: list[tuple[str, str, tuple[Shape, ...]]] = [("verdict", "Verdict", _verdicts(dossier, place))]
+    if design.panel_design is not None:
+        parts.append(("panel", "Panel", panel_blocks(dossier, place, design.panel_design)))
     if design.problems:
         parts.append(("problems", "Problems in the input", _problems(dossier, place)))
     parts.append(("where-to-go", "Where to go", _where_to_go(dossier, place)))
@@ -39,10 +44,10 @@ def _lead(dossier: Dossier) -> Sentence:
     loops = dossier.design.loops
     if not loops:
         return Sentence(says("No loop could be decided: see the problems below."), lead=True)
-    parts = [f"{count} {verdict}" for verdict in reversed(VERDICTS) if (count := dossier.count(verdict))]
+    parts = [counted(count, *VERDICT_VERBS[verdict]) for verdict in reversed(VERDICTS) if (count := dossier.count(verdict))]
     areas = len({loop.loop.area for loop in loops})
     counts = f"{counted(len(loops), 'control loop')} in {counted(areas, 'area')}"
-    return Sentence(says(f"{capital(counts)}, decided: {listed(parts)}."), lead=True)
+    return Sentence(says(f"{capital(counts)}: {listed(parts)}."), lead=True)
 
 
 def _verdicts(dossier: Dossier, place: Place) -> tuple[Shape, ...]:
@@ -93,6 +98,8 @@ def _where_to_go(dossier: Dossier, place: Place) -> tuple[Shape, ...]:
         rows = [row for row in PAGE_ROWS if row.reader == reader]
         items = tuple(Item(says(row.finds), row.title, place.to(row.path), aside=_count(dossier, row.path)) for row in rows)
         blocks.append(List(items, caption=caption))
+    loops = Item(says("to each loop's sheet: settings to enter, what to expect, what happens if it fails"), "Loops", place.to("loops.html"))
+    blocks.append(List((loops,), caption="To set and to commission"))
     data = (
         Item(says("the whole design for programs"), "record.json", place.to("data/record.json")),
         *(Item(says(what), f"{name}.csv", place.to(f"data/{name}.csv")) for name, what in _FILES),
@@ -109,10 +116,10 @@ _FILES = (
 
 
 def _count(dossier: Dossier, path: str) -> str:
-    loops = dossier.design.loops
+    found = [finding for part in (*dossier.design.loops, dossier.design.panel_design) if part is not None for finding in part.findings]
     counts = {
-        "open-points.html": sum(len(loop.missing) for loop in loops),
-        "deviations.html": sum(1 for loop in loops for finding in loop.findings if finding.outcome in ("broken", "overridden")),
+        "open-points.html": len(open_points_table(dossier, Place("index.html")).rows),
+        "deviations.html": sum(1 for finding in found if finding.outcome in ("broken", "overridden")),
     }
     return str(counts[path] or "none") if path in counts else ""
 
@@ -125,7 +132,7 @@ def _revision(dossier: Dossier) -> tuple[Shape, ...]:
         rows = tuple(Row((word(issue.revision), word(issue.date.isoformat()), word(issue.purpose))) for issue in design.panel.panel.history)
         blocks.append(Table("", columns, rows))
     left = not_examined(dossier)
-    made = f"Made with specgen {__version__}, rules {design.rules_digest}, tables {design.catalogue_digest}."
+    made = f"Made with specgen {__version__}, rules {design.rules_digest[:DIGEST]}, tables {design.catalogue_digest[:DIGEST]}."
     blocks.append(Sentence(says(made), quiet=True))
     if left:
         codes = ", ".join(rule.code for rule in left)

@@ -5,12 +5,15 @@ from specgen.rules.base import Finding
 from specgen.view.cells import DASH, NO_NUMBER, number, verdict_cell, word
 from specgen.view.dossier import Dossier
 from specgen.view.frame import Place, frame
+from specgen.view.grounds import finding_text
+from specgen.view.panel_rules import panel_writer
 from specgen.view.shapes import Cell, Column, PageView, Row, Section, Table
 from specgen.view.summary import summary_of
 from specgen.view.words import MODES, OUTCOMES, with_stop
-from specgen.view.writer import Writer
 
 _WEIGHT_ORDER = {"must": 0, "should": 1, "note": 2}
+_DEVIATES = ("broken", "overridden")
+PANEL = "panel"
 
 
 def loops_page(dossier: Dossier, place: Place) -> PageView:
@@ -102,17 +105,19 @@ def open_points_table(dossier: Dossier, place: Place) -> Table:
         Column("Settles", export="settles"),
         Column("How to get it", export="how"),
     )
-    rows = tuple(
-        Row((word(loop.tag, place.sheet(loop.tag)), word(missing.field), word(" ".join(missing.settles)), word(missing.how)))
-        for loop in dossier.design.loops
-        for missing in loop.missing
-    )
+    panel = dossier.design.panel_design
+    missed = [(word(PANEL, place.to("index.html", "panel")), missing) for missing in (panel.open_points if panel else ())]
+    missed += [(word(loop.tag, place.sheet(loop.tag)), missing) for loop in dossier.design.loops for missing in loop.missing]
+    rows = tuple(Row((whose, word(missing.field), word(" ".join(missing.settles)), word(missing.how))) for whose, missing in missed)
     return Table("", columns, rows, wide=True, empty="No input is missing.")
 
 
 def assumptions_page(dossier: Dossier, place: Place) -> PageView:
     """Build the register of assumptions, one row for all loops that make the same."""
     shared: dict[tuple[str, str, str], list[str]] = {}
+    panel = dossier.design.panel_design
+    for assumed in panel.assumptions if panel else ():
+        shared.setdefault((assumed.field, assumed.value, assumed.why), []).append(PANEL)
     for loop in dossier.design.loops:
         for assumed in loop.assumptions:
             shared.setdefault((assumed.field, assumed.value, assumed.why), []).append(loop.tag)
@@ -127,6 +132,8 @@ def assumptions_page(dossier: Dossier, place: Place) -> PageView:
 
 
 def _loops_cell(dossier: Dossier, tags: list[str], place: Place) -> Cell:
+    if tags == [PANEL]:
+        return word(PANEL, place.to("index.html", "panel"))
     if len(tags) == 1:
         return word(tags[0], place.sheet(tags[0], "basis"))
     if len(tags) == len(dossier.design.loops):
@@ -142,23 +149,42 @@ def assumptions_table(dossier: Dossier) -> Table:
         Column("Taken as", export="value"),
         Column("Because", export="why"),
     )
-    rows = tuple(
-        Row((word(loop.tag), word(assumed.field), word(assumed.value), word(assumed.why)))
-        for loop in dossier.design.loops
-        for assumed in loop.assumptions
-    )
-    return Table("", columns, rows)
+    panel = dossier.design.panel_design
+    made = [(PANEL, assumed) for assumed in (panel.assumptions if panel else ())]
+    made += [(loop.tag, assumed) for loop in dossier.design.loops for assumed in loop.assumptions]
+    return Table("", columns, tuple(Row((word(whose), word(a.field), word(a.value), word(a.why))) for whose, a in made))
 
 
 def deviations_page(dossier: Dossier, place: Place) -> PageView:
     """Build the register of rules that are broken or overridden, musts first."""
-    found = [(loop, finding) for loop in dossier.design.loops for finding in loop.findings if finding.outcome in ("broken", "overridden")]
+    found = [(loop, finding) for loop in dossier.design.loops for finding in loop.findings if finding.outcome in _DEVIATES]
     found.sort(key=lambda pair: _WEIGHT_ORDER[pair[1].weight])
     columns = (Column("Loop"), Column("Rule"), Column("Weight"), Column("What it says here"), Column("Outcome"), Column("Reason given"))
-    rows = tuple(_deviation_row(dossier, place, loop, finding) for loop, finding in found)
+    rows = (*_panel_deviations(dossier, place), *(_deviation_row(dossier, place, loop, finding) for loop, finding in found))
     table = Table("", columns, rows, wide=True, empty="No rule is broken or overridden.")
-    kicker = "Every rule that is broken or overridden; a broken must-rule holds its loop"
+    kicker = "Every rule that is broken or overridden; a broken must-rule holds its loop, or the panel"
     return frame(dossier, place, "Deviations", (Section("1", "deviations", "Broken and overridden rules", (table,)),), kicker=kicker)
+
+
+def _panel_deviations(dossier: Dossier, place: Place) -> tuple[Row, ...]:
+    panel = dossier.design.panel_design
+    if panel is None:
+        return ()
+    writer = panel_writer(panel)
+    return tuple(
+        Row(
+            (
+                word("panel", place.to("index.html", "panel")),
+                word(finding.rule, place.rule(dossier, finding.rule)),
+                word(finding.weight),
+                word(finding_text(writer, finding)),
+                word(OUTCOMES[finding.outcome]),
+                DASH,
+            )
+        )
+        for finding in sorted(panel.findings, key=lambda finding: _WEIGHT_ORDER[finding.weight])
+        if finding.outcome in _DEVIATES
+    )
 
 
 def _deviation_row(dossier: Dossier, place: Place, decided: DecidedLoop, finding: Finding) -> Row:
@@ -174,8 +200,3 @@ def _deviation_row(dossier: Dossier, place: Place, decided: DecidedLoop, finding
             word(with_stop(reason)) if reason else DASH,
         )
     )
-
-
-def finding_text(writer: Writer, finding: Finding) -> str:
-    """Write a finding's sentence with this loop's numbers."""
-    return with_stop(writer.sentence(finding.text, finding.words))

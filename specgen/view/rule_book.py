@@ -4,6 +4,7 @@ from specgen.rules.engine import LoadedRule
 from specgen.view.cells import says, word
 from specgen.view.dossier import Dossier, not_examined
 from specgen.view.frame import Place, frame
+from specgen.view.registers import PANEL
 from specgen.view.shapes import Cell, Column, PageView, Row, Section, Sentence, Span, Table
 from specgen.view.words import FAMILIES, OUTCOMES, capital, counted, with_stop
 
@@ -52,6 +53,10 @@ def _bore(dossier: Dossier) -> dict[str, dict[str, list[str]]]:
         for finding in loop.findings:
             if finding.outcome != "does_not_apply":
                 found.setdefault(finding.rule, {}).setdefault(finding.outcome, []).append(loop.tag)
+    panel = dossier.design.panel_design
+    for finding in panel.findings if panel else ():
+        if finding.outcome != "does_not_apply":
+            found.setdefault(finding.rule, {}).setdefault(finding.outcome, []).append(PANEL)
     return found
 
 
@@ -69,5 +74,6 @@ def _where(bore: dict[str, list[str]], place: Place) -> tuple[Span, ...]:
             continue
         spans.append(Span(f"{OUTCOMES[outcome]}: "))
         for index, tag in enumerate(tags):
-            spans += [Span(", "), Span(tag, place.sheet(tag))] if index else [Span(tag, place.sheet(tag))]
+            whose = Span(PANEL, place.to("index.html", "panel")) if tag == PANEL else Span(tag, place.sheet(tag))
+            spans += [Span(", "), whose] if index else [whose]
     return tuple(spans) or (Span("nowhere here"),)

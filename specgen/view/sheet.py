@@ -10,6 +10,7 @@ from specgen.view.sheet_basis import basis_section
 from specgen.view.sheet_decision import decision_section
 from specgen.view.sheet_expect import expect_section
 from specgen.view.sheet_faults import faults_section
+from specgen.view.sheet_firmness import firmness_section
 from specgen.view.sheet_hardware import hardware_section
 from specgen.view.sheet_settings import settings_section
 from specgen.view.sheet_title import kicker, title_sentence
@@ -27,8 +28,10 @@ def sheet_page(dossier: Dossier, place: Place, decided: DecidedLoop, before: Dec
         hardware_section(writer, decided, "4"),
         faults_section(writer, decided, "5"),
     ]
+    if decided.firmness:
+        sections.append(firmness_section(writer, decided, str(len(sections) + 1)))
     if decided.loop.notes:
-        sections.append(Section("6", "notes", "Notes", tuple(_notes(decided))))
+        sections.append(Section(str(len(sections) + 1), "notes", "Notes", tuple(_notes(decided))))
     sections.append(basis_section(dossier, place, decided, str(len(sections) + 1)))
     span = decided.read
     lead_notes: tuple[Note, ...] = (Note("Source", f"{span.file}, line {span.line}", place.to(f"data/source/{span.file}"), "as read"),)

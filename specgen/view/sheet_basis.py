@@ -44,13 +44,17 @@ def _inputs(place: Place, decided: DecidedLoop) -> Table:
     for path, text, span in inputs_of(decided):
         grouped.setdefault((path[:-1], span.file, span.line), []).append((path, text))
     rows: list[Row] = []
+    linked: set[str] = set()
     for (section, file, line), fields in grouped.items():
         if len(fields) == 1:
             name, text = _dotted(fields[0][0]), fields[0][1]
         else:
             name, text = _dotted(section), ", ".join(f"{path[-1]} {text}" if isinstance(path[-1], str) else text for path, text in fields)
         aside = "same_as" if fields[0][0] in decided.read.inherited else ""
-        rows.append(Row((word(name), word(text), word(f"{file}:{line}", place.to(f"data/source/{file}"), aside))))
+        # one link a file is enough: none can lead to a line
+        href = "" if file in linked else place.to(f"data/source/{file}")
+        linked.add(file)
+        rows.append(Row((word(name), word(text), word(f"{file}:{line}", href, aside))))
     return Table("Inputs", columns, tuple(rows), wide=True, empty="Nothing was read.")
 
 
@@ -107,7 +111,7 @@ def figure_lines(writer: Writer, basis: tuple[Figure, ...]) -> list[Shape]:
         lines.append(
             FigureLine(
                 number=str(index),
-                anchor=f"basis-{index}",
+                anchor=f"b{index}",
                 name=figure.name,
                 symbol=figure.symbol,
                 formula="" if figure.formula == figure.symbol else figure.formula,

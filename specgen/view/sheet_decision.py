@@ -4,27 +4,17 @@ from dataclasses import replace
 
 from specgen.design.types import DecidedLoop, Examined
 from specgen.rules.base import Finding
-from specgen.rules.engine import place_of
 from specgen.view.basis_index import BasisIndex
 from specgen.view.cells import NO_NUMBER, number
 from specgen.view.dossier import Dossier
 from specgen.view.frame import Place
-from specgen.view.registers import finding_text
-from specgen.view.shapes import Cell, Column, Item, List, Mark, Note, Row, Section, Sentence, Shape, Span, Table
+from specgen.view.grounds import grounds, in_order, sources
+from specgen.view.shapes import Cell, Column, List, Row, Section, Sentence, Shape, Span, Table
 from specgen.view.summary import Summary, summary_of_examined
-from specgen.view.words import DONE, MODES, OUTCOMES, THROUGH, capital, listed, with_stop
+from specgen.view.words import DONE, MODES, THROUGH, capital, listed, with_stop
 from specgen.view.writer import Writer
 
-# what a reviewer must see first: what is broken, then what is not answered, then what was overridden
-_OUTCOME_ORDER = {"broken": 0, "unanswered": 1, "overridden": 2, "holds": 3}
-_WEIGHT_ORDER = {"must": 0, "should": 1, "note": 2}
-_ARGUMENT = "MDCVTISOAE"
-_DECIDING = "MDCV"
-_MARKS = {
-    ("broken", "must"): "held", ("broken", "should"): "deviates", ("broken", "note"): "deviates",
-    ("unanswered", "must"): "open", ("unanswered", "should"): "open", ("unanswered", "note"): "open",
-    ("overridden", "should"): "deviates", ("overridden", "note"): "deviates",
-}  # fmt: skip
+_DECIDING = "MDCV"  # families whose rules are the argument for mode and setting
 
 
 def decision_section(dossier: Dossier, place: Place, decided: DecidedLoop, index: BasisIndex, number_: str) -> Section:
@@ -50,40 +40,18 @@ def _chosen(decided: DecidedLoop) -> Sentence:
 def _grounds(dossier: Dossier, place: Place, decided: DecidedLoop, index: BasisIndex) -> tuple[Shape, ...]:
     """List what decided the loop, then what it was held against besides."""
     writer = dossier.writers[decided.tag]
-    bore = [finding for finding in decided.findings if finding.outcome != "does_not_apply"]
-    bore.sort(key=lambda f: (_OUTCOME_ORDER[f.outcome], _WEIGHT_ORDER[f.weight] if f.outcome != "holds" else 0, _argument(f.rule)))
     ended = {code for rejected in decided.decision.rejected for code in rejected.ruled_out_by}
-    deciding = [f for f in bore if f.outcome != "holds" or f.rule in ended or (f.rule[0] in _DECIDING and f.weight != "note")]
-    others = [f for f in bore if f not in deciding]
-    grounds = tuple(_ground(dossier, place, writer, finding, index) for finding in deciding)
-    rest = tuple(_ground(dossier, place, writer, finding, index) for finding in others)
-    first = List(grounds, numbered=True, empty="No rule bore on this loop.", notes=_sources(deciding))
-    if not rest:
+    deciding: list[Finding] = []
+    others: list[Finding] = []
+    for finding in in_order(decided.findings):
+        decides = finding.outcome != "holds" or finding.rule in ended or (finding.rule[0] in _DECIDING and finding.weight != "note")
+        (deciding if decides else others).append(finding)
+    items = grounds(dossier, place, writer, deciding, index)
+    first = List(items, numbered=True, empty="No rule bore on this loop.", notes=sources(deciding))
+    if not others:
         return (first,)
-    return first, List(rest, numbered=True, quiet=True, caption="Also kept", notes=_sources(others))
-
-
-def _argument(code: str) -> tuple[int, int]:
-    """Order rules as an argument goes: mode, then setting, then what the rest says."""
-    return _ARGUMENT.index(code[0]), place_of(code)[1]
-
-
-def _ground(dossier: Dossier, place: Place, writer: Writer, finding: Finding, index: BasisIndex) -> Item:
-    kind = _MARKS.get((finding.outcome, finding.weight))
-    mark = Mark(kind, f"{OUTCOMES[finding.outcome]}, {finding.weight}") if kind else None
-    spans = [Span(capital(finding_text(writer, finding)))]
-    for line in index.of_finding(finding):
-        spans += [Span(" "), Span(f"Basis\u00a0{line}" if len(spans) == 1 else str(line), f"#basis-{line}")]
-    return Item(tuple(spans), finding.rule, place.rule(dossier, finding.rule), mark)
-
-
-def _sources(findings: list[Finding]) -> tuple[Note, ...]:
-    """Name each source once with the rules that rest on it."""
-    by_source: dict[str, list[str]] = {}
-    for finding in sorted(findings, key=lambda f: place_of(f.rule)):
-        for cite in finding.cites:
-            by_source.setdefault(cite, []).append(finding.rule)
-    return tuple(Note(" ".join(rules), source) for source, rules in by_source.items())
+    rest = grounds(dossier, place, writer, others, index)
+    return first, List(rest, numbered=True, quiet=True, caption="Also kept", notes=sources(others))
 
 
 def _alternatives(dossier: Dossier, place: Place, decided: DecidedLoop) -> Table:

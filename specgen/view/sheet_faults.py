@@ -5,6 +5,7 @@ from specgen.sizing.candidate import Unsized
 from specgen.sizing.faults import Stuck
 from specgen.view.cells import DASH, NO_NUMBER, number, says, word
 from specgen.view.shapes import Cell, Column, Row, Section, Sentence, Shape, Table
+from specgen.view.sheet_safety import safety_blocks
 from specgen.view.words import SENSOR_FAULT
 from specgen.view.writer import Writer
 
@@ -29,6 +30,8 @@ def faults_section(writer: Writer, decided: DecidedLoop, number_: str) -> Sectio
         rows = (_stuck(writer, "stuck on", faults.on), _stuck(writer, "stuck off", faults.off))
         blocks.append(Table("Output stuck", columns, rows, wide=True))
         blocks.append(Sentence(says("Times count from the worst peak of normal running, the element hot."), quiet=True))
+    if decided.safety is not None:
+        blocks += safety_blocks(writer, decided.safety)
     blocks.append(_declared(writer, decided))
     return Section(number_, "faults", "If it fails", tuple(blocks))
 
@@ -83,9 +86,4 @@ def _declared(writer: Writer, decided: DecidedLoop) -> Table:
     made.append(Row((word("output when the sensor fails"), Cell(fault, number=True), word(limits.on_sensor_fault_because or ""))))
     back = {"resume": "resumes", "off": "stays off"}.get(limits.after_power_return or "", "as the house or the assumptions say")
     made.append(Row((word("after loss and return of supply"), Cell(back, number=True), word(""))))
-    if limits.limiter is not None:
-        made.append(
-            Row((word("independent limiter, declared"), number(writer.value(limits.limiter.set), writer.shown_value(limits.limiter.set)),
-                 word(f"{limits.limiter.resets} reset")))
-        )  # fmt: skip
     return Table("Declared", (Column("What"), Column("Value", number=True), Column("Remark")), tuple(made))

@@ -1,7 +1,7 @@
 """A loop in a terminal: one line for the table of verdicts, and its whole reasoning."""
 
 from specgen.design.types import DecidedLoop
-from specgen.view.registers import finding_text
+from specgen.view.grounds import finding_text
 from specgen.view.sheet_title import title_sentence
 from specgen.view.words import DEVICES, MODES, OUTCOMES, capital, with_stop
 from specgen.view.writer import writer_for

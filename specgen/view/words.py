@@ -64,6 +64,12 @@ FAMILIES = {
     "T": "Tuning",
 }
 SENSOR_FAULT = {"off": "off", "full": "full output", "hold": "held as it was"}
+VERDICT_VERBS = {
+    "held": ("is held", "are held"),
+    "open": ("is open", "are open"),
+    "deviates": ("deviates", "deviate"),
+    "meets": ("meets its need", "meet their need"),
+}
 VERDICT_SAYS = {
     "held": "a must-rule is broken",
     "open": "a must-rule cannot be answered until an input is there",

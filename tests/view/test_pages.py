@@ -131,7 +131,7 @@ def test_figures_lead_to_the_line_of_the_basis_that_computed_them(pages, loop):
     decided = loop("TIC-1")
     table = next(b for b in _section(pages["loops/TIC-1.html"], "expect").blocks if isinstance(b, Table))
     swing = next(row.cells[1] for row in table.rows if row.cells[0].text == "swing, peak to trough")
-    line = int(swing.href.removeprefix("#basis-"))
+    line = int(swing.href.removeprefix("#b"))
     assert decided.basis[line - 1].value == decided.decision.chosen.case.settings.enforced.swing.value
 
 
