@@ -17,6 +17,7 @@ _HOW = (
     ("cable.", "cable schedule, or measured on site"),
     ("controllers", "data sheet of the controller"),
     ("devices.", "data sheet of the device"),
+    ("short_circuit_rating", "marked ratings of the components, put together as the code says"),
     ("supply", "supply authority, or measured on site"),
 )
 

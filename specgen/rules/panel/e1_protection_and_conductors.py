@@ -41,15 +41,27 @@ def examine_loop(case: Case) -> Finding:
             return rule.unsized(feeder)
         return rule.judge(holds=False, text="It cannot be fed: {because}.", because=feeder.because)
     branch = feeder.branches[0]
-    words = {"current": amperes(branch.protection.sized_for), "rating": amperes(branch.protection.rating),
-             "capacity": amperes(_capacity(branch)), "circuits": Said(float(len(feeder.branches)), "number")}  # fmt: skip
-    text = "{current} at the supply's worse end, the continuous factor included, {first} the protection's {rating}, and that {second} the "
-    text += "{capacity} that the conductors carry" + (" in each of {circuits} circuits" if len(feeder.branches) > 1 else "")
+    text, words = _sentence(branch)
+    if len(feeder.branches) > 1:
+        text, words["circuits"] = text + ", in each of {circuits} circuits", Said(float(len(feeder.branches)), "number")
     if branch.cable is not None and branch.cable.drop is not None:
-        words["drop"] = share(branch.cable.drop)
-        text += "; the cable drops {drop}"
+        text, words["drop"] = text + "; the cable drops {drop}", share(branch.cable.drop)
     said = {name: "is at most" if good else "is above" for name, good in zip(("first", "second"), _orders(branch), strict=True)}
     return rule.judge(holds=not _wrong(feeder), margin=_margin(feeder), text=text + ".", **words, **said)
+
+
+def _sentence(branch: Branch) -> tuple[str, dict[str, Said]]:
+    protection = branch.protection
+    carried = max(protection.rating, protection.sized_for)
+    words = {"current": amperes(protection.sized_for), "rating": amperes(protection.rating), "capacity": amperes(_capacity(branch))}
+    if protection.setting is not None:
+        words |= {"setting": amperes(protection.setting), "carried": amperes(carried)}
+        own = "The motor's {setting}, to which the overload release is set, {first} the top of its range, {rating}; "
+        return own + "what the conductors have to carry, {carried}, {second} their {capacity}", words
+    # a continuous load asks for more than flows
+    factor = ", the continuous factor included," if protection.sized_for > protection.design_current else ""
+    own = "{current} at the supply's worse end" + factor + " {first} the protection's {rating}, "
+    return own + "and that {second} the {capacity} that the conductors carry", words
 
 
 def _capacity(branch: Branch) -> float:

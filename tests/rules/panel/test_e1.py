@@ -34,9 +34,18 @@ def test_outcome(ask_panel, make, fed, current, rating, capacity, outcome):
 
 def test_the_sentence(make, fed):
     text = of_loop(make, fed(drop=0.02)).text
-    assert "14.3 A at the supply's worse end" in text
-    assert "is at most the protection's 16 A" in text
-    assert "the 17.4 A that the conductors carry; the cable drops 2 percent." in text
+    assert text == (
+        "14.3 A at the supply's worse end is at most the protection's 16 A, and that is at most the 17.4 A that the conductors carry; "
+        "the cable drops 2 percent."
+    )
+    text = of_loop(make, fed(sized_for=15.0)).text
+    assert text.startswith("15 A at the supply's worse end, the continuous factor included, is at most the protection's 16 A")
+    assert "A at the supply's worse end is above the protection's 16 A" in of_loop(make, fed(17.0)).text
+    text = of_loop(make, fed(8.4, 10.0, 17.4, sized_for=10.5, setting=8.4)).text
+    assert text == (
+        "The motor's 8.4 A, to which the overload release is set, is at most the top of its range, 10 A; "
+        "what the conductors have to carry, 10.5 A, is at most their 17.4 A."
+    )
 
 
 def test_the_continuous_factor_counts(ask_panel, make, fed):
