@@ -14,7 +14,6 @@ from specgen.model.loops import read_loops
 from specgen.model.panel import Panel
 from specgen.model.reader import place, read_model
 from specgen.rules.engine import rules_digest
-from specgen.source.document import Document
 from specgen.source.folder import Sources, read_folder
 
 LOOPS = "loops"
@@ -55,9 +54,9 @@ def design_of(
 ) -> Design:  # fmt: skip
     """Decide what was read; ``folder`` is where the recordings lie that loops name, ``beside`` where decisions are remembered."""
     problems = list(sources.problems)
-    panel, found = _read_panel(sources.panel)
+    panel, found = panel_of_sources(sources)
     problems += found
-    catalogue, found = _read_catalogue(sources.devices)
+    catalogue, found = catalogue_of(sources)
     problems += found
     reading = read_loops(sources.loops)
     problems += reading.problems
@@ -96,14 +95,18 @@ def worst_verdict(verdicts: Sequence[Verdict]) -> Verdict:
     return next((verdict for verdict in VERDICTS if verdict in verdicts), "meets")
 
 
-def _read_panel(document: Document | None) -> tuple[Panel | None, list[Diagnostic]]:
+def panel_of_sources(sources: Sources) -> tuple[Panel | None, list[Diagnostic]]:
+    """Return the panel, and every problem of its file."""
+    document = sources.panel
     if document is None:
         return None, []
     panel, problems = read_model(Panel, document.data)
     return (panel if document.sound else None), [place(document, problem) for problem in problems]
 
 
-def _read_catalogue(document: Document | None) -> tuple[Catalogue, list[Diagnostic]]:
+def catalogue_of(sources: Sources) -> tuple[Catalogue, list[Diagnostic]]:
+    """Return what is looked up, the shop's own devices in the place of generic ones, and every problem of their file."""
+    document = sources.devices
     if document is None:
         return load_catalogue(None), []
     devices, problems = read_devices(document)
