@@ -21,7 +21,7 @@ element: {kind: resistive_heater, power: 6 kW, voltage: 400 V, phases: 3, needs:
 """
 PANEL = """panel: {reference: PNL-1, title: Test panel, revision: A, status: for review, date: 2026-11-20}
 supply: {voltage: 400 V, phases: 3, frequency: 50 Hz}
-enclosure: {height: 1800 mm, width: 800 mm, depth: 400 mm, ambient: 5 degC to 35 degC}
+enclosure: {height: 2000 mm, width: 1200 mm, depth: 400 mm, ambient: 5 degC to 30 degC}
 """
 SITE = "site_name: Test panel\ndocs_dir: loops\ntheme: {name: specgen}\nplugins: [specgen]\n"
 
