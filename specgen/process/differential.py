@@ -27,6 +27,7 @@ def least_differential(
     min_run: float = 0.0,
     min_rest: float = 0.0,
     switchings_per_hour: float | None = None,
+    known: dict[tuple[str, float, float], float] | None = None,
 ) -> dict[str, float]:
     """Return, constraint by constraint, the least differential that keeps it in every case of the box [K].
 
@@ -42,6 +43,8 @@ def least_differential(
         Least run and rest [s]: enforced for the starts, and asked of the natural cycle (D6).
     switchings_per_hour : float or None
         Switchings-on an hour that the contacts' life allows (D5) [1/h].
+    known : dict or None
+        What was found before for this box, placement and least times; what is found now is added.
 
     Returns
     -------
@@ -52,14 +55,22 @@ def least_differential(
     free = Setting(box, placement, 0.0, 0.0)
     least = 1e-6 * _scale(box)
     made: dict[str, float] = {}
+    known = {} if known is None else known
+
+    def sought(setting: Setting, figure: CycleFigure, name: str, limit: float, start: float) -> float:
+        key = ("period" if figure is PERIOD else name, limit, start)
+        if key not in known:
+            known[key] = _least(setting, figure, limit, start)
+        return known[key]
+
     wanted = {"starts": starts_per_hour, "life": switchings_per_hour}
     # the looser first: what it needs is a start for the tighter
     for name, most in sorted(((n, m) for n, m in wanted.items() if m is not None), key=lambda pair: -pair[1]):
-        made[name] = _least(enforced, PERIOD, SECONDS_AN_HOUR / most, max([least, *(d for d in made.values() if d < inf)]))
+        made[name] = sought(enforced, PERIOD, name, SECONDS_AN_HOUR / most, max([least, *(d for d in made.values() if d < inf)]))
     if min_run > 0:
-        made["run"] = _least(free, ON, min_run, least)
+        made["run"] = sought(free, ON, "run", min_run, least)
     if min_rest > 0:
-        made["rest"] = _least(free, OFF, min_rest, least)
+        made["rest"] = sought(free, OFF, "rest", min_rest, least)
     return made
 
 

@@ -44,6 +44,26 @@ class _Chain:
             along_b -= decayed * exp(-b / t) * expm1(-a / t) / (t * whole)
         return left, along_a, along_b
 
+    def both_ahead(self, a: float, b: float) -> tuple[float, float, float, float, float, float]:
+        """Return ``ahead(a, b)`` and ``ahead(b, a)``, of which the exponentials are the same."""
+        theta = self.theta
+        left_on = on_a = on_b = left_off = off_b = off_a = 0.0
+        for c, t in self.modes:
+            whole = -expm1(-(a + b) / t)
+            gone_a, gone_b = expm1(-a / t), expm1(-b / t)
+            share = t * whole
+            decayed = c * exp(-(a - theta) / t) / whole
+            g = -decayed * gone_b
+            left_on += g
+            on_a -= g / share
+            on_b -= decayed * (1 + gone_b) * gone_a / share
+            decayed = c * exp(-(b - theta) / t) / whole
+            g = -decayed * gone_a
+            left_off += g
+            off_b -= g / share
+            off_a -= decayed * (1 + gone_a) * gone_b / share
+        return left_on, on_a, on_b, left_off, off_b, off_a
+
 
 def lagged_cycle(
     y_on: float,
@@ -156,8 +176,7 @@ def _newton(chain: _Chain, start: tuple[float, float], run: float | None, rest: 
         return a, b
     size = inf
     for _ in range(STEPS):
-        left_on, on_a, on_b = chain.ahead(a, b)
-        left_off, off_b, off_a = chain.ahead(b, a)
+        left_on, on_a, on_b, left_off, off_b, off_a = chain.both_ahead(a, b)
         if left_on <= 0 or left_off <= 0:
             return None
         # logarithms, because what is left decays exponentially with the time that is sought
