@@ -134,8 +134,8 @@ _Known = tuple[float | None, tuple[Figure, ...], tuple[Assumption, ...], tuple[U
 
 def _used(element: ModulatingValve, box: Box, works: _Works, known: _Known) -> ValveSizing:
     kv, sized, assumed, points = known
-    (low, mildest), (asked, hardest) = box.duty_low, box.duty_high
-    high = min(asked, 1.0)  # beyond full output is rule M9's matter
+    (least, mildest), (most, hardest) = box.duty_low, box.duty_high
+    low, high = min(least, 1.0), min(most, 1.0)  # beyond full output is rule M9's matter
     figures, assumptions = [*sized], [*assumed]
     if element.rangeability is None:
         assumptions.append(Assumption("element.rangeability", f"{RANGEABILITY:g}", "not declared: the usual one"))
