@@ -60,7 +60,7 @@ def test_a_pulse_that_is_not_declared(loop, panel):
 
 def test_an_integrating_plant_moves_for_one_effective_delay(loop, panel):
     """4 K/min over 20 s, a tenth of the travel and half a scan: that is what the whole travel does before it is seen."""
-    found = stepped(loop, panel, plant=RATES)
+    found = stepped(loop, panel, plant=RATES, sensor={"step": "0.01 K"})
     delay = 20 + 12 + 0.125
     assert found.neutral_zone == pytest.approx(2 * (4 / 60 * delay) * 0.005)
 

@@ -91,7 +91,8 @@ def test_no_plant(loop, panel):
 
 
 def tuning(overshoot):
-    return Tuning(0.1, 10.0, 300.0, 0.0, 30.0, 30.0, 3.0, 60.0, 1.6, stable=True, load_deviation=None, overshoot=overshoot, time_to_band=None)
+    made = {"load_deviation": None, "overshoot": overshoot, "time_to_band": None}
+    return Tuning(0.1, 10.0, 300.0, 0.0, 30.0, 30.0, 3.0, 60.0, 1.6, stable=True, **made)
 
 
 @pytest.mark.parametrize(
