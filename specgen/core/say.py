@@ -66,6 +66,9 @@ def plain(value: float) -> Said:
 Words = Mapping[str, "Said | str"]
 
 
+NOTHING = 1e-12  # what a difference of equal numbers leaves
+
+
 def digits(value: float, significant: int = 3) -> str:
     """Write a number to significant digits, without exponent where people would not write one.
 
@@ -76,7 +79,7 @@ def digits(value: float, significant: int = 3) -> str:
     """
     if not isfinite(value):
         return "without limit" if value > 0 else f"{MINUS}without limit"
-    if value == 0:
+    if abs(value) < NOTHING:
         return "0"
     short = f"{value:.{significant}g}"  # most numbers are done here; what follows is for those it would write with an exponent
     if "e" not in short:
@@ -124,6 +127,7 @@ _LADDERS = {
     "pressure": ((1e5, "bar"), (1e2, "mbar"), (1, "Pa")),
     "pressure_difference": ((1e5, "bar"), (1e2, "mbar"), (1, "Pa")),
 }
+_PRINTED = {"degC": "°C", "degF": "°F", "ohm": "\u03a9", "m3/h": "m³/h"}
 _SCALE_OF = {"years": 365.25 * 86400, "days": 86400.0, "h": 3600.0, "min": 60.0}
 
 
@@ -173,5 +177,5 @@ def _on_ladder(said: Said, significant: int) -> str:
 
 def join(number: str, symbol: str) -> str:
     """Join number and unit with a thin no-break space, units in their printed form."""
-    printed = {"degC": "°C", "degF": "°F", "percent": "percent", "ohm": "\u03a9", "m3/h": "m³/h"}.get(symbol, symbol)
+    printed = _PRINTED.get(symbol, symbol)
     return f"{number}{THIN}{printed}" if printed else number

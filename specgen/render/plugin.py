@@ -72,7 +72,8 @@ class SpecgenPlugin(BasePlugin):  # type: ignore[type-arg]  # it has no options
     def on_files(self, files: Files, *, config: MkDocsConfig) -> Files:
         """Put the dossier's files in, keep what is private out, and let the user's own pages join."""
         for file in list(files):
-            if file.src_dir != config.docs_dir or is_private(file.src_uri):
+            of_theme = file.generated_by is None and file.src_dir != config.docs_dir
+            if of_theme or is_private(file.src_uri):
                 files.remove(file)
         design = self._decided.design
         taken = {path.lower() for path in page_paths(design)}

@@ -229,6 +229,16 @@ class Section:
     title: str
     blocks: tuple[Shape, ...]
 
+    @property
+    def opening(self) -> tuple[Shape, ...]:
+        """Return the first block, which paper keeps with the heading."""
+        return self.blocks[:1]
+
+    @property
+    def rest(self) -> tuple[Shape, ...]:
+        """Return the blocks after the first."""
+        return self.blocks[1:]
+
 
 @dataclass(frozen=True, slots=True)
 class Link:

@@ -47,7 +47,8 @@ def _branch(writer: Writer, branch: Branch) -> list[Row]:
 
 
 def _protection(writer: Writer, protection: Protection) -> Row:
-    kind = f"{_KINDS[protection.kind]}{f' {protection.curve}' if protection.curve else ''} {writer.say(protection.rating, 'current')}"
+    curve = f" {protection.curve}" if protection.curve else ""
+    kind = f"{_KINDS[protection.kind]}{curve}\u00a0{writer.say(protection.rating, 'current')}"
     if protection.setting is not None:
         kind += f", set to {writer.say(protection.setting, 'current')}"
     asked = f"for {writer.say(protection.sized_for, 'current')}"

@@ -2,15 +2,19 @@
 
 import re
 from dataclasses import replace
+from math import inf
 
 import pytest
 
 from specgen.core.diagnostic import Diagnostic, Span
+from specgen.design.types import Firm
 from specgen.rules.planned import PLANNED
 from specgen.view.dossier import dossier_of, missing_loops
 from specgen.view.frame import PAGE_ROWS
 from specgen.view.pages import BUILDERS, page_paths, page_views
 from specgen.view.shapes import FigureLine, Table
+from specgen.view.sheet_faults import faults_section
+from specgen.view.sheet_firmness import firmness_section
 from specgen.view.words import DEVICES, MODES
 
 
@@ -202,3 +206,57 @@ def test_own_pages_are_under_their_own_heading(pages, text_of):
 
 def _section(page, anchor):
     return next(section for section in page.sections if section.anchor == anchor)
+
+
+def test_a_panel_that_is_held_is_said_on_every_page(design):
+    held = replace(design, loops=design.loops[:1], problems=(), panel_design=replace(design.panel_design, verdict="held"))
+    for page in page_views(dossier_of(held)):
+        assert page.standing.kind == "held"
+        assert "the panel" in [span.text for item in page.standing.items for span in item.spans]
+
+
+def test_what_the_panels_rules_found_is_on_the_overview(pages, design):
+    shown = {item.label for block in _section(pages["index.html"], "panel").blocks for item in getattr(block, "items", ())}
+    assert {f.rule for f in design.panel_design.findings if f.outcome != "does_not_apply"} <= shown
+
+
+def test_rules_that_one_missing_input_leaves_open_share_a_line(pages, loop):
+    """TIC-4 has no plant: every must that asks for it stands in one line, each with its link."""
+    items = _section(pages["loops/TIC-4.html"], "decision").blocks[1].items
+    unanswered = [f.rule for f in loop("TIC-4").findings if f.outcome == "unanswered" and f.weight == "must"]
+    shared = next(item for item in items if item.mark and item.mark.word == "unanswered, must")
+    assert len(unanswered) > 1
+    assert {shared.label, *(span.text for span in shared.spans if span.href)} == set(unanswered)
+    assert all(item.mark.word != "unanswered, must" for item in items if item is not shared and item.mark)
+
+
+def test_the_limiter_stands_beside_the_loop_with_its_numbers(pages, loop):
+    limiter = loop("TIC-2").safety.limiter
+    tables = [block for block in _section(pages["loops/TIC-2.html"], "faults").blocks if isinstance(block, Table)]
+    table = next(table for table in tables if table.caption == "Independent of the loop")
+    rows = {row.cells[0].text: row.cells[1].text for row in table.rows}
+    assert rows["limiter set at"] == "88.0\u202f°C"
+    assert rows["true value when it acts"] == f"{limiter.acts_at:.1f}\u202f°C"
+
+
+def test_the_input_nearest_to_a_change_stands_first(dossier, loop):
+    """By hand: a dead time that changes the decision at 1.2 times is nearer than a tolerance that does at half."""
+    far = Firm("need.tolerance", "tolerance", "change", 1.8, "1.8 K", 0.9, "held", None, "", 0.3)
+    near = Firm("plant.dead_time", "dead time", "time", 40.0, "40 s", None, "", 48.0, "time-proportioned", 0.08)
+    still = Firm("plant.load", "load", "power", 600.0, "0.6 kW", None, "", None, "", inf)
+    section = firmness_section(dossier.writers["TIC-1"], replace(loop("TIC-1"), firmness=(far, still, near)), "6")
+    rows = [[cell.text for cell in row.cells] for row in section.blocks[0].rows]
+    assert rows == [
+        ["dead time", "40 s", "–", "–", "48\u202fs", "time-proportioned"],
+        ["tolerance", "1.8 K", "0.9\u202fK", "held", "–", "–"],
+    ]
+    assert section.blocks[1].spans[0].text.endswith("load.")
+
+
+def test_a_value_below_absolute_zero_is_not_printed_as_one(dossier, loop):
+    case = loop("TIC-1").decision.chosen.case
+    unreal = replace(case, faults=replace(case.faults, on=replace(case.faults.on, settles_at=-300.0)))
+    decided = loop("TIC-1")
+    decided = replace(decided, decision=replace(decided.decision, chosen=replace(decided.decision.chosen, case=unreal)))
+    table = faults_section(dossier.writers["TIC-1"], decided, "5").blocks[0]
+    assert table.rows[0].cells[1].text == "beyond what is real"
