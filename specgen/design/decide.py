@@ -84,10 +84,22 @@ def decide(read: ReadLoop, panel: Panel, catalogue: Catalogue) -> tuple[DecidedL
 def examine_candidates(
     loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue, fitted: Fitted | None = None
 ) -> tuple[Examined, ...]:
-    """Size every candidate and ask every rule about it; pairs that nobody would wire are left out."""
+    """Size every candidate and ask every rule about it; pairs that nobody would wire are left out, unless the designer names one."""
     examination = Examination(loop, panel, traits, catalogue, fitted)
-    cases = (examination.case(candidate) for candidate in CANDIDATES if examination.wired(candidate))
+    named = _named_pair(loop)
+    wired = [candidate for candidate in CANDIDATES if candidate == named or examination.wired(candidate)]
+    if named is not None and named not in wired:
+        wired.append(named)
+    cases = (examination.case(candidate) for candidate in wired)
     return tuple(Examined(case, examine_all(case)) for case in cases)
+
+
+def _named_pair(loop: Loop) -> Candidate | None:
+    """Return the pair that the designer names in full: it is held against the rules even where no trade uses it."""
+    wish = loop.choose
+    if wish is None or wish.mode is None or wish.output is None:
+        return None
+    return Candidate(wish.mode, wish.output)
 
 
 class Examination:
@@ -147,6 +159,8 @@ class Examination:
         return device, settings
 
     def _settings(self, candidate: Candidate, device: Sized) -> Settings | Unsized:
+        if candidate not in CANDIDATES:
+            return Unsized("no trade uses this mode with this output")
         match candidate.mode:
             case "on_off":
                 return on_off_settings(self._loop, self._panel, self.box, device, self.error)

@@ -3,7 +3,7 @@
 from collections.abc import Sequence
 from math import ceil, floor, isfinite, sqrt
 
-SLACK = 1e-9  # a number that is a step but for the last bits is that step
+SLACK = 1e-6  # a number that is a step but for what a root finder leaves is that step
 
 
 def up_to_step(value: float, step: float) -> float:

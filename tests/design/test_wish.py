@@ -63,8 +63,28 @@ def test_what_the_rules_would_break_too_is_not_set_aside(make):
     assert (confirmed["verdict"], outcome(confirmed, "I3")) == (free["verdict"], "broken")
 
 
-def test_a_pair_that_nobody_wires_is_a_problem(make):
-    none, problems = make.decided(make.steady + "choose: {mode: analogue, output: contactor}\n")
+@pytest.mark.parametrize(
+    ("pair", "broken"),
+    [
+        ("mode: analogue, output: contactor", "M3"),
+        ("mode: on_off, output: power_controller", "M3"),
+        ("mode: three_point, output: ssr", "M4"),
+    ],
+)
+def test_a_pair_that_nobody_wires_is_held_against_the_rules(make, pair, broken):
+    made = make.record(make.steady + f"choose: {{{pair}, because: Test.}}\n")
+    assert made["verdict"] == "held"
+    assert outcome(made, broken) == "broken"
+
+
+def test_a_relay_named_for_a_motor_is_held(make):
+    made = make.record(make.compressor + "choose: {mode: on_off, output: relay}\n")
+    assert made["verdict"] == "held"
+    assert outcome(made, "O1") == "broken"
+
+
+def test_an_output_alone_that_nobody_would_wire_is_a_problem(make):
+    none, problems = make.decided(make.compressor + "choose: {output: relay}\n")
     assert none is None
     assert [p.code for p in problems] == ["L301"]
 

@@ -47,6 +47,10 @@ def _ends(state: str, stuck: Stuck, words: dict[str, Said]) -> str:
 
 def _answer(case: Case, state: str, room: Room, words: dict[str, Said]) -> tuple[str, bool]:
     words |= {f"{state}_{name}": said for name, said in room.words.items()}
+    if not room.open and state == "off":
+        # an alarm calls somebody and stops nothing: that it comes late is said, and no setting would mend it
+        said = f"An alarm independent of the loop is part of it, though it comes late: normal running reaches {{{state}_running}}, and "
+        return said + f"through a sensor lag of {{{state}_lag}} only a set value of {{{state}_latest}} would be early enough.", True
     if not room.open:
         said = f"Normal running reaches {{{state}_running}}, and through a sensor lag of {{{state}_lag}} the latest set value is "
         return said + f"{{{state}_latest}}: nothing independent has room.", False

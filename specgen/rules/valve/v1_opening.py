@@ -22,8 +22,8 @@ rule = Rule(
 
 
 def applies(case: Case) -> bool:
-    """Ask it of what throttles a medium."""
-    return case.traits.valve and case.candidate.mode in ("analogue", "three_point") and (case.traits.analogue_input or case.traits.travels)
+    """Ask it of a valve with an input; of a motor-driven one neither size nor characteristic is declared."""
+    return case.traits.valve and case.traits.analogue_input and case.candidate.mode == "analogue"
 
 
 def examine(case: Case) -> Finding:
@@ -32,8 +32,6 @@ def examine(case: Case) -> Finding:
     A mildest case without any flow is left out: the valve shuts there, and V2 says what it does on the way. Without the pressures the
     openings are the most that they can be, so that only the lowest can be judged.
     """
-    if case.traits.travels:
-        return rule.unanswered("Nothing is declared of a motor-driven valve's size and characteristic, so its opening is not known.")
     settings = continuous(case)
     if isinstance(settings, Unsized):
         return rule.unsized(settings)

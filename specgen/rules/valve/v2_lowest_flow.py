@@ -13,8 +13,8 @@ rule = Rule(code="V2", name="Lowest flow", weight="should", cites=("IEC 60534-2-
 
 
 def applies(case: Case) -> bool:
-    """Ask it of what throttles a medium."""
-    return case.traits.valve and case.candidate.mode in ("analogue", "three_point") and (case.traits.analogue_input or case.traits.travels)
+    """Ask it of a valve with an input; of a motor-driven one neither size nor characteristic is declared."""
+    return case.traits.valve and case.traits.analogue_input and case.candidate.mode == "analogue"
 
 
 def examine(case: Case) -> Finding:
@@ -23,8 +23,6 @@ def examine(case: Case) -> Finding:
     Below it the valve opens and shuts in turn. What leaks through a shut seat is far below the bottom of the trim's range (by the
     leakage class of the data sheet) and is not counted.
     """
-    if case.traits.travels:
-        return rule.unanswered("Nothing is declared of a motor-driven valve's size and characteristic, so its lowest flow is not known.")
     settings = continuous(case)
     if isinstance(settings, Unsized):
         return rule.unsized(settings)

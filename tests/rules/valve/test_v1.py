@@ -45,7 +45,7 @@ def test_what_is_missing_is_named(make):
 
 
 def test_a_motor_driven_valve_declares_no_size(make):
-    assert make.ask("V1", make.case("motor_valve", "three_point", settings=make.stepped())).outcome == "unanswered"
+    assert make.ask("V1", make.case("motor_valve", "three_point", settings=make.stepped())).outcome == "does_not_apply"
 
 
 def test_it_is_asked_of_what_throttles_only(make):

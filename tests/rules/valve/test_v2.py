@@ -43,5 +43,5 @@ def test_without_a_characteristic(make):
 
 
 def test_who_is_asked(make):
-    assert make.ask("V2", make.case("motor_valve", "three_point", settings=make.stepped())).outcome == "unanswered"
+    assert make.ask("V2", make.case("motor_valve", "three_point", settings=make.stepped())).outcome == "does_not_apply"
     assert make.ask("V2", make.case("heater", "analogue", settings=make.continuous())).outcome == "does_not_apply"
