@@ -4,6 +4,7 @@ Every constraint's figure moves one way with the differential. Its root is sough
 again at the root, until it keeps the limit: first among the cases on the box's edges alone, at last with the whole search.
 """
 
+from collections.abc import Callable
 from dataclasses import replace
 from math import inf
 
@@ -17,6 +18,7 @@ from specgen.process.plant import ProcessModel
 
 HELD = 1e-4  # a limit counts as kept within this share
 TURNS = 25
+LOOKS = 32  # differentials tried where the narrowest of all does not keep a limit
 
 
 def least_differential(
@@ -168,10 +170,30 @@ def _most(setting: Setting, side: CycleFigure, allowed: float, span: tuple[float
         def over(d: float, plant: ProcessModel = now.plant) -> float:
             return side.read(setting.at(plant, d)) - allowed
 
-        if differential <= least or over(least) > 0:
+        if differential <= least:
             return 0.0
-        differential = float(brentq(over, least, differential, xtol=1e-12 * differential, rtol=1e-9)) * (1 - 1e-9)
+        kept = _kept_below(over, least, differential)
+        if kept is None:
+            return 0.0
+        differential = float(brentq(over, *kept, xtol=1e-12 * differential, rtol=1e-9)) * (1 - 1e-9)
     return differential
+
+
+def _kept_below(over: Callable[[float], float], least: float, most: float) -> tuple[float, float] | None:
+    """Return two differentials, the smaller keeping a limit that the larger passes; None where none keeps it.
+
+    An excursion grows with the differential, but for least times: where they lengthen every phase of a narrow differential a wider one
+    starts its run from further off and may end nearer. So the widest that keeps is sought from above.
+    """
+    if over(least) <= 0:
+        return least, most
+    wide = most
+    for step in range(1, LOOKS):
+        narrow = most * (1 - step / LOOKS)
+        if over(narrow) <= 0:
+            return narrow, wide
+        wide = narrow
+    return None
 
 
 def _widest_that_switches(setting: Setting, least: float, most: float) -> float:

@@ -95,6 +95,15 @@ def test_widest_differential_where_nothing_fits(make):
     assert widest_differential(tank(make), -0.1, 2.0) == 0
 
 
+def test_widest_differential_where_the_least_run_spoils_the_narrow_ones(make):
+    """Speeds 0.07 up and 0.03 down, theta = 10 s, 60 s of least run: 4.2 K a run.
+
+    Narrow: the run starts at -d/2 - 0.3 and ends at 3.9 - d/2, past 3 K below d = 1.8 K. Wide: the peak is d/2 + 0.7, 3 K at d = 4.6 K.
+    """
+    assert widest_differential(tank(make, load=(300, 300)), 3.0, 3.0, min_run=60.0) == pytest.approx(4.6, rel=1e-3)
+    assert widest_differential(tank(make, load=(300, 300)), 2.0, 3.0, min_run=60.0) == 0
+
+
 def test_widest_differential_is_what_still_switches(make):
     """Full output ends 3 K above, none 3 K below: at most 6 K lie between points that are passed, though 10 K are allowed."""
     box = make.box(
