@@ -1,1 +1,1 @@
-
+"""Pure functions of the process: cycles, ripple, worst cases, tuning, margins, simulation, step tests, faults."""

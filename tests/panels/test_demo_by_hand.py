@@ -45,7 +45,7 @@ EXPECTED = {
     "TIC-401": ("on_off", "contactor", "meets"),  # compressor [M1]
     "TIC-402": ("on_off", "relay", "meets"),  # relaxed, and on-off fits [M6]; 9.6 A is within a 16 A relay
     "TIC-403": ("analogue", "signal", "meets"),  # compressor on a drive [M2]
-    "TIC-501": ("on_off", "contactor", "meets"),  # two-stage burner [M7, M11]
+    "TIC-501": ("on_off", "relay", "meets"),  # two-stage burner [M7, M11]; its control circuit is within a relay
     "PIC-502": ("on_off", "relay", "meets"),  # burner [M7]; its control circuit of 2 A is within a 16 A relay
     "PIC-503": ("on_off", "contactor", "meets"),  # compressor [M1]
     "LIC-504": ("on_off", "relay", "meets"),  # as TIC-302
