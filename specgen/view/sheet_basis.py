@@ -83,15 +83,25 @@ def written(loop: Loop, path: Path) -> str | None:
             here = getattr(here, _ALIASES.get((str(path[0]), step), step) if depth == 1 else step, None)
         if here is None:
             return None
+    return _text_of(here)
+
+
+def _text_of(here: object) -> str | None:
+    """Return what a value was written as; the commonest kinds first, since whether it is a model is slow to ask."""
+    if isinstance(here, str):
+        return here
+    text = getattr(here, "text", None)
+    if isinstance(text, str):
+        return text
     if isinstance(here, bool):
         return "yes" if here else "no"
-    if isinstance(here, BaseModel):
-        # a short form: `tolerance: 1.5 K` stands for both sides
-        here = next((value for value in dict(here).values() if value is not None), None)
     if isinstance(here, tuple):
         return ", ".join(map(str, here)) if here else "[]"
-    text = getattr(here, "text", None)
-    return None if here is None else str(text or here)
+    if isinstance(here, BaseModel):
+        # a short form: `tolerance: 1.5 K` stands for both sides
+        first = next((value for value in dict(here).values() if value is not None), None)
+        return None if first is None else _text_of(first)
+    return str(here)
 
 
 def _dotted(path: Path) -> str:

@@ -19,6 +19,7 @@ _SMALL = {
     "length": (0.1, 1e3, "mm"),
 }
 _BEFORE_WORDS = re.compile(f"{THIN}(?=(?:percent|years?|days|an? [hy]|operations))")
+_IN_WORDS = frozenset({"time", "years", "per_hour", "per_year", "operations"})
 _HAIR = 1e-9  # share of a step by which a number may lie past it and still count as on it
 
 
@@ -207,7 +208,8 @@ class Writer:
         if dimension in _SMALL and 0 < abs(value) < _SMALL[dimension][0]:
             _, scale, unit = _SMALL[dimension]
             return join(digits(value * scale, significant), unit)
-        return _BEFORE_WORDS.sub("\u00a0", self.phrasing.say(Said(value, dimension), significant))
+        said = self.phrasing.say(Said(value, dimension), significant)
+        return _BEFORE_WORDS.sub("\u00a0", said) if dimension in _IN_WORDS else said
 
     def sentence(self, template: str, words: Words) -> str:
         """Fill a rule's sentence; between a number and a word stands a whole space, not a thin one."""
