@@ -33,6 +33,9 @@ PAGE_ROWS = (
     PageRow("deviations.html", "Deviations", "Registers", "rules that are broken or overridden", "reviewer"),
     PageRow("outputs.html", "Outputs", "Schedules", "controller outputs and what they drive", "panel builder", "Schedules"),
     PageRow("rule-book.html", "Rule book", "Panel", "every rule, its source, and where it bore", "reviewer", "Rule book"),
+    PageRow("site-checks.html", "Site checks", "Panel", "what to measure and watch on site, in order", "installer", "Site checks"),
+    PageRow("cautions.html", "Cautions", "Panel", "what can hurt someone, and who decides", "installer"),
+    PageRow("guide.html", "Guide", "Panel", "how to use this dossier, and what its signs mean", "installer"),
 )
 
 

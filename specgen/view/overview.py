@@ -14,6 +14,7 @@ from specgen.view.words import VERDICT_SAYS, VERDICT_VERBS, capital, counted, li
 _READERS = (
     ("reviewer", "To challenge the decisions"),
     ("panel builder", "To order and to build"),
+    ("installer", "To install and to commission"),
 )
 DIGEST = 12  # characters of a digest that a page shows
 

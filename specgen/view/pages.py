@@ -3,14 +3,17 @@
 from collections.abc import Callable, Iterator, Mapping
 
 from specgen.design.types import Design
+from specgen.view.cautions_page import cautions_page
 from specgen.view.dossier import Dossier
 from specgen.view.frame import PAGE_ROWS, Place, frame
+from specgen.view.guide import guide_page
 from specgen.view.overview import overview_page
 from specgen.view.registers import assumptions_page, deviations_page, loops_page, open_points_page
 from specgen.view.rule_book import rule_book_page
 from specgen.view.schedules import outputs_page
 from specgen.view.shapes import PageView
 from specgen.view.sheet import sheet_page
+from specgen.view.site_checks_page import site_checks_page
 
 # a page is one row in PAGE_ROWS and its builder here
 BUILDERS: Mapping[str, Callable[[Dossier, Place], PageView]] = {
@@ -21,6 +24,9 @@ BUILDERS: Mapping[str, Callable[[Dossier, Place], PageView]] = {
     "deviations.html": deviations_page,
     "outputs.html": outputs_page,
     "rule-book.html": rule_book_page,
+    "site-checks.html": site_checks_page,
+    "cautions.html": cautions_page,
+    "guide.html": guide_page,
 }
 
 

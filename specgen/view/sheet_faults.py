@@ -1,10 +1,11 @@
 """Section If it fails of a sheet: where the value goes, how fast, and what the output does."""
 
+from specgen.design.fault_walk import FaultOutcome, fault_walk
 from specgen.design.types import DecidedLoop
 from specgen.sizing.candidate import Unsized
 from specgen.sizing.faults import Stuck
 from specgen.view.cells import DASH, NO_NUMBER, number, says, word
-from specgen.view.shapes import Cell, Column, Row, Section, Sentence, Shape, Table
+from specgen.view.shapes import Cell, Column, Row, Section, Sentence, Shape, Span, Table
 from specgen.view.sheet_safety import safety_blocks
 from specgen.view.words import SENSOR_FAULT
 from specgen.view.writer import Writer
@@ -30,10 +31,15 @@ def faults_section(writer: Writer, decided: DecidedLoop, number_: str) -> Sectio
         rows = (_stuck(writer, "stuck on", faults.on), _stuck(writer, "stuck off", faults.off))
         blocks.append(Table("Output stuck", columns, rows, wide=True))
         blocks.append(Sentence(says("Times count from the worst peak of normal running, the element hot."), quiet=True))
+    blocks += [_walked(writer, outcome) for outcome in fault_walk(decided)]
     if decided.safety is not None:
         blocks += safety_blocks(writer, decided.safety)
     blocks.append(_declared(writer, decided))
     return Section(number_, "faults", "If it fails", tuple(blocks))
+
+
+def _walked(writer: Writer, outcome: FaultOutcome) -> Sentence:
+    return Sentence((Span(f"{outcome.title}. ", strong=True), Span(writer.sentence(outcome.text, outcome.words))))
 
 
 def _stuck(writer: Writer, name: str, stuck: Stuck) -> Row:
