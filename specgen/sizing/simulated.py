@@ -82,9 +82,11 @@ def _moved(loop: Loop, box: Box, point: Point) -> float | None:
 
 
 def estimated_deviation(start: Start, load: SuddenLoad) -> float:
-    """Return the first estimate of the deviation after a sudden load [in the loop's quantity]."""
-    slope, delay = start.hardest.dynamics.slope, _delay(start)
-    return max(first_estimate(slope * case.steeper, delay, case.share) for case in load)
+    """Return a first estimate of the deviation after a sudden load [in the loop's quantity], with the steepest slope.
+
+    Where full output drives the value less, the loop has as much less gain against the load: the steepest slope stands for both.
+    """
+    return max(first_estimate(start.hardest.dynamics.slope, _delay(start), case.share) for case in load)
 
 
 @remembered

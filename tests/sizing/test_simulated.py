@@ -70,7 +70,7 @@ def test_deviation_of_the_worse_end(loop, panel):
         duty = 40 / (100 * square)
         own += [load_step(plant, start.settings, duty, sign * 0.1 / square).deviation for sign in (1, -1)]
     assert simulated_deviation(start, load) == pytest.approx(max(own), rel=1e-9)
-    assert simulated_deviation(start, load) <= estimated_deviation(start, load) * 1.5
+    assert simulated_deviation(start, load) <= estimated_deviation(start, load)
 
 
 def test_the_ripple_is_counted_apart(loop, panel):
@@ -110,3 +110,13 @@ def test_a_plant_that_cannot_say_where_it_rests(loop, panel):
     box = box_of(declared, panel())
     tuning = tuning_of(start_of(declared, hardest_case(box)), box, declared, None)
     assert (tuning.overshoot, tuning.time_to_band) == (None, None)
+
+
+@pytest.mark.parametrize("change", ["100 K", "60 K to 100 K", "25 K to 100 K"])
+def test_the_first_estimate_bounds_a_weak_element_too(loop, panel, change):
+    """A quarter of the strength has a quarter of the gain against the load; the estimate that skips a simulation covers it."""
+    plant = {"response": {**RESPONSE["response"], "change": change, "rest_value": "55 degC"}}
+    declared, box = boxed(loop, panel, plant, VALVE, "10 percent")
+    start = start_of(declared, hardest_case(box))
+    load = load_share(declared, box)
+    assert 0 < simulated_deviation(start, load) <= estimated_deviation(start, load)
