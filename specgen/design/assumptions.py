@@ -33,7 +33,9 @@ def loop_assumptions(read: ReadLoop, traits: Traits) -> tuple[Assumption, ...]:
         name = "class_" if default.path[1] == "class" else default.path[1]
         if default.path in read.spans or not hasattr(section, name):
             continue
-        if default.path[1] in ("refrigerant_circuit", "pump_down") and not traits.starts_limited:
+        if (default.path[1] == "pump_down" and not traits.starts_limited) or (
+            default.path[1] == "refrigerant_circuit" and not traits.may_refrigerate
+        ):
             continue
         value = default.value or str(getattr(section, name))
         found.append(Assumption(".".join(default.path), value, default.why))
@@ -45,12 +47,6 @@ def loop_assumptions(read: ReadLoop, traits: Traits) -> tuple[Assumption, ...]:
     if read.fitted is not None and traits.resistive_power and loop.plant and loop.plant.step_test and loop.plant.step_test.supply is None:
         found.append(
             Assumption("plant.step_test.supply", "not noted", "the supply may have stood anywhere in its tolerance: counted both ways")
-        )
-    if loop.limits.after_power_return is None:
-        found.append(
-            Assumption("limits.after_power_return", "resume", "not written; for injury and fire it must be (rule S4)")
-            if loop.limits.consequence not in ("injury", "fire")
-            else Assumption("limits.after_power_return", "not declared", "needed where the consequence is injury or fire (rule S4)")
         )
     return tuple(found)
 

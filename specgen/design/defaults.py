@@ -61,6 +61,10 @@ def _of_settings(case: Case) -> Iterator[Assumption]:
         if need.overshoot is None:
             side = need.tolerance.above if case.loop.raises else need.tolerance.below
             yield Assumption("need.overshoot", side.text, "not written: the tolerance on the side that the output drives to")
+    limits = case.loop.limits
+    if limits.after_power_return is None and panel.house.after_power_return is None and limits.consequence not in ("injury", "fire"):
+        why = "not written, neither for the loop nor for the house; for injury and fire it must be (rule S4)"
+        yield Assumption("limits.after_power_return", "resume", why)
     if not isinstance(case.error, Unsized):
         yield from _unwritten(panel.house, "house", "sensor_share")
 

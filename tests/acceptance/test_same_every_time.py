@@ -78,7 +78,7 @@ def test_programs_in_two_places_and_mkdocs_alone(make, tmp_path, expected):
 
 def test_a_record_is_in_order_and_finite(expected):
     record = json.loads(expected, parse_constant=lambda word: pytest.fail(f"{word} in the record"))
-    assert expected.decode() == json.dumps(record, ensure_ascii=False, sort_keys=True, indent=1) + "\n"
+    assert expected.decode() == json.dumps(record, ensure_ascii=False, sort_keys=True, separators=(",", ":")) + "\n"
 
     def walk(value, path):
         assert value is not None, f"{path} is null"

@@ -62,3 +62,13 @@ def test_inherited_limits_are_listed_until_they_are_written_out(make):
     assert "limits.danger_high" not in rows["TIC-1"]
     own = make.whole({"loops/a.yml": make.relaxed + "---\n" + second + "limits: {danger_high: 85 degC}\n"})
     assert "limits.danger_high" not in {row["tag"]: assumed(row) for row in make.record_of(own)["loops"]}["TIC-9"]
+
+
+def test_after_the_return_of_supply_the_house_may_have_said_it(make):
+    silent = make.steady.replace(", after_power_return: resume", "")
+    house = make.panel.replace("controllers:", "house: {after_power_return: off}\ncontrollers:")
+    assert assumed(make.record(silent))["limits.after_power_return"] == "resume"
+    assert "limits.after_power_return" not in assumed(make.record(silent, house))
+    injury = make.record(silent.replace("consequence: product", "consequence: injury"))
+    assert "limits.after_power_return" not in assumed(injury), "what must be declared is missing, not assumed"
+    assert "limits.after_power_return" in {missing["field"] for missing in injury["missing"]}
