@@ -6,7 +6,6 @@ from typing import Any
 
 from specgen.core.figure import Figure
 from specgen.core.quantity import Unit
-from specgen.core.say import Said
 from specgen.design.designation import designation
 from specgen.design.rounding import in_unit, rounded
 from specgen.design.types import DecidedLoop, Firm, Rejected
@@ -18,6 +17,7 @@ from specgen.sizing.limiter import LimiterDesign
 from specgen.sizing.settings import ContinuousSettings, OnOffSettings, ProportionedSettings, ThreePointSettings, Tuning
 
 DEVICE_LETTER = {"contactor": "Q1", "ssr": "Q1", "power_controller": "Q1", "relay": "K1", "relay_pair": "K1"}
+PUT_IN = 7  # significant digits of what was put into a formula
 Row = dict[str, Any]
 
 
@@ -38,17 +38,22 @@ class _Numbers:
     def plain(number: float | None) -> float | None:
         return None if number is None or not isfinite(number) else rounded(number)
 
-    def of(self, figure: Figure) -> tuple[float, str]:
-        """Return a figure's number and unit as the record has them."""
-        if figure.dimension == "value":
-            return in_unit(figure.value, self._value), self._value.symbol
-        if figure.dimension == "change":
-            return rounded(figure.value * self._change.scale), self._change.symbol
-        if figure.dimension == "change_per_second":
-            return rounded(figure.value * self._change.scale), f"{self._change.symbol}/s"
-        if figure.dimension == "share_per_change":
-            return rounded(figure.value / self._change.scale), f"1/{self._change.symbol}"
-        return rounded(figure.value), UNITS.get(figure.dimension, figure.dimension)
+    def of(self, value: float, dimension: str) -> tuple[float, str]:
+        """Return a number of some dimension and its unit as the record has them."""
+        if dimension == "value":
+            return in_unit(value, self._value), self._value.symbol
+        if dimension == "change":
+            return rounded(value * self._change.scale), self._change.symbol
+        if dimension == "change_per_second":
+            return rounded(value * self._change.scale), f"{self._change.symbol}/s"
+        if dimension == "share_per_change":
+            return rounded(value / self._change.scale), f"1/{self._change.symbol}"
+        return rounded(value), UNITS.get(dimension, dimension)
+
+    def put_in(self, value: float, dimension: str) -> str:
+        """Write a number that was put into a formula, with digits enough to work the formula again."""
+        number, unit = self.of(value, dimension)
+        return f"{number:.{PUT_IN}g}" + (f" {unit}" if unit != "1" else "")
 
 
 UNITS = {
@@ -84,7 +89,7 @@ def loop_record(decided: DecidedLoop) -> Row:
         "assumptions": [{"field": a.field, "value": a.value, "why": a.why} for a in decided.assumptions],
         "firmness": [_firm(firm, numbers) for firm in decided.firmness],
         "missing": [{"field": m.field, "settles": list(m.settles), "how": m.how} for m in decided.missing],
-        "basis": [_figure(decided, figure, numbers) for figure in decided.basis if isfinite(figure.value)],
+        "basis": [_figure(figure, numbers) for figure in decided.basis if isfinite(figure.value)],
     }
     if decided.limiter is not None:
         row["limiter"] = _limiter(decided.tag, decided.limiter, numbers)
@@ -246,14 +251,13 @@ def _firm(firm: Firm, numbers: _Numbers) -> Row:
     made: Row = {"input": firm.input}
     for name, value in (("declared", firm.declared), ("below", firm.below), ("above", firm.above)):
         if value is not None:
-            made[name], made["unit"] = numbers.of(Figure("", "", "", value, firm.dimension, ""))
+            made[name], made["unit"] = numbers.of(value, firm.dimension)
     return made | {key: to for key, to in (("below_to", firm.below_to), ("above_to", firm.above_to)) if to}
 
 
-def _figure(decided: DecidedLoop, figure: Figure, numbers: _Numbers) -> Row:
-    result, unit = numbers.of(figure)
-    say = decided.phrasing.say
-    put_in = ", ".join(f"{name} = {say(Said(value, dimension))}" for name, (value, dimension) in figure.with_.items())
+def _figure(figure: Figure, numbers: _Numbers) -> Row:
+    result, unit = numbers.of(figure.value, figure.dimension)
+    put_in = ", ".join(f"{name} = {numbers.put_in(*given)}" for name, given in figure.with_.items() if isfinite(given[0]))
     return {
         "symbol": figure.symbol, "formula": figure.formula, "with": put_in, "result": result, "unit": unit, "source": figure.source,
         "case": figure.case,
