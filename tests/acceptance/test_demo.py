@@ -4,6 +4,7 @@ from pathlib import Path
 
 import pytest
 
+from specgen.core.say import _FIXED, _LADDERS
 from specgen.design.project import load_design
 from specgen.design.record import record_of
 from specgen.model.traits import TRAITS
@@ -93,3 +94,10 @@ def test_no_formula_is_left_empty(record):
             assert figure["formula"], (row["tag"], figure)
             assert figure["source"], (row["tag"], figure)
             assert figure["symbol"]
+
+
+def test_units_of_the_record_are_units_and_not_dimensions(record):
+    dimensions = {"value", "change", "change_per_second", "share_per_change", *_FIXED, *_LADDERS}
+    for row in record["loops"]:
+        for figure in row["basis"]:
+            assert figure["unit"] not in dimensions, figure
