@@ -158,11 +158,14 @@ def _chain(decided: DecidedLoop) -> Iterator[Check]:
         if contact.kind in ("limiter", "emergency_stop"):
             continue  # the limiter has its own checks, the stops are the panel's
         ends = " and ".join(contact.acts_on)
-        key = contact.designation.rpartition("-")[2].lower()
+        own = contact.designation.startswith(designation(decided.tag, ""))
+        key = contact.designation.rpartition("-")[2].lower() if own else contact.designation.lstrip("=").lower()
         if contact.kind == "burner_control":
             what, expected = f"Open the chain before {contact.designation}", "the burner stops and does not start"
         elif contact.kind == "proof":
             what, expected = f"Stop what is proven at {contact.designation} ({contact.what})", f"{ends} opens within seconds"
+        elif contact.kind == "pair":
+            what, expected = f"Put the other loop on ({contact.designation}: {contact.what})", f"{ends} opens"
         else:
             what, expected = f"Open {contact.designation} ({contact.what})", f"{ends} opens"
         meaning = "A contact that only tells the controller stops nothing when the output sticks."

@@ -7,6 +7,7 @@ from specgen.catalogue.load import Catalogue, catalogue_digest, load_catalogue, 
 from specgen.core.diagnostic import Diagnostic
 from specgen.design.cache import Cache
 from specgen.design.many import Progress, Task, decide_all
+from specgen.design.pairs import with_pair_rules
 from specgen.design.panel import panel_of
 from specgen.design.recordings import with_recordings
 from specgen.design.types import VERDICTS, DecidedLoop, Design, SourceFile, Verdict
@@ -70,6 +71,7 @@ def design_of(
             problems += faults
             if loop is not None:
                 decided.append(loop)
+    decided = list(with_pair_rules(decided))
     together = panel_of(decided, panel, catalogue) if panel is not None else None
     own = [together.verdict] if together is not None and decided else []
     return Design(

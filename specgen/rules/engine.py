@@ -10,6 +10,7 @@ from importlib import resources
 from typing import Any
 
 from specgen.rules.base import Case, Finding, Rule
+from specgen.rules.pair_case import PairCase
 from specgen.rules.panel_case import PanelCase
 
 FAMILIES = "AMDCVOEIST"
@@ -21,7 +22,7 @@ class LoadedRule:
     """A rule as found in its file: the declaration, what it does, and its plain sentence and explanation."""
 
     rule: Rule
-    examine: Callable[[Any], Finding]  # a rule of scope panel is asked about a PanelCase
+    examine: Callable[[Any], Finding]  # rules of scope panel and pair are asked about a PanelCase and a PairCase
     applies: Callable[[Any], bool] | None
     sentence: str
     explanation: str
@@ -89,6 +90,17 @@ def examine_panel(case: PanelCase) -> tuple[Finding, ...]:
         loaded.rule.does_not_apply() if loaded.applies is not None and not loaded.applies(case) else loaded.examine(case)
         for loaded in asked
     )
+
+
+def examine_pair(case: PairCase) -> tuple[Finding, ...]:
+    """Ask every rule of scope pair about two loops."""
+    return tuple(loaded.examine(case) for loaded in all_rules() if loaded.rule.scope == "pair")
+
+
+def no_pair() -> tuple[Finding, ...]:
+    """Answer the rules of scope pair for a loop that has no counterpart."""
+    said = "No other loop acts on the same body the other way."
+    return tuple(loaded.rule.does_not_apply(said) for loaded in all_rules() if loaded.rule.scope == "pair")
 
 
 def examine_own(case: Case) -> tuple[Finding, ...]:
