@@ -14,7 +14,7 @@ from specgen.catalogue.load import Catalogue
 from specgen.design.choice import DEVICE_WORDS, LEVELS, MODE_WORDS
 from specgen.design.decide import verdict_of
 from specgen.design.outcome import Outcome, Standing, Subject, margin_of, standing_of
-from specgen.design.types import DecidedLoop, Firm
+from specgen.design.types import VERDICTS, DecidedLoop, Firm
 from specgen.design.varied import Uncertain, uncertain_inputs
 from specgen.rules.base import Finding
 from specgen.sizing.candidate import ORDER, Candidate
@@ -22,6 +22,7 @@ from specgen.sizing.candidate import ORDER, Candidate
 LOOKED_AT = (0.3, 1.0)  # ways along the span that are always looked at: factors of 2 and 10
 NEAR = 0.004  # a change is enclosed this closely: within one percent of a factor
 FINE = 0.04  # stretches shorter than this (10 percent) are not halved for what might hide between equal outcomes
+HALF = 0.5
 MOST = 40  # values looked at on one side; more is never needed but where outcomes flicker
 _WORSE = {"holds": 0, "does_not_apply": 0, "overridden": 1, "unanswered": 2, "broken": 3}
 
@@ -121,8 +122,11 @@ class _Side:
         self.looked += 1
         return standing_of(self.one.at(self.sign * way), self.catalogue, hint)
 
-    def _change(self, low: float, at_low: Standing, high: float, at_high: Standing, turn: int = 0) -> tuple[float, Outcome] | None:
+    def _change(
+        self, low: float, at_low: Standing, high: float, at_high: Standing, pace: "_Pace | None" = None
+    ) -> tuple[float, Outcome] | None:
         """Return the nearest change between two ways, None where there is none."""
+        pace = pace or _Pace()
         if at_low.outcome == at_high.outcome:
             if high - low <= FINE or self.looked >= MOST or nothing_hides(at_low, at_high):
                 return None
@@ -130,11 +134,41 @@ class _Side:
         else:
             if high - low <= NEAR:
                 return high, at_high.outcome
-            # every third look halves, so that a margin that jumps cannot hold the search up
-            way = (low + high) / 2 if turn % 3 == 2 else _guess(low, at_low, high, at_high)  # noqa: PLR2004
+            way = pace.way(low, high, _share(at_low, at_high))
         between = self._look(way, at_low)
-        first = self._change(low, at_low, way, between, turn + 1)
-        return first if first is not None else self._change(way, between, high, at_high, turn + 1)
+        first = self._change(low, at_low, way, between, pace.after((way - low) / (high - low), lifted=False))
+        if first is not None:
+            return first
+        return self._change(way, between, high, at_high, pace.after((high - way) / (high - low), lifted=True))
+
+
+@dataclass(frozen=True, slots=True)
+class _Pace:
+    """How the next look at an enclosed change is chosen: where the margins say; beyond that; and where they mislead, in the middle.
+
+    ``failed`` counts the looks by margins that did not halve the stretch; ``lifted`` tells whether the last one moved its lower end.
+    """
+
+    failed: int = 0
+    lifted: bool = False
+
+    def way(self, low: float, high: float, share: float | None) -> float:
+        """Return where to look between two ways; ``share`` is where the margins expect the change."""
+        if share is None or high - low <= 2 * NEAR or self.failed > 1:
+            return (low + high) / 2
+        way = low + share * (high - low)
+        if self.failed == 0:
+            # just beyond where the limit is expected, which encloses it at once
+            way += NEAR / 3
+        elif self.lifted:
+            way += 2 * NEAR + (way - low) / 4
+        else:
+            way -= 2 * NEAR + (high - way) / 4
+        return min(max(way, low + 0.9 * NEAR), high - 0.9 * NEAR)
+
+    def after(self, left: float, *, lifted: bool) -> "_Pace":
+        """Return the pace for the stretch that is left, a share of the one before."""
+        return _Pace(self.failed if left <= HALF or self.failed > 1 else self.failed + 1, lifted)
 
 
 def nothing_hides(one: Standing, other: Standing) -> bool:
@@ -174,20 +208,32 @@ def _counts(findings: Iterable[Finding]) -> tuple[int, ...]:
     return tuple(levels.count(level) for level in LEVELS)
 
 
-def _guess(low: float, at_low: Standing, high: float, at_high: Standing) -> float:
-    """Return where the first of the rules that turned meets its limit, by its margins at both ends; the middle where none has any."""
-    ways = []
-    for candidate in {at_low.chosen, at_high.chosen}:
+def _share(at_low: Standing, at_high: Standing) -> float | None:
+    """Return where between two standings the rule that makes the change is expected to meet its limit, 0..1; None where no margin tells.
+
+    What takes the first choice down is the first of its rules to turn for the worse; what lifts another, or the verdict, the last of
+    those that turn for the better.
+    """
+    worse: list[float] = []
+    better: list[float] = []
+    for candidate in (at_low.chosen, at_high.chosen):
         there = {finding.rule: finding for finding in (*at_high.findings.get(candidate, ()), *at_high.own)}
         for finding in (*at_low.findings.get(candidate, ()), *at_low.own):
             other = there.get(finding.rule)
-            if other is not None and other.outcome != finding.outcome:
-                ways += _crossing(finding.margin, other.margin)
-    if not ways:
-        return (low + high) / 2
-    way = low + min(ways) * (high - low)
-    # a look just beyond where the limit is expected encloses it at once
-    return min(max(way + NEAR / 3, low + 0.9 * NEAR), high - 0.9 * NEAR) if high - low > 2 * NEAR else (low + high) / 2
+            if other is not None and _bears(finding, other, at_high.outcome):
+                turned = worse if _WORSE[other.outcome] > _WORSE[finding.outcome] else better
+                turned += _crossing(finding.margin, other.margin)
+    if not worse and not better:
+        return None
+    sinks = at_low.chosen != at_high.chosen or VERDICTS.index(at_high.outcome.verdict) < VERDICTS.index(at_low.outcome.verdict)
+    return min(worse) if worse and (sinks or not better) else max(better or worse)
+
+
+def _bears(finding: Finding, other: Finding, after: Outcome) -> bool:
+    """Tell whether a rule that turned can be what made the outcome: a recommendation that breaks makes nothing held."""
+    if finding.outcome == other.outcome:
+        return False
+    return finding.weight == "must" or after.verdict != "held" or other.outcome != "broken"
 
 
 def _crossing(here: float | None, there: float | None) -> list[float]:
