@@ -194,6 +194,9 @@ def _summed(phases: list[_Phases]) -> Cycle:
     """Make one cycle of several: extremes over all, mean times."""
     count = len(phases)
     on, off = sum(p.on for p in phases) / count, sum(p.off for p in phases) / count
+    if on <= 0 or off <= 0:
+        # at the very edge of what switches, without a dead time, rounding leaves no time between the switchings
+        raise NoCycle(inf, -inf, 0.0, 0.0)
     peak, trough = max(p.extremes[0] for p in phases), min(p.extremes[1] for p in phases)
     seen = [p.measured_extremes for p in phases]
     mean = on / (on + off) if phases[0].share is None else (peak + trough) / 2
