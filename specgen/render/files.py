@@ -7,9 +7,15 @@ from specgen.design.record import dump, record_of
 from specgen.design.types import Design
 from specgen.render.csv_files import csv_bytes
 from specgen.render.environment import TEMPLATES, page
+from specgen.view.conductors_page import conductors_table
 from specgen.view.dossier import Dossier, OwnPage, dossier_of
+from specgen.view.firmness_page import firmness_table
 from specgen.view.frame import Place
+from specgen.view.heat_page import control_supply_table, losses_table
+from specgen.view.load_page import contributions_table
 from specgen.view.pages import page_views
+from specgen.view.parts_page import parts_table
+from specgen.view.protection_page import protection_table
 from specgen.view.registers import assumptions_table, loops_table, open_points_table
 from specgen.view.schedules import outputs_table
 
@@ -59,6 +65,13 @@ def data_files(dossier: Dossier) -> dict[str, bytes]:
         "data/outputs.csv": csv_bytes(outputs_table(dossier, place)),
         "data/open-points.csv": csv_bytes(open_points_table(dossier, place)),
         "data/assumptions.csv": csv_bytes(assumptions_table(dossier)),
+        "data/firmness.csv": csv_bytes(firmness_table(dossier)),
+        "data/parts.csv": csv_bytes(parts_table(dossier)),
+        "data/protection.csv": csv_bytes(protection_table(dossier, place)),
+        "data/conductors.csv": csv_bytes(conductors_table(dossier, place)),
+        "data/load.csv": csv_bytes(contributions_table(dossier, place)),
+        "data/heat.csv": csv_bytes(losses_table(dossier, place)),
+        "data/control-supply.csv": csv_bytes(control_supply_table(dossier)),
     }
     files |= {f"data/{loop['tag']}.json": dump(loop) for loop in record["loops"]}
     files |= {f"data/source/{name}": source.content for source in design.sources if (name := inside(source.name))}

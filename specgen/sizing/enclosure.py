@@ -2,22 +2,25 @@
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from typing import Literal
 
 from specgen.catalogue.enclosure import EnclosureTables
 from specgen.core.figure import Figure
 from specgen.model.panel import Enclosure
 
 HOUR = 3600.0
+Source = Literal["device", "safety", "drive", "wiring", "protection", "controller", "supply", "other"]
 BALANCE = "heat balance of the enclosure in still air"
 
 
 @dataclass(frozen=True, slots=True)
 class Loss:
-    """One source of heat in the panel [W], at the duty that counts."""
+    """One source of heat in the panel [W], at the duty that counts; ``source`` is the sort it belongs to."""
 
     what: str
     watts: float
     loop: str = ""
+    source: Source = "other"
 
 
 @dataclass(frozen=True, slots=True)

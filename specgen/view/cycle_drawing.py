@@ -2,16 +2,17 @@
 
 from collections.abc import Sequence
 from dataclasses import dataclass
-from math import ceil, floor, log10
+from math import floor, log10
 
 from specgen.core.say import MINUS
+from specgen.view.axes import Scale, ticks
+from specgen.view.axes import place as _n
 from specgen.view.shapes import Box, Drawing, Label, Note, Path, Point
 
 WIDTH, HEIGHT = 640, 262
 LEFT, RIGHT, TOP, BOTTOM = 48.0, 506.0, 22.0, 186.0
 BAR_TOP, BAR_BOTTOM = 208.0, 217.0
 LEAST_APART = 14.0  # between labels that stand one below the other
-_NICE = (1, 2, 2.5, 5, 10)
 _TIMES = ((172800.0, 86400.0, "days"), (10800.0, 3600.0, "h"), (1200.0, 60.0, "min"), (0.0, 1.0, "s"))
 
 
@@ -37,28 +38,11 @@ class CyclePlot:
     notes: tuple[Note, ...] = ()
 
 
-def ticks(low: float, high: float, most: int = 6) -> tuple[float, ...]:
-    """Return round numbers between two ends.
-
-    Examples
-    --------
-    >>> ticks(60.5, 69.2), ticks(0, 100, 4)
-    ((62.0, 64.0, 66.0, 68.0), (0.0, 25.0, 50.0, 75.0, 100.0))
-    """
-    span = high - low
-    raw = span / most
-    power = 10.0 ** floor(log10(raw))
-    step = next(nice * power for nice in _NICE if nice * power >= raw * (1 - 1e-9))
-    first = ceil(low / step - 1e-9)
-    last = floor(high / step + 1e-9)
-    return tuple(round(index * step, 9) + 0.0 for index in range(first, last + 1))
-
-
 def cycle_drawing(plot: CyclePlot) -> Drawing:
     """Place every line and word of the drawing."""
-    y = _Scale(*_span(plot), BOTTOM, TOP)
+    y = Scale(*_span(plot), BOTTOM, TOP)
     end = plot.times[-1]
-    x = _Scale(0.0, end, LEFT, RIGHT)
+    x = Scale(0.0, end, LEFT, RIGHT)
     unit_size, unit = next((size, name) for least, size, name in _TIMES if end >= least)
     boxes = [Box("band", _n(LEFT), _n(y(plot.upper)), _n(RIGHT - LEFT), _n(y(plot.lower) - y(plot.upper)))]
     boxes += [Box("on", _n(x(a)), _n(BAR_TOP), _n(max(x(b) - x(a), 0.6)), _n(BAR_BOTTOM - BAR_TOP)) for a, b in plot.pulses]
@@ -96,19 +80,6 @@ def cycle_drawing(plot: CyclePlot) -> Drawing:
     )
 
 
-@dataclass(frozen=True, slots=True)
-class _Scale:
-    """Maps numbers to places of the drawing."""
-
-    low: float
-    high: float
-    at_low: float
-    at_high: float
-
-    def __call__(self, value: float) -> float:
-        return self.at_low + (value - self.low) / (self.high - self.low) * (self.at_high - self.at_low)
-
-
 def _span(plot: CyclePlot) -> tuple[float, float]:
     every = [plot.upper, plot.lower, *plot.values, *plot.measured, *(value for value, _ in plot.lines)]
     low, high = min(every), max(every)
@@ -116,17 +87,11 @@ def _span(plot: CyclePlot) -> tuple[float, float]:
     return low - room, high + room
 
 
-def _n(value: float) -> str:
-    """Write a place with one decimal at most."""
-    text = f"{value:.1f}"
-    return text.removesuffix(".0")
-
-
-def _line(x: _Scale, y: _Scale, times: Sequence[float], values: Sequence[float]) -> str:
+def _line(x: Scale, y: Scale, times: Sequence[float], values: Sequence[float]) -> str:
     return "M" + "L".join(f"{_n(x(t))} {_n(y(v))}" for t, v in zip(times, values, strict=True))
 
 
-def _value_ticks(y: _Scale, paths: list[Path]) -> list[Label]:
+def _value_ticks(y: Scale, paths: list[Path]) -> list[Label]:
     at = ticks(y.low, y.high)
     places = max(0, -floor(log10(at[1] - at[0]) + 1e-9)) if len(at) > 1 else 0
     places = max(places, 1) if len(at) > 1 and (at[1] - at[0]) * 10**places % 1 > 1e-6 else places  # noqa: PLR2004  a step of 2.5
@@ -134,7 +99,7 @@ def _value_ticks(y: _Scale, paths: list[Path]) -> list[Label]:
     return [Label("tick-end", _n(LEFT - 7), _n(y(value) + 4), f"{value:.{places}f}".replace("-", MINUS)) for value in at]
 
 
-def _time_ticks(x: _Scale, end: float, size: float, unit: str, paths: list[Path]) -> list[Label]:
+def _time_ticks(x: Scale, end: float, size: float, unit: str, paths: list[Path]) -> list[Label]:
     at = ticks(0.0, end)
     paths.append(Path("axis", "".join(f"M{_n(x(value * size))} {_n(BAR_BOTTOM)}v4" for value in at)))
     labels = [Label("tick", _n(x(value * size)), _n(BAR_BOTTOM + 18), f"{value:g}") for value in at]

@@ -113,6 +113,13 @@ _FILES = (
     ("outputs", "the schedule of outputs"),
     ("open-points", "the open points"),
     ("assumptions", "the assumptions, one row a loop"),
+    ("firmness", "how far each input may be off"),
+    ("parts", "the schedule of parts"),
+    ("protection", "the coordinated list of protection"),
+    ("conductors", "the schedule of conductors"),
+    ("load", "what each loop draws from each conductor"),
+    ("heat", "losses by loop"),
+    ("control-supply", "what the control supply feeds"),
 )
 
 

@@ -4,10 +4,16 @@ from collections.abc import Callable, Iterator, Mapping
 
 from specgen.design.types import Design
 from specgen.view.cautions_page import cautions_page
+from specgen.view.conductors_page import conductors_page
 from specgen.view.dossier import Dossier
+from specgen.view.firmness_page import firmness_page
 from specgen.view.frame import PAGE_ROWS, Place, frame
 from specgen.view.guide import guide_page
+from specgen.view.heat_page import heat_page
+from specgen.view.load_page import load_page
 from specgen.view.overview import overview_page
+from specgen.view.parts_page import parts_page
+from specgen.view.protection_page import protection_page
 from specgen.view.registers import assumptions_page, deviations_page, loops_page, open_points_page
 from specgen.view.rule_book import rule_book_page
 from specgen.view.schedules import outputs_page
@@ -23,6 +29,12 @@ BUILDERS: Mapping[str, Callable[[Dossier, Place], PageView]] = {
     "assumptions.html": assumptions_page,
     "deviations.html": deviations_page,
     "outputs.html": outputs_page,
+    "firmness.html": firmness_page,
+    "parts.html": parts_page,
+    "conductors.html": conductors_page,
+    "load.html": load_page,
+    "heat.html": heat_page,
+    "protection.html": protection_page,
     "rule-book.html": rule_book_page,
     "site-checks.html": site_checks_page,
     "cautions.html": cautions_page,

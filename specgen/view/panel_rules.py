@@ -1,31 +1,48 @@
-"""What the rules of the panel as a whole found."""
+"""What the rules of the panel as a whole found, and the page that each of them belongs to."""
+
+from collections.abc import Mapping
 
 from specgen.design.panel.types import PanelDesign
 from specgen.view.basis_index import basis_index
 from specgen.view.cells import says
 from specgen.view.dossier import Dossier
-from specgen.view.frame import Place
+from specgen.view.frame import PAGE_ROWS, Place
 from specgen.view.grounds import grounds, in_order, sources
-from specgen.view.shapes import Item, List, Shape
+from specgen.view.shapes import Item, List, Shape, Span
 from specgen.view.words import capital, with_stop
-from specgen.view.writer import Writer
+from specgen.view.writer import Writer, panel_phrasing
 
 STEP = 0.1
+# where a reader finds what a rule of the panel looked at
+RULE_PAGES: Mapping[str, str] = {
+    "E1": "protection.html", "E2": "load.html", "E3": "load.html", "E4": "heat.html", "E5": "heat.html", "E6": "outputs.html",
+    "E7": "protection.html", "E8": "protection.html",
+}  # fmt: skip
 
 
-def panel_writer(panel: PanelDesign) -> Writer:
-    """Return what writes the panel's numbers."""
-    return Writer(panel.phrasing, STEP)
+def panel_writer(dossier: Dossier) -> Writer:
+    """Return what writes the panel's numbers, in the units the panel asks its pages to show."""
+    return Writer(panel_phrasing(dossier.design.panel), STEP)
 
 
 def panel_blocks(dossier: Dossier, place: Place, panel: PanelDesign) -> tuple[Shape, ...]:
-    """Build what the panel's rules found, and what is remarked about it."""
-    writer = panel_writer(panel)
+    """Build what the panel's rules found, each with a link to the page it belongs to."""
     bore = in_order(panel.findings)
-    # the panel's Basis has no page of its own yet, so that no line of it can be linked
-    items = grounds(dossier, place, writer, bore, basis_index(()))
-    blocks: list[Shape] = [List(items, numbered=True, empty="No rule of the panel bore.", notes=sources(bore))]
-    if panel.remarks:
-        remarks = tuple(Item(says(capital(with_stop(writer.sentence(remark.text, remark.words))))) for remark in panel.remarks)
-        blocks.append(List(remarks, quiet=True, caption="Remarks"))
-    return tuple(blocks)
+    # the panel's calculation stands on the pages it belongs to
+    items = grounds(dossier, place, panel_writer(dossier), bore, basis_index(()))
+    titles = {row.path: row.title for row in PAGE_ROWS}
+    linked = tuple(_linked(place, item, titles) for item in items)
+    return (List(linked, numbered=True, empty="No rule of the panel bore.", notes=sources(bore)),)
+
+
+def _linked(place: Place, item: Item, titles: Mapping[str, str]) -> Item:
+    path = RULE_PAGES.get(item.label, "")
+    if path not in titles:
+        return item
+    return Item((*item.spans, Span(" "), Span(titles[path], place.to(path)), Span(".")), item.label, item.href, item.mark, item.aside)
+
+
+def remarks(dossier: Dossier, panel: PanelDesign) -> tuple[Item, ...]:
+    """Write what is remarked about the panel."""
+    writer = panel_writer(dossier)
+    return tuple(Item(says(capital(with_stop(writer.sentence(remark.text, remark.words))))) for remark in panel.remarks)

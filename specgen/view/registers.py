@@ -170,7 +170,7 @@ def _panel_deviations(dossier: Dossier, place: Place) -> tuple[Row, ...]:
     panel = dossier.design.panel_design
     if panel is None:
         return ()
-    writer = panel_writer(panel)
+    writer = panel_writer(dossier)
     return tuple(
         Row(
             (

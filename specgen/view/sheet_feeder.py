@@ -9,7 +9,7 @@ from specgen.view.shapes import Column, Item, List, Row, Sentence, Shape, Table
 from specgen.view.words import capital, counted, with_stop
 from specgen.view.writer import Writer
 
-_KINDS = {
+KINDS = {
     "circuit_breaker": "circuit breaker",
     "fuse": "fuse",
     "motor_starter": "motor starter",
@@ -48,7 +48,7 @@ def _branch(writer: Writer, branch: Branch) -> list[Row]:
 
 def _protection(writer: Writer, protection: Protection) -> Row:
     curve = f" {protection.curve}" if protection.curve else ""
-    kind = f"{_KINDS[protection.kind]}{curve}\u00a0{writer.say(protection.rating, 'current')}"
+    kind = f"{KINDS[protection.kind]}{curve}\u00a0{writer.say(protection.rating, 'current')}"
     if protection.setting is not None:
         kind += f", set to {writer.say(protection.setting, 'current')}"
     asked = f"for {writer.say(protection.sized_for, 'current')}"

@@ -4,12 +4,13 @@ from math import isfinite
 
 from specgen.design.types import DecidedLoop, Firm
 from specgen.view.cells import DASH, says, word
-from specgen.view.shapes import Cell, Column, Row, Section, Sentence, Table
+from specgen.view.firmness_drawing import firmness_drawing
+from specgen.view.shapes import Cell, Column, Row, Section, Sentence, Shape, Table
 from specgen.view.writer import Writer
 
 _COLUMNS = (
     Column("Input"),
-    Column("Declared", number=True),
+    Column("Declared"),
     Column("Below", number=True),
     Column("becomes"),
     Column("Above", number=True),
@@ -25,7 +26,8 @@ def firmness_section(writer: Writer, decided: DecidedLoop, number: str) -> Secti
         "", _COLUMNS, tuple(_row(writer, firm) for firm in moving), wide=True, empty="No input within reach changes the decision."
     )
     still = [firm.words for firm in ordered if not isfinite(firm.nearness)]
-    blocks: list[Sentence | Table] = [table]
+    drawing = firmness_drawing([(firm.words, writer, firm) for firm in moving], "The way to the nearer change of each input.")
+    blocks: list[Shape] = [drawing, table] if drawing is not None else [table]
     if still:
         text = f"Within a factor of ten no other figure of these changes mode, output or verdict: {', '.join(still)}."
         blocks.append(Sentence(says(text), quiet=True))
@@ -36,7 +38,7 @@ def _row(writer: Writer, firm: Firm) -> Row:
     below, above = _end(writer, firm, firm.below), _end(writer, firm, firm.above)
     to_below = word(firm.below_to) if firm.below_to else DASH
     to_above = word(firm.above_to) if firm.above_to else DASH
-    return Row((word(firm.words), Cell(firm.text, number=True), below, to_below, above, to_above))
+    return Row((word(firm.words), word(firm.text), below, to_below, above, to_above))
 
 
 def _end(writer: Writer, firm: Firm, value: float | None) -> Cell:

@@ -7,7 +7,9 @@ from math import ceil, floor, inf, isfinite, log10
 from specgen.core.quantity import Range, Unit
 from specgen.core.say import THIN, Phrasing, Said, Words, digits, join, to_step
 from specgen.design.types import DecidedLoop
+from specgen.model.panel import Panel
 
+CELSIUS = Phrasing(Unit("degC"), Unit("K"))
 FAHRENHEIT = Phrasing(Unit("degF", 1.8, 32.0), Unit("degF", 1.8))
 _PRINTED = {"degC": "°C", "degF": "°F", "percent": "%", "ohm": "\u03a9", "m3/h": "m³/h"}
 # below the first number a quantity is written in the smaller unit
@@ -20,6 +22,7 @@ _SMALL = {
 }
 _BEFORE_WORDS = re.compile(f"{THIN}(?=(?:percent|years?|days|an? [hy]|operations))")
 _IN_WORDS = frozenset({"time", "years", "per_hour", "per_year", "operations"})
+KILO = 1e3
 _HAIR = 1e-9  # share of a step by which a number may lie past it and still count as on it
 
 
@@ -201,10 +204,14 @@ class Writer:
             return join(digits(value * 100, significant), "%")
         if dimension == "value":
             return self.value(value) if isfinite(value) else digits(value)
+        if dimension == "change" and isfinite(value):
+            return join(digits(value * self.phrasing.change.scale, significant), self.change_unit)
         if dimension == "change_per_second":
             return join(digits(value * self.phrasing.change.scale, significant), f"{self.change_unit}/s")
         if dimension == "share_per_change":
             return join(digits(value / self.phrasing.change.scale, significant), f"1/{self.change_unit}")
+        if dimension == "current" and abs(value) >= KILO:
+            return join(digits(value / KILO, significant), "kA")
         if dimension in _SMALL and 0 < abs(value) < _SMALL[dimension][0]:
             _, scale, unit = _SMALL[dimension]
             return join(digits(value * scale, significant), unit)
@@ -237,6 +244,11 @@ def step_for(tolerance: float) -> float:
     (0.1, 0.1, 0.01, 1.0)
     """
     return 10.0 ** floor(log10(tolerance / 10) + _HAIR) if 0 < tolerance < inf else 0.1
+
+
+def panel_phrasing(panel: Panel | None) -> Phrasing:
+    """Return what writes the panel's numbers, in the units it asks its pages to show."""
+    return FAHRENHEIT if panel is not None and panel.show == "us" else CELSIUS
 
 
 def writer_for(decided: DecidedLoop, show: str = "si") -> Writer:

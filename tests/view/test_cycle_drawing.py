@@ -8,7 +8,8 @@ import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from specgen.view.cycle_drawing import BOTTOM, LEFT, RIGHT, TOP, CyclePlot, cycle_drawing, ticks
+from specgen.view.axes import ticks
+from specgen.view.cycle_drawing import BOTTOM, LEFT, RIGHT, TOP, CyclePlot, cycle_drawing
 from specgen.view.shapes import Drawing
 
 PLOT = CyclePlot(

@@ -246,12 +246,12 @@ def test_the_input_nearest_to_a_change_stands_first(dossier, loop):
     near = Firm("plant.dead_time", "dead time", "time", 40.0, "40 s", None, "", 48.0, "time-proportioned", 0.08)
     still = Firm("plant.load", "load", "power", 600.0, "0.6 kW", None, "", None, "", inf)
     section = firmness_section(dossier.writers["TIC-1"], replace(loop("TIC-1"), firmness=(far, still, near)), "6")
-    rows = [[cell.text for cell in row.cells] for row in section.blocks[0].rows]
+    rows = [[cell.text for cell in row.cells] for row in section.blocks[1].rows]
     assert rows == [
         ["dead time", "40 s", "–", "–", "48\u202fs", "time-proportioned"],
         ["tolerance", "1.8 K", "0.9\u202fK", "held", "–", "–"],
     ]
-    assert section.blocks[1].spans[0].text.endswith("load.")
+    assert section.blocks[2].spans[0].text.endswith("load.")
 
 
 def test_a_value_below_absolute_zero_is_not_printed_as_one(dossier, loop):

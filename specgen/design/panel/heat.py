@@ -10,7 +10,7 @@ from specgen.model.panel import Panel
 from specgen.sizing.candidate import Assumption, Unsized
 from specgen.sizing.control_supply import ControlLoad
 from specgen.sizing.device import DeviceChoice
-from specgen.sizing.enclosure import Interior, Loss, interior_of
+from specgen.sizing.enclosure import Interior, Loss, Source, interior_of
 from specgen.sizing.feeder import Feeder
 
 REPLACE = "typical; to be replaced by the data sheet before construction"
@@ -50,28 +50,28 @@ def losses(
     """Yield every source of heat [W] at the duty that counts; parameters as `interior`."""
     tables, share = enclosure_tables(), float(panel.panel.coincidence)
     for loop in sorted(loops, key=lambda loop: loop.tag):
-        for what, watts in _at_full_output(loop, tables, catalogue):
-            yield Loss(what, share * watts, loop.tag)
+        for what, watts, source in _at_full_output(loop, tables, catalogue):
+            yield Loss(what, share * watts, loop.tag, source)
         switch = switches.get(loop.tag)
         if switch is not None:
-            yield Loss(f"{switch.name}, switching device of the safety chain", switch.loss or 0.0, loop.tag)
+            yield Loss(f"{switch.name}, switching device of the safety chain", switch.loss or 0.0, loop.tag, "safety")
         if isinstance(loop.decision.chosen.case.device, DeviceChoice):
-            yield Loss("controller, its share", float(tables.figure("controller_power").value.quantity), loop.tag)
+            yield Loss("controller, its share", float(tables.figure("controller_power").value.quantity), loop.tag, "controller")
     delivered = control.continuous * float(panel.control_supply.voltage)
-    yield Loss("control supply", float(tables.figure("control_supply_loss").value.quantity) * delivered)
+    yield Loss("control supply", float(tables.figure("control_supply_loss").value.quantity) * delivered, source="supply")
     yield Loss("other heat, declared", float(panel.enclosure.other_heat))
 
 
-def _at_full_output(loop: DecidedLoop, tables: EnclosureTables, catalogue: Catalogue) -> Iterator[tuple[str, float]]:
+def _at_full_output(loop: DecidedLoop, tables: EnclosureTables, catalogue: Catalogue) -> Iterator[tuple[str, float, Source]]:
     case = loop.decision.chosen.case
     if isinstance(case.device, DeviceChoice) and case.device.loss is not None:
-        yield case.device.name, case.device.loss
+        yield case.device.name, case.device.loss, "device"
     drive = drive_loss(loop, tables)
     if drive:
-        yield "variable-speed drive", drive
+        yield "variable-speed drive", drive, "drive"
     if isinstance(case.feeder, Feeder) and case.feeder.load.connection.way != "control":
-        yield "wiring inside", _wiring(case.feeder, tables, catalogue)
-        yield "protection", _protection(case.feeder, tables)
+        yield "wiring inside", _wiring(case.feeder, tables, catalogue), "wiring"
+        yield "protection", _protection(case.feeder, tables), "protection"
 
 
 def drive_loss(loop: DecidedLoop, tables: EnclosureTables) -> float:
