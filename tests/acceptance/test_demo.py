@@ -15,7 +15,7 @@ CONFIRMED = "the demo has a choice that the rules would take too"
 
 @pytest.fixture(scope="module")
 def design():
-    return load_design(DEMO)
+    return load_design(DEMO, remember=False)
 
 
 @pytest.fixture(scope="module")

@@ -24,6 +24,9 @@ def tree(folder):
     return {path.relative_to(folder).as_posix(): path.read_bytes() for path in sorted(folder.rglob("*")) if path.is_file()}
 
 
+FEW = NAMES[:3]
+
+
 def project(make, folder, order=NAMES, prefix=""):
     """Lay one loop a file, written in the given order; the area is written out, since it defaults to the file's name."""
     make.lay(folder)
@@ -42,7 +45,7 @@ def run(code, arguments, cwd, seed):
 
 @pytest.fixture(scope="module")
 def expected(make, tmp_path_factory):
-    return dump(record_of(load_design(project(make, tmp_path_factory.mktemp("expected") / "project"))))
+    return dump(record_of(load_design(project(make, tmp_path_factory.mktemp("expected") / "project"), remember=False)))
 
 
 @settings(max_examples=4, deadline=None, suppress_health_check=[HealthCheck.function_scoped_fixture])
@@ -50,7 +53,7 @@ def expected(make, tmp_path_factory):
 def test_files_in_any_order_and_under_other_names(make, tmp_path_factory, expected, order, prefix):
     """Names that sort alike: only the file that a loop is said to stand in changes."""
     folder = project(make, tmp_path_factory.mktemp("any") / "project", order, prefix)
-    record = record_of(load_design(folder))
+    record = record_of(load_design(folder, remember=False))
     if prefix:
         assert {row["source"]["file"] for row in record["loops"]} == {f"loops/{prefix}{n}.yml" for n in range(len(NAMES))}
         for row in record["loops"]:
@@ -58,9 +61,9 @@ def test_files_in_any_order_and_under_other_names(make, tmp_path_factory, expect
     assert dump(record) == expected
 
 
-def test_programs_in_two_places_and_mkdocs_alone(make, tmp_path, expected):
+def test_programs_in_two_places_and_mkdocs_alone(make, tmp_path):
     """Two builds by specgen with other hash seeds and working directories, and one by ``mkdocs build --strict``."""
-    places = [project(make, tmp_path / name / "project") for name in ("one", "two", "three")]
+    places = [project(make, tmp_path / name / "project", FEW) for name in ("one", "two", "three")]
     jobs = [
         (SPECGEN, ["build", str(places[0])], tmp_path, "1"),
         (SPECGEN, ["build"], places[1], "4711"),
@@ -73,7 +76,11 @@ def test_programs_in_two_places_and_mkdocs_alone(make, tmp_path, expected):
     for other in others:
         assert set(first) == set(other)
         assert [name for name, content in first.items() if other[name] != content] == []
-    assert first["data/record.json"] == expected
+    # how firm each decision is takes long, and only the programs ask for it
+    built, own = json.loads(first["data/record.json"]), record_of(load_design(places[0], remember=False))
+    for row in (*built["loops"], *own["loops"]):
+        row.pop("firmness", None)
+    assert built == own
 
 
 def test_a_record_is_in_order_and_finite(expected):
@@ -96,6 +103,6 @@ def test_a_record_is_in_order_and_finite(expected):
 
 def test_no_trace_of_the_machine(make, tmp_path, expected):
     folder = project(make, tmp_path / "project")
-    assert str(tmp_path).encode() not in dump(record_of(load_design(folder)))
+    assert str(tmp_path).encode() not in dump(record_of(load_design(folder, remember=False)))
     assert str(Path.home()).encode() not in expected
     shutil.rmtree(folder)

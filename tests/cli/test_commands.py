@@ -11,7 +11,9 @@ from pathlib import Path
 import pytest
 from click.testing import CliRunner
 
+from specgen.cli import common
 from specgen.cli.main import commands, main
+from specgen.design.project import load_design
 from specgen.render import site as site_module
 
 PANEL = """panel: {reference: PNL-1, title: Test panel, revision: A, status: for review, date: 2026-11-20}
@@ -31,6 +33,22 @@ OPEN = GOOD.replace("TIC-1", "TIC-3").replace("plant: ", "x: ").replace("x: {res
                                                                           "dead_time: 60 s, rest_value: 20 degC}}\n", "")  # fmt: skip
 BAD = GOOD.replace("TIC-1", "TIC-4").replace("tolerance: 2 K", "tolerance: 2 parsec")
 SITE = "site_name: Test panel\ndocs_dir: loops\ntheme: {name: specgen}\nplugins: [specgen]\n"
+
+
+@pytest.fixture(autouse=True)
+def quick(monkeypatch):
+    """Leave out how firm each decision is, which takes longest."""
+
+    def load(folder, progress=None, **_):
+        return load_design(folder, progress, remember=False)
+
+    monkeypatch.setattr(common, "load_design", load)
+
+
+@pytest.fixture
+def whole(monkeypatch):
+    """Leave nothing out after all."""
+    monkeypatch.setattr(common, "load_design", load_design)
 
 
 def lay(folder, *loops, panel=PANEL, site=SITE):
@@ -93,6 +111,7 @@ def test_a_held_panel_says_why(tmp_path):
     assert "1 loop: 1 meets; the panel is held; 0 problems" in result.output
 
 
+@pytest.mark.usefixtures("whole")
 def test_json_is_the_record(tmp_path):
     folder = lay(tmp_path, GOOD, HELD)
     printed = run("check", folder, "--format", "json").stdout_bytes
@@ -195,7 +214,7 @@ def test_what_stops_a_build_is_told_in_one_line(tmp_path, capsys, monkeypatch, s
 
 def test_ctrl_c_while_deciding(tmp_path, capsys, monkeypatch):
     folder = lay(tmp_path, GOOD)
-    monkeypatch.setattr("specgen.cli.common.load_design", lambda *_: (_ for _ in ()).throw(KeyboardInterrupt))
+    monkeypatch.setattr(common, "load_design", lambda *_, **__: (_ for _ in ()).throw(KeyboardInterrupt))
     assert ended(capsys, "check", folder)[0] == 130
 
 
@@ -220,6 +239,7 @@ def test_an_unreadable_file_among_the_loops(tmp_path):
     assert "TIC-1" in result.output
 
 
+@pytest.mark.usefixtures("whole")
 def test_as_a_program(tmp_path):
     """Exit code and streams of a process of its own; the record has its own byte order, wherever it is written."""
     folder = lay(tmp_path, GOOD, HELD)
