@@ -37,7 +37,7 @@ def read(folder: Path) -> Design:
             bar.pos = done
             bar.update(0)
 
-        return load_design(folder, progress)
+        return load_design(folder, progress, firmness=True, workers=0, remember=True)
 
 
 def _on_terminal() -> bool:

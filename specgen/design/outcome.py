@@ -11,15 +11,15 @@ from math import inf
 
 from specgen.catalogue.load import Catalogue
 from specgen.design.choice import LEVELS, best
-from specgen.design.decide import Examination, examine_candidates, verdict_of
-from specgen.design.types import Verdict
+from specgen.design.decide import Examination, verdict_of
+from specgen.design.types import Examined, Verdict
 from specgen.design.wish import wished
 from specgen.model.fitted import Fitted
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel
 from specgen.model.traits import traits_of
 from specgen.rules.base import Case, Finding
-from specgen.rules.engine import LoadedRule, all_rules, ask, examine_own
+from specgen.rules.engine import LoadedRule, all_rules, ask, examine_all, examine_own
 from specgen.sizing.candidate import CANDIDATES, ORDER, Candidate, Unsized
 from specgen.sizing.settings import OnOffSettings
 
@@ -104,11 +104,16 @@ def standing_of(subject: Subject, catalogue: Catalogue, hint: Standing | None = 
 
 
 def _chosen_by_designer(subject: Subject, catalogue: Catalogue) -> Standing:
-    """Examine everything, as ``decide`` does, where the designer's words narrow the choice."""
+    """Examine every candidate that the designer's words leave, as ``decide`` does; all of them where the words leave none."""
     loop = subject.loop
-    assert loop.choose is not None  # noqa: S101  asked only then
-    examined = examine_candidates(loop, subject.panel, traits_of(loop.element), catalogue, subject.fitted)
-    left = wished(loop.choose, examined)
+    wish = loop.choose
+    assert wish is not None  # noqa: S101  asked only then
+    examination = Examination(loop, subject.panel, traits_of(loop.element), catalogue, subject.fitted)
+    wired = [candidate for candidate in CANDIDATES if examination.wired(candidate)]
+    named = [candidate for candidate in wired if wish.mode in (None, candidate.mode) and wish.output in (None, candidate.device)]
+    cases = [examination.case(candidate) for candidate in named or wired]
+    examined = tuple(Examined(case, examine_all(case)) for case in cases)
+    left = wished(wish, examined)
     taken = best(left or examined)
     findings = {e.case.candidate: tuple(f for f in e.findings if f.weight != "note") for e in left or examined}
     chosen, own = taken.case.candidate, examine_own(taken.case)

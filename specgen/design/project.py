@@ -11,6 +11,7 @@ from specgen.design.pairs import with_pair_rules
 from specgen.design.panel import panel_of
 from specgen.design.recordings import with_recordings
 from specgen.design.types import VERDICTS, DecidedLoop, Design, SourceFile, Verdict
+from specgen.design.wiring import wirings_of
 from specgen.model.loops import read_loops
 from specgen.model.panel import Panel
 from specgen.model.reader import place, read_model
@@ -22,7 +23,7 @@ DEVICES = f"{LOOPS}/devices.yml"
 
 
 def load_design(
-    project: Path, progress: Progress | None = None, *, firmness: bool = False, workers: int = 1, remember: bool = True
+    project: Path, progress: Progress | None = None, *, firmness: bool = False, workers: int = 1, remember: bool = False
 ) -> Design:
     """Read a project's ``loops`` folder and decide every loop in it.
 
@@ -83,6 +84,7 @@ def design_of(
         catalogue_digest=catalogue_digest(),
         verdict=worst_verdict([*(loop.verdict for loop in decided), *own]),
         panel_design=together,
+        wirings=wirings_of(decided, panel, together, catalogue) if panel is not None and together is not None else {},
     )
 
 

@@ -64,7 +64,7 @@ class SpecgenPlugin(BasePlugin):  # type: ignore[type-arg]  # it has no options
         search = config.plugins.get("search")
         for methods in config.plugins.events.values():
             methods[:] = [method for method in methods if search is None or getattr(method, "__self__", None) is not search]
-        design = self.design or load_design(Path(config.config_file_path).parent)
+        design = self.design or load_design(Path(config.config_file_path).parent, firmness=True, workers=0, remember=True)
         self._dossier = dossier_of(design)
         for line in report(design):
             log.info(line)

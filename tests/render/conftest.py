@@ -16,7 +16,7 @@ SOURCE = Path(__file__).parents[1] / "view" / "project"
 
 @pytest.fixture(scope="session")
 def design():
-    return load_design(SOURCE)
+    return load_design(SOURCE, firmness=True)
 
 
 @pytest.fixture(scope="session")
