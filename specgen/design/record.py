@@ -7,6 +7,7 @@ from specgen import __version__
 from specgen.core.diagnostic import Diagnostic
 from specgen.design.record_loop import loop_record
 from specgen.design.record_panel import panel_figures, panel_open_points, panel_schedules
+from specgen.design.record_wiring import wiring_schedules
 from specgen.design.types import Design
 
 FORMAT = "specgen-record/1"
@@ -42,7 +43,7 @@ def record_of(design: Design) -> dict[str, Any]:
         }  # fmt: skip
     if design.panel_design is not None:
         record["panel"] |= panel_figures(design.panel_design)
-        record["schedules"] |= panel_schedules(design.panel_design)
+        record["schedules"] |= panel_schedules(design.panel_design) | wiring_schedules(design)
         record["open_points"] += panel_open_points(design.panel_design)
     return record
 

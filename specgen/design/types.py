@@ -1,6 +1,7 @@
 """What a decided loop and a whole design are."""
 
-from dataclasses import dataclass
+from collections.abc import Mapping
+from dataclasses import dataclass, field
 from typing import TYPE_CHECKING, Literal
 
 from specgen.core.diagnostic import Diagnostic
@@ -18,6 +19,7 @@ from specgen.sizing.limiter import LimiterDesign
 
 if TYPE_CHECKING:
     from specgen.design.panel.types import PanelDesign
+    from specgen.design.wiring.types import Wiring
 
 Verdict = Literal["meets", "deviates", "open", "held"]
 VERDICTS: tuple[Verdict, ...] = ("held", "open", "deviates", "meets")
@@ -154,7 +156,7 @@ class Design:
 
     ``panel`` is None where panel.yml itself could not be read: then there are problems and no loops.
     ``rules_digest`` and ``catalogue_digest`` change when a rule or a table changes. ``verdict`` is the worst of the loops' and
-    of the panel's own; ``panel_design`` is what the loops come to together.
+    of the panel's own; ``panel_design`` is what the loops come to together, ``wirings`` the circuits of each by its tag.
     """
 
     panel: Panel | None
@@ -165,3 +167,4 @@ class Design:
     catalogue_digest: str
     verdict: Verdict
     panel_design: "PanelDesign | None" = None
+    wirings: "Mapping[str, Wiring]" = field(default_factory=dict)

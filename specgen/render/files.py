@@ -12,12 +12,14 @@ from specgen.view.dossier import Dossier, OwnPage, dossier_of
 from specgen.view.firmness_page import firmness_table
 from specgen.view.frame import Place
 from specgen.view.heat_page import control_supply_table, losses_table
+from specgen.view.instruments_page import instruments_table
 from specgen.view.load_page import contributions_table
 from specgen.view.pages import page_views
 from specgen.view.parts_page import parts_table
 from specgen.view.protection_page import protection_table
 from specgen.view.registers import assumptions_table, loops_table, open_points_table
 from specgen.view.schedules import outputs_table
+from specgen.view.terminals_page import terminals_table
 
 ASSETS = "assets"
 
@@ -69,6 +71,8 @@ def data_files(dossier: Dossier) -> dict[str, bytes]:
         "data/parts.csv": csv_bytes(parts_table(dossier)),
         "data/protection.csv": csv_bytes(protection_table(dossier, place)),
         "data/conductors.csv": csv_bytes(conductors_table(dossier, place)),
+        "data/terminals.csv": csv_bytes(terminals_table(dossier, place)),
+        "data/instruments.csv": csv_bytes(instruments_table(dossier, place)),
         "data/load.csv": csv_bytes(contributions_table(dossier, place)),
         "data/heat.csv": csv_bytes(losses_table(dossier, place)),
         "data/control-supply.csv": csv_bytes(control_supply_table(dossier)),

@@ -35,6 +35,8 @@ PAGE_ROWS = (
     PageRow("outputs.html", "Outputs", "Schedules", "controller outputs and what they drive", "panel builder", "Schedules"),
     PageRow("parts.html", "Parts", "Schedules", "what to order, and where each part stands", "panel builder"),
     PageRow("conductors.html", "Conductors", "Schedules", "every run with size, method, capacity and drop", "panel builder"),
+    PageRow("terminals.html", "Terminals", "Schedules", "what is connected to each terminal", "installer"),
+    PageRow("instruments.html", "Instruments", "Schedules", "sensors and switches with range, class and signal", "purchaser"),
     PageRow("load.html", "Load", "Panel", "line and neutral currents, and the incomer", "reviewer", "Panel"),
     PageRow("heat.html", "Heat", "Panel", "what warms the panel, and the control supply", "reviewer"),
     PageRow("protection.html", "Protection", "Panel", "the coordinated list of every protective device", "panel builder"),

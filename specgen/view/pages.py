@@ -10,6 +10,7 @@ from specgen.view.firmness_page import firmness_page
 from specgen.view.frame import PAGE_ROWS, Place, frame
 from specgen.view.guide import guide_page
 from specgen.view.heat_page import heat_page
+from specgen.view.instruments_page import instruments_page
 from specgen.view.load_page import load_page
 from specgen.view.overview import overview_page
 from specgen.view.parts_page import parts_page
@@ -20,6 +21,7 @@ from specgen.view.schedules import outputs_page
 from specgen.view.shapes import PageView
 from specgen.view.sheet import sheet_page
 from specgen.view.site_checks_page import site_checks_page
+from specgen.view.terminals_page import terminals_page
 
 # a page is one row in PAGE_ROWS and its builder here
 BUILDERS: Mapping[str, Callable[[Dossier, Place], PageView]] = {
@@ -32,6 +34,8 @@ BUILDERS: Mapping[str, Callable[[Dossier, Place], PageView]] = {
     "firmness.html": firmness_page,
     "parts.html": parts_page,
     "conductors.html": conductors_page,
+    "terminals.html": terminals_page,
+    "instruments.html": instruments_page,
     "load.html": load_page,
     "heat.html": heat_page,
     "protection.html": protection_page,

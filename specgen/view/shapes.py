@@ -162,8 +162,22 @@ class Point:
 
 
 @dataclass(frozen=True, slots=True)
+class Group:
+    """What of a drawing belongs to one element: its designation, and that made an identifier of the page."""
+
+    anchor: str
+    designation: str
+    paths: tuple[Path, ...]
+    labels: tuple[Label, ...]
+    potential: str = ""
+
+
+@dataclass(frozen=True, slots=True)
 class Drawing:
-    """A drawing with its title for those who do not see it, and its caption for those who do."""
+    """A drawing with its title for those who do not see it, and its caption for those who do.
+
+    ``data`` is what is drawn as JSON, for a page that answers to a pointer; empty where there is nothing to answer.
+    """
 
     shape: ClassVar[str] = "drawing"
     wide: ClassVar[bool] = False
@@ -177,6 +191,9 @@ class Drawing:
     points: tuple[Point, ...] = ()
     labels: tuple[Label, ...] = ()
     notes: tuple[Note, ...] = ()
+    groups: tuple[Group, ...] = ()
+    kind: str = "plot"
+    data: str = ""
 
 
 @dataclass(frozen=True, slots=True)

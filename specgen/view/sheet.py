@@ -1,4 +1,4 @@
-"""A loop's sheet: title, decision, settings, expectations, hardware, failures, cautions, site checks, basis."""
+"""A loop's sheet: title, decision, settings, expectations, hardware, connections, failures, cautions, site checks, basis."""
 
 from specgen.design.types import DecidedLoop
 from specgen.view.basis_index import basis_index
@@ -9,6 +9,7 @@ from specgen.view.shapes import Item, Link, Note, Notice, PageView, Section, Sen
 from specgen.view.sheet_basis import basis_section
 from specgen.view.sheet_cautions import cautions_section
 from specgen.view.sheet_checks import checks_section
+from specgen.view.sheet_connections import connections_section
 from specgen.view.sheet_decision import decision_section
 from specgen.view.sheet_expect import expect_section
 from specgen.view.sheet_faults import faults_section
@@ -28,9 +29,10 @@ def sheet_page(dossier: Dossier, place: Place, decided: DecidedLoop, before: Dec
         settings_section(dossier, place, decided, "2"),
         expect_section(writer, decided, index, "3"),
         hardware_section(writer, decided, "4"),
-        faults_section(writer, decided, "5"),
-        cautions_section(dossier, place, decided, "6"),
-        checks_section(writer, decided, dossier.design.panel, "7"),
+        connections_section(dossier, place, decided, "5"),
+        faults_section(writer, decided, "6"),
+        cautions_section(dossier, place, decided, "7"),
+        checks_section(writer, decided, dossier.design.panel, "8"),
     ]
     if decided.firmness:
         sections.append(firmness_section(writer, decided, str(len(sections) + 1)))

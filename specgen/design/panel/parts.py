@@ -1,11 +1,11 @@
 """Schedule of parts: one row a designation."""
 
 from collections.abc import Iterator, Sequence
-from dataclasses import replace
 
 from specgen.catalogue.load import Catalogue
 from specgen.core.say import digits
 from specgen.design.designation import designation
+from specgen.design.panel.fitted import FUSE, interposing_product, suppressors_fitted
 from specgen.design.panel.limiter_switch import Switches
 from specgen.design.panel.schedules import circuits, load_letter, numbered
 from specgen.design.panel.types import Incoming, PartRow
@@ -61,27 +61,23 @@ def _devices(loop: DecidedLoop, catalogue: Catalogue) -> Iterator[Part]:
         return
     device = case.device
     letter = DEVICE_LETTER[case.candidate.device]
-    listed = catalogue.device(device.name) is not None
+    listed = catalogue.device(device.name.removeprefix("two of ")) is not None
     sink = f", heat sink of at most {digits(device.heat_sink)} K/W" if device.heat_sink else ""
     # an output of the controller is used here and bought with the controller
     what = f"{device.name}{sink}" if listed else f"{device.name}, part of it"
-    yield letter, what, device.rating, 2 if case.candidate.device == "relay_pair" else 1
+    for product in ("K1", "K2") if case.candidate.device == "relay_pair" else (letter,):
+        yield product, what.removeprefix("two of "), device.rating, 1
     if device.isolator:
         yield "Q3", f"{device.isolator}, opens every line", None, 1
     between = [contact for contact in device.chain if contact.role == "interposing"]
     for number, contact in enumerate(between):
-        yield f"K{number + (2 if letter == 'K1' else 1)}", f"{contact.name}, interposing", None, 1
+        yield interposing_product(case.candidate.device, number), f"{contact.name}, interposing", None, 1
 
 
 def _suppressors(loop: DecidedLoop, switches: Switches) -> Iterator[Part]:
-    device, switch = loop.decision.chosen.case.device, switches.get(loop.tag)
-    fitted = [] if isinstance(device, Unsized) else list(device.suppressors)
-    if switch is not None:
-        # the load, where it is a coil, has its own already
-        own = (part for part in switch.suppressors if part.across != "the element")
-        fitted += [replace(part, across=f"{part.across}, of the safety chain") for part in own]
-    for number, part in enumerate(fitted, 1):
-        yield f"R{number}", f"{part.part}, across {part.across}", None, 1
+    for fitted in suppressors_fitted(loop, switches.get(loop.tag)):
+        whose = ", of the safety chain" if fitted.across == "Q2" else ""
+        yield fitted.product, f"{fitted.part.part}, across {fitted.part.across}{whose}", None, 1
 
 
 def _safety(loop: DecidedLoop, switches: Switches) -> Iterator[Part]:
@@ -104,6 +100,7 @@ def _field(loop: DecidedLoop) -> Iterator[Part]:
     else:
         yield f"{letter}1", what, None, element.count
     yield "B1", f"sensor, {loop.loop.sensor.kind.replace('_', ' ')}", None, 1
+    yield FUSE, "protection of the loop's control circuits, rated by the data of the control supply", None, 1
     yield "X1", "terminals", None, 1
 
 
