@@ -50,7 +50,7 @@ def explain(context: click.Context, tag: str, folder: Path, wanted: tuple[str, .
     if not wanted:
         click.echo(reasoning(found))
         context.exit(exit_code(design))
-    trial = try_values(read_folder(folder / LOOPS, LOOPS), folder / LOOPS, found, wanted)
+    trial = try_values(read_folder(folder / LOOPS, LOOPS), folder / LOOPS, found, wanted, design.loops)
     for problem in trial.problems:
         click.echo(problem.line(), err=True)
         if problem.hint:

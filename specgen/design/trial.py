@@ -8,6 +8,7 @@ from typing import Any
 
 from specgen.core.diagnostic import Diagnostic, Path, Span
 from specgen.design.many import Task
+from specgen.design.pairs import with_pair_rules
 from specgen.design.project import LOOPS, catalogue_of, panel_of_sources
 from specgen.design.record_loop import loop_record
 from specgen.design.recordings import with_recordings
@@ -43,7 +44,9 @@ class Difference:
     after: object
 
 
-def try_values(sources: Sources, folder: FilePath, before: DecidedLoop, wanted: Sequence[str]) -> Trial:
+def try_values(
+    sources: Sources, folder: FilePath, before: DecidedLoop, wanted: Sequence[str], beside: Sequence[DecidedLoop] = ()
+) -> Trial:
     """Decide a loop again with new values.
 
     Parameters
@@ -57,6 +60,8 @@ def try_values(sources: Sources, folder: FilePath, before: DecidedLoop, wanted: 
     wanted : sequence of str
         Each ``path=value``, as ``need.tolerance=1 K`` or ``plant.balance.bodies.0.mass=80 kg``; below ``plant`` the name of the form may
         be left out. A value in brackets or braces is a list or a section.
+    beside : sequence of DecidedLoop
+        The panel's loops: those that share a body are judged two by two.
 
     Returns
     -------
@@ -85,6 +90,9 @@ def try_values(sources: Sources, folder: FilePath, before: DecidedLoop, wanted: 
     if read is None or panel is None:
         return Trial(before, None, tuple(problems))
     after, found_problems = Task(panel, catalogue, firmness=False).decided(read)
+    if after is not None:
+        together = with_pair_rules([after, *(loop for loop in beside if loop.tag != after.tag)])
+        after = next(loop for loop in together if loop.tag == before.tag)
     return Trial(before, after, tuple(_at_set(problem, laid) for problem in found_problems))
 
 
