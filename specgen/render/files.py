@@ -1,5 +1,6 @@
 """Every file of a dossier, as bytes, without MkDocs: all pages exist before the first byte is written."""
 
+import datetime
 from collections.abc import Mapping, Sequence
 from pathlib import Path, PurePosixPath
 
@@ -7,6 +8,7 @@ from specgen.design.record import dump, record_of
 from specgen.design.types import Design
 from specgen.render.csv_files import csv_bytes
 from specgen.render.environment import TEMPLATES, page
+from specgen.render.workbook import workbook
 from specgen.view.conductors_page import conductors_table
 from specgen.view.dossier import Dossier, OwnPage, dossier_of
 from specgen.view.firmness_page import firmness_table
@@ -19,9 +21,11 @@ from specgen.view.parts_page import parts_table
 from specgen.view.protection_page import protection_table
 from specgen.view.registers import assumptions_table, loops_table, open_points_table
 from specgen.view.schedules import outputs_table
+from specgen.view.shapes import Table
 from specgen.view.terminals_page import terminals_table
 
 ASSETS = "assets"
+UNDATED = datetime.date(1980, 1, 1)  # of a workbook whose panel could not be read
 
 
 def dossier_files(design: Design, own_pages: Sequence[OwnPage] = ()) -> Mapping[str, bytes]:
@@ -56,27 +60,37 @@ def asset_files() -> dict[str, bytes]:
     return {f"{ASSETS}/{file.name}": file.read_bytes() for file in sorted(folder.iterdir()) if file.suffix == ".css"}
 
 
+def data_tables(dossier: Dossier) -> dict[str, Table]:
+    """Return every table that is a file of its own and a sheet of the workbook, by its name."""
+    place = Place("data/loops.csv")
+    return {
+        "loops": loops_table(dossier),
+        "outputs": outputs_table(dossier, place),
+        "parts": parts_table(dossier),
+        "protection": protection_table(dossier, place),
+        "conductors": conductors_table(dossier, place),
+        "terminals": terminals_table(dossier, place),
+        "instruments": instruments_table(dossier, place),
+        "load": contributions_table(dossier, place),
+        "heat": losses_table(dossier, place),
+        "control-supply": control_supply_table(dossier),
+        "open-points": open_points_table(dossier, place),
+        "assumptions": assumptions_table(dossier),
+        "firmness": firmness_table(dossier),
+    }
+
+
 def data_files(dossier: Dossier) -> dict[str, bytes]:
-    """Write the record, one part of it a loop, the tables as CSV files, and the sources."""
+    """Write the record, one part of it a loop, the tables as CSV files and as a workbook, and the sources."""
     design = dossier.design
     record = record_of(design)
-    place = Place("data/loops.csv")
+    tables = data_tables(dossier)
+    date = design.panel.panel.date if design.panel else UNDATED
     files = {
         "data/record.json": dump(record),
-        "data/loops.csv": csv_bytes(loops_table(dossier)),
-        "data/outputs.csv": csv_bytes(outputs_table(dossier, place)),
-        "data/open-points.csv": csv_bytes(open_points_table(dossier, place)),
-        "data/assumptions.csv": csv_bytes(assumptions_table(dossier)),
-        "data/firmness.csv": csv_bytes(firmness_table(dossier)),
-        "data/parts.csv": csv_bytes(parts_table(dossier)),
-        "data/protection.csv": csv_bytes(protection_table(dossier, place)),
-        "data/conductors.csv": csv_bytes(conductors_table(dossier, place)),
-        "data/terminals.csv": csv_bytes(terminals_table(dossier, place)),
-        "data/instruments.csv": csv_bytes(instruments_table(dossier, place)),
-        "data/load.csv": csv_bytes(contributions_table(dossier, place)),
-        "data/heat.csv": csv_bytes(losses_table(dossier, place)),
-        "data/control-supply.csv": csv_bytes(control_supply_table(dossier)),
+        "data/schedules.xlsx": workbook({name.replace("-", " ").capitalize(): table for name, table in tables.items()}, date),
     }
+    files |= {f"data/{name}.csv": csv_bytes(table) for name, table in tables.items()}
     files |= {f"data/{loop['tag']}.json": dump(loop) for loop in record["loops"]}
     files |= {f"data/source/{name}": source.content for source in design.sources if (name := inside(source.name))}
     return files

@@ -6,7 +6,7 @@ from urllib.parse import unquote, urlsplit
 
 import pytest
 
-ENOUGH = 90_000  # bytes of a sheet
+ENOUGH = 125_000  # bytes of a sheet
 
 
 @pytest.fixture(scope="session")

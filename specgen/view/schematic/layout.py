@@ -137,7 +137,7 @@ def _rows(made: Layout) -> None:
         made.back = y + 4
         y = made.back + (16 if any(mark.below for mark in made.marks) else 6)
     elif any(_own_end(path) for path in circuit.paths):
-        y = max(y, max(made.foot_of(_last(made, at)) + 34 for at, path in enumerate(circuit.paths) if _own_end(path)))
+        y = max(y, *(made.foot_of(_last(made, at)) + 34 for at, path in enumerate(circuit.paths) if _own_end(path)))
     if made.feed is None and any(mark.below for mark in made.marks):
         y += 14
     made.height = float(ceil(y))

@@ -29,8 +29,8 @@ def wrapped(text: str, size: float, width: float, most: int) -> tuple[str, ...]:
 
     Examples
     --------
-    >>> wrapped("solid-state switch 25 A, three-phase", 10, 110, 3)
-    ('solid-state switch', '25 A, three-phase')
+    >>> wrapped("plug-in relay, 2-pole, d.c. coil", 10, 100, 3)
+    ('plug-in relay,', '2-pole, d.c. coil')
     >>> wrapped("one two three", 10, 30, 2)
     ('one', 'two…')
     """
