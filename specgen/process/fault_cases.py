@@ -156,6 +156,17 @@ def limiter_case(box: Box, set_value: float, sensor_lag: float) -> LimiterCase:
     return worst
 
 
+def coldest_rest(box: Box, point: Point) -> float | None:
+    """Return the real value at which a loop rests without output in a case of strength and loss: smallest load, hardest surroundings.
+
+    None where the plant's form does not say where the loop rests.
+    """
+    loss = box.loss.at(point.loss)
+    if box.ambient is None or loss <= 0:
+        return None
+    return box.ambient.at(1.0) - box.sign * min(box.heat.at(0.0), box.heat.at(1.0)) / loss
+
+
 def warm_up(box: Box, allowed: float) -> FaultCase | None:
     """Return the longest time from the coldest rest to the near edge of the band: lowest supply, largest load, every body counted.
 
@@ -175,16 +186,13 @@ def warm_up(box: Box, allowed: float) -> FaultCase | None:
     -----
     At rest the smallest load acts in the hardest surroundings; from switching on, the largest.
     """
-    if box.ambient is None:
-        return None
     made: list[tuple[float, Point]] = []
     for corner in box.ends("strength", "loss", "capacity"):
         point = corner._replace(load=1.0, dead_time=1.0, lag=1.0)
-        ends, loss = _ends(box, point), box.loss.at(point.loss)
-        if ends is None:
+        ends, loss, cold = _ends(box, point), box.loss.at(point.loss), coldest_rest(box, point)
+        if ends is None or cold is None:
             return None
         up = box.sign
-        cold = box.ambient.at(1.0) - up * min(box.heat.at(0.0), box.heat.at(1.0)) / loss
         target = box.setpoint.at(1.0) - up * allowed
         tau = box.whole_capacity.at(point.capacity) / loss
         constants = (tau, box.lag.at(1.0))
@@ -194,4 +202,4 @@ def warm_up(box: Box, allowed: float) -> FaultCase | None:
     return FaultCase(value, point, box.text(point))
 
 
-__all__ = ["FaultCase", "LimiterCase", "limiter_case", "settles_at", "time_to_reach", "warm_up"]
+__all__ = ["FaultCase", "LimiterCase", "coldest_rest", "limiter_case", "settles_at", "time_to_reach", "warm_up"]

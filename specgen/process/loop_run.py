@@ -55,6 +55,8 @@ class Run:
         Extremes of the true value, also between the recorded times.
     time_to_band : float
         Time after which the value stays inside the band; ``inf`` where it was outside at the end.
+    highest_at : float
+        When the true value was highest.
     """
 
     times: tuple[float, ...]
@@ -63,6 +65,7 @@ class Run:
     highest: float
     lowest: float
     time_to_band: float
+    highest_at: float = 0.0
 
 
 @dataclass(slots=True)
@@ -73,13 +76,15 @@ class Watch:
     last_outside: float
     highest: float = -inf
     lowest: float = inf
+    highest_at: float = 0.0
     times: list[float] = field(default_factory=list)
     values: list[float] = field(default_factory=list)
     outputs: list[float] = field(default_factory=list)
 
     def see(self, time: float, value: float) -> None:
         """Take note of a value that need not be recorded."""
-        self.highest = max(self.highest, value)
+        if value > self.highest:
+            self.highest, self.highest_at = value, time
         self.lowest = min(self.lowest, value)
         if not -self.band.below <= value <= self.band.above:
             self.last_outside = time
@@ -94,4 +99,4 @@ class Watch:
         """Return the run."""
         ends_outside = self.last_outside >= self.times[-1]
         found = inf if ends_outside else self.last_outside
-        return Run(tuple(self.times), tuple(self.values), tuple(self.outputs), self.highest, self.lowest, found)
+        return Run(tuple(self.times), tuple(self.values), tuple(self.outputs), self.highest, self.lowest, found, self.highest_at)

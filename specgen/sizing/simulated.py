@@ -12,10 +12,11 @@ from specgen.process.load_step import first_estimate, load_step
 from specgen.process.loop_dynamics import Dynamics
 from specgen.process.loop_run import Band
 from specgen.process.start_up import StartUp, start_up
+from specgen.process.tuning import Settings
 from specgen.sizing.candidate import Unsized
 from specgen.sizing.remembered import remembered
 from specgen.sizing.settings import Tuning
-from specgen.sizing.starting_values import Start, dynamics_of, hardest_case, inside
+from specgen.sizing.starting_values import Hardest, Start, dynamics_of, hardest_case, inside
 
 OWN = "exact simulation of the limited loop, tests/process"
 ALMOST = 0.98  # a start-up at nearly full output only creeps in
@@ -148,20 +149,39 @@ def _with_actuator(start: Start, plant: Dynamics) -> Dynamics:
 @remembered
 def _start_up(start: Start, box: Box, band: Band) -> tuple[float, float] | None:
     """Simulate from rest: the liveliest case for the overshoot, the weakest for the time."""
-    lively = start.hardest.point
-    slow = 1.0 if box.whole_capacity.at(1.0) >= box.whole_capacity.at(0.0) else 0.0
-    weak = box.duty_high[1]._replace(capacity=slow, dead_time=lively.dead_time)
-    found = [run for point in (lively, weak) if (run := _one(start, box, point, band)) is not None]
+    asked = (start_from_rest(box, point, start.actuator) for point in start_points(start.hardest, box))
+    found = [one.simulated(start.settings, band, start.cycle_time) for one in asked if one is not None]
     if not found:
         return None
     return max(run.overshoot for run in found), max(run.time_to_band for run in found)
 
 
-def _one(start: Start, box: Box, point: Point, band: Band) -> StartUp | None:
+def start_points(hardest: Hardest, box: Box) -> tuple[Point, Point]:
+    """Return the cases that a start-up is simulated for: the liveliest for the overshoot, the weakest for the time."""
+    lively = hardest.point
+    slow = 1.0 if box.whole_capacity.at(1.0) >= box.whole_capacity.at(0.0) else 0.0
+    return lively, box.duty_high[1]._replace(capacity=slow, dead_time=lively.dead_time)
+
+
+@dataclass(frozen=True, slots=True)
+class FromRest:
+    """A case that starts from rest without output: its plant, the distance to the setpoint, and the output that holds it."""
+
+    point: Point
+    dynamics: Dynamics
+    rise: float
+    duty: float
+
+    def simulated(self, settings: Settings, band: Band, cycle_time: float) -> StartUp:
+        """Return the start of the tuned loop."""
+        return start_up(self.dynamics, settings, self.rise, self.duty, band, cycle_time)
+
+
+def start_from_rest(box: Box, point: Point, actuator: float) -> FromRest | None:
+    """Return how a case starts; None where it rests beyond the setpoint, nowhere, or where nearly full output only creeps in."""
     plant = box.plant_at(point)
-    duty = plant.duty
     rise = -plant.settles_off
-    if not (0 < duty < ALMOST and 0 < rise < inf):
+    if not (0 < plant.duty < ALMOST and 0 < rise < inf):
         return None
-    dynamics = _with_actuator(start, dynamics_of(box, point))
-    return start_up(dynamics, start.settings, rise, duty, band, start.cycle_time)
+    own = dynamics_of(box, point)
+    return FromRest(point, replace(own, theta=own.theta + actuator), rise, plant.duty)

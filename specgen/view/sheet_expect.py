@@ -12,6 +12,7 @@ from specgen.view.cells import says, word
 from specgen.view.cycle_drawing import CyclePlot, cycle_drawing
 from specgen.view.cycle_plot import on_off_plot, ripple_plot
 from specgen.view.shapes import Cell, Column, Row, Section, Sentence, Shape, Table
+from specgen.view.sheet_plots import expected_plots
 from specgen.view.summary import Summary, summary_of
 from specgen.view.words import listed
 from specgen.view.writer import Writer
@@ -40,6 +41,7 @@ def expect_section(writer: Writer, decided: DecidedLoop, index: BasisIndex, numb
         rows = tuple(_row(line, index) for line in _lines(writer, decided, settings))
         blocks.append(Table("", _COLUMNS, rows, wide=True))
         blocks += _drawing(writer, decided)
+        blocks += expected_plots(writer, decided)
     return Section(number_, "expect", "What to expect", tuple(blocks))
 
 

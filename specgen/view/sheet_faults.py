@@ -6,6 +6,7 @@ from specgen.sizing.candidate import Unsized
 from specgen.sizing.faults import Stuck
 from specgen.view.cells import DASH, NO_NUMBER, number, says, word
 from specgen.view.shapes import Cell, Column, Row, Section, Sentence, Shape, Span, Table
+from specgen.view.sheet_plots import stuck_plot
 from specgen.view.sheet_safety import safety_blocks
 from specgen.view.words import SENSOR_FAULT
 from specgen.view.writer import Writer
@@ -31,6 +32,7 @@ def faults_section(writer: Writer, decided: DecidedLoop, number_: str) -> Sectio
         rows = (_stuck(writer, "stuck on", faults.on), _stuck(writer, "stuck off", faults.off))
         blocks.append(Table("Output stuck", columns, rows, wide=True))
         blocks.append(Sentence(says("Times count from the worst peak of normal running, the element hot."), quiet=True))
+        blocks += stuck_plot(writer, decided)
     blocks += [_walked(writer, outcome) for outcome in fault_walk(decided)]
     if decided.safety is not None:
         blocks += safety_blocks(writer, decided.safety)
