@@ -8,6 +8,7 @@ from specgen.design.record import dump, record_of
 from specgen.design.types import Design
 from specgen.render.csv_files import csv_bytes
 from specgen.render.environment import TEMPLATES, page
+from specgen.render.search_index import Sections, search_files, sections_of
 from specgen.render.workbook import workbook
 from specgen.view.conductors_page import conductors_table
 from specgen.view.dossier import Dossier, OwnPage, dossier_of
@@ -25,6 +26,7 @@ from specgen.view.shapes import Table
 from specgen.view.terminals_page import terminals_table
 
 ASSETS = "assets"
+SUFFIXES = (".css", ".js")
 UNDATED = datetime.date(1980, 1, 1)  # of a workbook whose panel could not be read
 
 
@@ -48,16 +50,22 @@ def dossier_files(design: Design, own_pages: Sequence[OwnPage] = ()) -> Mapping[
 
 def files_of(dossier: Dossier) -> dict[str, bytes]:
     """Write every file of a gathered dossier."""
-    files = {view.path: page(view) for view in page_views(dossier)}
+    files: dict[str, bytes] = {}
+    sheets: list[Sections] = []
+    for view in page_views(dossier):
+        files[view.path] = page(view)
+        if view.tag:
+            sheets.append(sections_of(view))
     files |= asset_files()
+    files |= search_files(dossier, sheets)
     files |= data_files(dossier)
     return files
 
 
 def asset_files() -> dict[str, bytes]:
-    """Return the style sheets as they stand."""
+    """Return the style sheets and scripts as they stand."""
     folder = Path(TEMPLATES) / ASSETS
-    return {f"{ASSETS}/{file.name}": file.read_bytes() for file in sorted(folder.iterdir()) if file.suffix == ".css"}
+    return {f"{ASSETS}/{file.name}": file.read_bytes() for file in sorted(folder.iterdir()) if file.suffix in SUFFIXES}
 
 
 def data_tables(dossier: Dossier) -> dict[str, Table]:

@@ -32,8 +32,8 @@ def check_rows(writer: Writer, checks: Sequence[Check], *, meanings: bool = True
                 word(capital(writer.sentence(check.what, check.words)), aside=_meaning(writer, check) if meanings else ""),
                 Cell(expected(writer, check)),
                 Cell(tolerance(writer, check)),
-                Cell("", export=""),
-                Cell("", export=""),
+                Cell("", export="", entry="reading"),
+                Cell("", export="", entry="initials"),
             ),
             anchor=check.id,
         )

@@ -7,6 +7,7 @@ from math import floor, log10
 from specgen.core.say import MINUS
 from specgen.view.axes import Scale, ticks
 from specgen.view.axes import place as _n
+from specgen.view.reading import Readable, reading_data
 from specgen.view.shapes import Box, Drawing, Label, Note, Path, Point
 
 WIDTH, HEIGHT = 640, 262
@@ -77,7 +78,13 @@ def cycle_drawing(plot: CyclePlot) -> Drawing:
         points=(Point(_n(worst_x), _n(worst_y)),),
         labels=tuple(labels),
         notes=plot.notes,
+        data=reading_data([_readable(plot, Scale(0.0, end / unit_size, LEFT, RIGHT), unit, y)]),
     )
+
+
+def _readable(plot: CyclePlot, x: Scale, unit: str, y: Scale) -> Readable:
+    curves = (("value", "true value"), *((("measured", "controller reads"),) if plot.measured else ()))
+    return Readable(x, unit, y, plot.value_axis.rpartition(", ")[2], curves)
 
 
 def _span(plot: CyclePlot) -> tuple[float, float]:

@@ -8,6 +8,7 @@ from specgen.view.shapes import Item, Link, Mark, Notice, PageView, Section, Sen
 from specgen.view.words import counted, listed
 
 MOST_NAMED = 6
+SCRIPTS = ("dossier.js", "tables.js", "search.js", "notes.js", "reading.js")
 
 
 @dataclass(frozen=True, slots=True)
@@ -111,6 +112,10 @@ def frame(
         after=after,
         fields=_title_block(dossier, sheet or title),
         prose=prose,
+        panel=panel.panel.reference if panel else "",
+        revision=panel.panel.revision if panel else "",
+        tag=sheet if place.path.startswith("loops/") else "",
+        scripts=SCRIPTS,
     )
 
 

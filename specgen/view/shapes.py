@@ -62,6 +62,7 @@ class Cell:
     """One cell: its text, where it leads, a quieter second text, a verdict, or several runs of text.
 
     ``export`` is what stands in a CSV file: a plain number where the column holds numbers, else None for the text.
+    ``entry`` names what is written into the cell on site: ``reading`` or ``initials``.
     """
 
     text: str
@@ -71,6 +72,7 @@ class Cell:
     mark: Mark | None = None
     spans: tuple[Span, ...] = ()
     export: str | None = None
+    entry: str = ""
 
     @property
     def plain(self) -> str:
@@ -288,7 +290,8 @@ class PageView:
 
     ``path`` is its file below the site, ``root`` leads from it back to the site's folder. ``marginal`` stands in
     the running head; ``fields`` are those of the title block. ``prose`` is ready HTML of the user's own page; ``heading``
-    is empty where that brings its own.
+    is empty where that brings its own. ``panel``, ``revision`` and ``tag`` are what notes written on the page are kept
+    under; ``scripts`` are the small modules it works with, and nothing of it needs them to be read.
     """
 
     path: str
@@ -310,3 +313,7 @@ class PageView:
     after: Link | None
     fields: tuple[TitleField, ...]
     prose: str = ""
+    panel: str = ""
+    revision: str = ""
+    tag: str = ""
+    scripts: tuple[str, ...] = ()
