@@ -4,7 +4,8 @@ from collections.abc import Mapping
 from dataclasses import dataclass
 from math import floor, isfinite, log10
 
-from specgen.core.quantity import Unit
+from specgen.core.conversion import Unit
+from specgen.core.printed import SYSTEMS, Ladder, SystemName
 
 THIN = "\u202f"  # no-break thin space between number and unit
 MINUS = "\u2212"
@@ -110,33 +111,16 @@ def to_step(value: float, step: float) -> str:
     return (MINUS if negative else "") + text
 
 
-_FIXED = {
-    "years": ("years", 1.0), "per_hour": ("an hour", 1.0), "number": ("", 1.0), "current": ("A", 1.0), "voltage": ("V", 1.0),
-    "resistance": ("\u03a9", 1.0), "fraction": ("percent", 100.0), "frequency": ("Hz", 1.0), "length": ("m", 1.0), "area": ("m²", 1.0),
-    "loss": ("W/K", 1.0), "mass": ("kg", 1.0), "u_value": ("W/(m² K)", 1.0), "thermal_resistance": ("K/W", 1.0), "kv": ("m³/h", 1.0),
-    "per_year": ("a year", 1.0), "operations": ("operations", 1.0), "degrees": ("°", 1.0), "temperature": ("°C", 1.0),
-    "difference": ("K", 1.0), "i2t": ("A² s", 1.0), "per_second": ("1/s", 1.0), "density": ("kg/m³", 1.0),
-    "flow_volume": ("m³/h", 3600.0),
-}  # fmt: skip
-_LADDERS = {
-    "time": ((365.25 * 86400, "years"), (2 * 86400, "days"), (3 * 3600, "h"), (600, "min"), (1, "s"), (1e-3, "ms")),
-    "power": ((1e6, "MW"), (1e3, "kW"), (1, "W"), (1e-3, "mW")),
-    "heat_capacity": ((1e6, "MJ/K"), (1e3, "kJ/K"), (1, "J/K")),
-    "specific_heat": ((1e3, "kJ/(kg K)"), (1, "J/(kg K)")),
-    "energy": ((1e6, "MJ"), (1e3, "kJ"), (1, "J")),
-    "pressure": ((1e5, "bar"), (1e2, "mbar"), (1, "Pa")),
-    "pressure_difference": ((1e5, "bar"), (1e2, "mbar"), (1, "Pa")),
-}
-_PRINTED = {"degC": "°C", "degF": "°F", "ohm": "\u03a9", "m3/h": "m³/h"}
-_SCALE_OF = {"years": 365.25 * 86400, "days": 86400.0, "h": 3600.0, "min": 60.0}
+_PRINTED = {"degC": "°C", "degF": "°F", "ohm": "\u03a9", "m3/h": "m³/h", "inch": "in"}
 
 
 @dataclass(frozen=True, slots=True)
 class Phrasing:
-    """Writes numbers of one loop: its value's unit and the unit of a difference."""
+    """Writes numbers of one loop: its value's unit, the unit of a difference, and the system that all others are printed in."""
 
     value: Unit
     change: Unit
+    system: SystemName = "si"
 
     def say(self, said: Said, significant: int = 3) -> str:
         """Write one number with its unit.
@@ -154,25 +138,38 @@ class Phrasing:
             return join(text, self.value.symbol)
         if said.dimension == "change":
             return join(digits(said.value * self.change.scale, significant), self.change.symbol)
-        if said.dimension in _LADDERS:
-            return _on_ladder(said, significant)
-        symbol, scale = _FIXED.get(said.dimension, (said.dimension, 1.0))
-        return join(digits(said.value * scale, significant), symbol)
+        system = SYSTEMS[self.system]
+        ladder = system.ladders.get(said.dimension)
+        if ladder is not None:
+            return _on_ladder(said.value, ladder, significant)
+        unit = system.fixed.get(said.dimension)
+        if unit is None:
+            return join(digits(said.value, significant), said.dimension)
+        return join(digits(said.value * unit.scale + unit.offset, significant), unit.symbol)
 
     def fill(self, template: str, words: Words) -> str:
         """Put numbers and words into a sentence's braces."""
         return template.format_map({name: self.say(w) if isinstance(w, Said) else w for name, w in words.items()})
 
 
-def _on_ladder(said: Said, significant: int) -> str:
-    ladder = _LADDERS[said.dimension]
-    size = abs(said.value)
-    for step, symbol in ladder:
-        if size >= step * (1 - 1e-9):
-            return join(digits(said.value / _SCALE_OF.get(symbol, step), significant), symbol)
-    step, symbol = ladder[-1]
-    base = next(symbol for step, symbol in ladder if step == 1)
-    return join("0", base) if size == 0 else join(digits(said.value / step, significant), symbol)
+def _on_ladder(value: float, ladder: Ladder, significant: int) -> str:
+    """Write a number in the largest unit it reaches, zero in the plain one."""
+    size = abs(value)
+    if size == 0:
+        return join("0", next((unit.symbol for least, unit in ladder if least == 1), ladder[0][1].symbol))
+    unit = next((unit for least, unit in ladder if size >= least * (1 - 1e-9)), ladder[-1][1])
+    return join(digits(value * unit.scale, significant), unit.symbol)
+
+
+def as_difference(text: str) -> str:
+    """Return a written difference so that nobody takes it for a temperature.
+
+    Examples
+    --------
+    >>> as_difference("1.5 degC"), as_difference("0.2 bar")
+    ('1.5 K', '0.2 bar')
+    """
+    return text.replace("degC", "K")
 
 
 def join(number: str, symbol: str) -> str:

@@ -3,6 +3,7 @@
 from collections.abc import Iterator
 
 from specgen.core.quantity import Quantity
+from specgen.core.say import as_difference
 from specgen.model.fields import Model
 from specgen.model.traits import Traits
 from specgen.process.box import Unmodelled
@@ -60,7 +61,7 @@ def _of_settings(case: Case) -> Iterator[Assumption]:
             yield Assumption("controllers.scan", "0.25 s", "no controller is declared: the usual scan")
         if need.overshoot is None:
             side = need.tolerance.above if case.loop.raises else need.tolerance.below
-            yield Assumption("need.overshoot", side.text, "not written: the tolerance on the side that the output drives to")
+            yield Assumption("need.overshoot", as_difference(side.text), "not written: the tolerance on the side that the output drives to")
     limits = case.loop.limits
     if limits.after_power_return is None and panel.house.after_power_return is None and limits.consequence not in ("injury", "fire"):
         why = "not written, neither for the loop nor for the house; for injury and fire it must be (rule S4)"

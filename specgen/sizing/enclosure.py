@@ -149,5 +149,5 @@ def interior_of(enclosure: Enclosure, losses: Sequence[Loss], tables: EnclosureT
             air = flow / HOUR
             words = {"f": (float(factor.value.factor), "number"), "P_s": (short, "power"), "ΔT_a": (allowed, "difference")}
             name, source = "air from outside that would do", factor.row.cited
-            figures.append(Figure("V", name, "f P_s/ΔT_a, in m³/h", air, "flow_volume", source, words, case))
+            figures.append(Figure("V", name, "f P_s/ΔT_a, in m³/h", air, "air_flow", source, words, case))
     return Interior(total, area.value, outside + rise, limit, tuple(losses), cooling, short, needed, air, tuple(figures))

@@ -10,7 +10,8 @@ from specgen.rules.engine import LoadedRule, all_rules
 from specgen.rules.planned import Planned
 from specgen.rules.planned import not_examined as planned_but
 from specgen.source.text import cut
-from specgen.view.writer import Writer, writer_for
+from specgen.view.in_units import Retell, retelling
+from specgen.view.writer import Writer, system_of, writer_for
 
 _TAG_LINE = re.compile(r"^tag:[ \t]*(['\"]?)([A-Za-z0-9-]{1,40})\1[ \t]*(#.*)?$", re.MULTILINE)
 _NOT_LOOPS = ("panel.yml", "devices.yml")
@@ -38,7 +39,7 @@ class Dossier:
     """A design with what its pages need besides.
 
     ``held`` and ``unsettled`` are the tags of the loops that every page must name, ``errors`` the number of problems in the input,
-    ``rule_codes`` the rules that are examined.
+    ``rule_codes`` the rules that are examined. ``retell`` turns ready texts over into the units of the pages, where that is needed.
     """
 
     design: Design
@@ -50,6 +51,7 @@ class Dossier:
     unsettled: tuple[str, ...]
     errors: int
     rule_codes: frozenset[str]
+    retell: Retell | None = None
 
     @property
     def title(self) -> str:
@@ -63,8 +65,8 @@ class Dossier:
 
 def dossier_of(design: Design, own_pages: Sequence[OwnPage] = ()) -> Dossier:
     """Gather what the pages are built from."""
-    show = design.panel.show if design.panel else "si"
-    writers = {loop.tag: writer_for(loop, show) for loop in design.loops}
+    system = system_of(design.panel)
+    writers = {loop.tag: writer_for(loop, system) for loop in design.loops}
     return Dossier(
         design=design,
         rules=all_rules(),
@@ -75,6 +77,7 @@ def dossier_of(design: Design, own_pages: Sequence[OwnPage] = ()) -> Dossier:
         unsettled=tuple(loop.tag for loop in design.loops if loop.verdict == "open"),
         errors=sum(1 for problem in design.problems if problem.severity == "error"),
         rule_codes=frozenset(loaded.rule.code for loaded in all_rules()),
+        retell=retelling(design),
     )
 
 

@@ -3,6 +3,8 @@
 from collections.abc import Iterator, Sequence
 from math import isfinite, log10
 
+from specgen.core.printed import Meaning
+from specgen.core.retell import retold
 from specgen.design.types import Firm
 from specgen.view.bars import LETTER, WIDTH, Bar, BarChart, bar_drawing
 from specgen.view.shapes import Drawing, Note
@@ -50,6 +52,12 @@ def _ticks(longest: float, room: float) -> Iterator[tuple[float, str]]:
         if at <= high and (at - reached) * room / high >= LEAST_APART:
             reached = at
             yield at, f"{factor:g}"
+
+
+def declared(writer: Writer, firm: Firm) -> str:
+    """Return an input as it was written, in the units of the pages."""
+    degrees: Meaning = "temperature" if firm.dimension == "value" else "difference"
+    return retold(firm.text, writer.phrasing.system, degrees)
 
 
 def nearest_change(writer: Writer, firm: Firm) -> str:

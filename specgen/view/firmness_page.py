@@ -6,7 +6,7 @@ from specgen.design.firmness import nearest_first
 from specgen.design.types import DecidedLoop, Firm
 from specgen.view.cells import says, word
 from specgen.view.dossier import Dossier
-from specgen.view.firmness_drawing import MOST, firmness_drawing
+from specgen.view.firmness_drawing import MOST, declared, firmness_drawing
 from specgen.view.frame import Place
 from specgen.view.panel_page import panel_page
 from specgen.view.shapes import Cell, Column, Item, List, PageView, Row, Sentence, Shape, Span, Table
@@ -45,7 +45,7 @@ def _lead(dossier: Dossier, place: Place, every: tuple[tuple[DecidedLoop, Firm],
     spans = (
         Span(f"{counts}; nearest is the {firm.words} of "),
         Span(loop.tag, place.sheet(loop.tag, "firmness")),
-        Span(f", declared as {firm.text}, which at {at} makes it: {side[1]}."),
+        Span(f", declared as {declared(writer, firm)}, which at {at} makes it: {side[1]}."),
     )
     return Sentence(spans, lead=True)
 
@@ -78,7 +78,7 @@ def _row(writer: Writer, place: Place, loop: DecidedLoop, firm: Firm) -> Row:
     cells = (
         word(loop.tag, place.sheet(loop.tag, "firmness")),
         word(firm.words),
-        word(firm.text),
+        word(declared(writer, firm)),
         below,
         word(firm.below_to or "\u2013"),
         above,

@@ -4,6 +4,7 @@ from dataclasses import dataclass
 
 from specgen.view.cells import verdict_mark
 from specgen.view.dossier import Dossier, MissingLoop
+from specgen.view.in_units import in_units
 from specgen.view.shapes import Item, Link, Mark, Notice, PageView, Section, Sentence, Span, Standing, TitleField
 from specgen.view.words import counted, listed
 
@@ -91,6 +92,7 @@ def frame(
     """Put a page's sections into the dossier."""
     panel = dossier.design.panel
     group = next((row.group for row in PAGE_ROWS if row.path == place.path), "")
+    tell = dossier.retell
     siblings = [row for row in PAGE_ROWS if group and row.group == group]
     return PageView(
         path=place.path,
@@ -98,13 +100,13 @@ def frame(
         site_title=dossier.title,
         title=title,
         heading=title if heading is None else heading,
-        kicker=kicker,
+        kicker=tell(kicker) if tell is not None else kicker,
         mark=mark,
         marginal=f"{panel.panel.reference}\u2002{dossier.title}" if panel else dossier.title,
-        lead=lead,
+        lead=in_units(lead, tell),
         standing=standing_notice(dossier, place),
-        notices=notices,
-        sections=sections,
+        notices=in_units(notices, tell),
+        sections=in_units(sections, tell),
         navigation=tuple(_link(place, row, row.header) for row in PAGE_ROWS if row.header),
         siblings=tuple(_link(place, row, row.title) for row in siblings) if len(siblings) > 1 else (),
         sibling_label=group,

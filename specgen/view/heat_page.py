@@ -74,7 +74,7 @@ def _ways(writer: Writer, heat: Interior) -> list[str]:
     if heat.surface_needed is not None:
         ways.append(f"{writer.say(heat.surface_needed, 'area')} of effective surface")
     if heat.air is not None:
-        ways.append(f"{writer.say(heat.air, 'flow_volume')} of air from outside")
+        ways.append(f"{writer.say(heat.air, 'air_flow')} of air from outside")
     return ways
 
 

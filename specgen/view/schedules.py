@@ -5,7 +5,8 @@ from specgen.sizing.device import DeviceChoice
 from specgen.view.cells import DASH, NO_NUMBER, number, says, verdict_cell, word
 from specgen.view.dossier import Dossier
 from specgen.view.frame import Place, frame
-from specgen.view.shapes import Column, Note, PageView, Row, Section, Sentence, Table
+from specgen.view.panel_page import ruling, sections_of
+from specgen.view.shapes import Column, Note, PageView, Row, Sentence, Shape, Table
 from specgen.view.summary import designated, summary_of
 from specgen.view.words import OUTPUTS
 
@@ -19,8 +20,22 @@ def outputs_page(dossier: Dossier, place: Place) -> PageView:
     """Build the schedule of controller outputs."""
     table = outputs_table(dossier, place)
     remark = Sentence(says("One row a loop: the controller output it takes and the device that output drives."), quiet=True, notes=_NOTE)
-    section = Section("1", "outputs", "Controller outputs", (remark, table))
-    return frame(dossier, place, "Outputs", (section,), kicker="Controller outputs and what they drive")
+    sections = sections_of((("outputs", "Controller outputs", (remark, table)), ("spare", "Spare outputs", _spare(dossier, place))))
+    return frame(dossier, place, "Outputs", sections, kicker="Controller outputs and what they drive")
+
+
+def _spare(dossier: Dossier, place: Place) -> tuple[Shape, ...]:
+    """Count the outputs of each kind that are taken and left."""
+    panel = dossier.design.panel_design
+    if panel is None:
+        return ()
+    columns = (Column("Kind"), Column("Taken", number=True), Column("There", number=True), Column("Left", number=True))
+    rows = tuple(
+        Row((word(OUTPUTS[count.sort]), *(number(str(n), n) for n in (count.used, count.there, count.there - count.used))))
+        for count in panel.outputs
+        if count.used or count.there
+    )
+    return (*ruling(dossier, place, panel, ("E6",)), Table("", columns, rows, empty="No output is taken or declared."))
 
 
 def outputs_table(dossier: Dossier, place: Place) -> Table:

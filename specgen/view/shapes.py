@@ -41,12 +41,16 @@ class Sentence:
 
 @dataclass(frozen=True, slots=True)
 class Column:
-    """A column's head with its unit; numbers are set to the right. ``export`` is its head in a CSV file."""
+    """A column's head with its unit; numbers are set to the right. ``export`` is its head in a CSV file.
+
+    A ``quoted`` column shows what a file says, in the units it was written in.
+    """
 
     head: str
     unit: str = ""
     number: bool = False
     export: str = ""
+    quoted: bool = False
 
 
 @dataclass(frozen=True, slots=True)

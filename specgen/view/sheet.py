@@ -48,7 +48,7 @@ def sheet_page(dossier: Dossier, place: Place, decided: DecidedLoop, before: Dec
         place,
         decided.tag,
         tuple(sections),
-        kicker=kicker(decided),
+        kicker=kicker(decided, writer),
         mark=verdict_mark(decided.verdict),
         lead=Sentence((Span(title_sentence(decided, writer)),), lead=True, notes=lead_notes),
         notices=_missing(dossier, place, decided),

@@ -39,7 +39,7 @@ def _assumptions(decided: DecidedLoop) -> Table:
 
 def _inputs(place: Place, decided: DecidedLoop) -> Table:
     """List what the loop file says, as it says it, one row a line of a section."""
-    columns = (Column("Input"), Column("As written"), Column("File and line"))
+    columns = (Column("Input"), Column("As written", quoted=True), Column("File and line"))
     grouped: dict[tuple[Path, str, int], list[tuple[Path, str]]] = {}
     for path, text, span in inputs_of(decided):
         grouped.setdefault((path[:-1], span.file, span.line), []).append((path, text))

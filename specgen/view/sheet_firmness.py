@@ -4,7 +4,7 @@ from math import isfinite
 
 from specgen.design.types import DecidedLoop, Firm
 from specgen.view.cells import DASH, says, word
-from specgen.view.firmness_drawing import firmness_drawing
+from specgen.view.firmness_drawing import declared, firmness_drawing
 from specgen.view.shapes import Cell, Column, Row, Section, Sentence, Shape, Table
 from specgen.view.writer import Writer
 
@@ -38,7 +38,7 @@ def _row(writer: Writer, firm: Firm) -> Row:
     below, above = _end(writer, firm, firm.below), _end(writer, firm, firm.above)
     to_below = word(firm.below_to) if firm.below_to else DASH
     to_above = word(firm.above_to) if firm.above_to else DASH
-    return Row((word(firm.words), word(firm.text), below, to_below, above, to_above))
+    return Row((word(firm.words), word(declared(writer, firm)), below, to_below, above, to_above))
 
 
 def _end(writer: Writer, firm: Firm, value: float | None) -> Cell:

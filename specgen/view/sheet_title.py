@@ -2,6 +2,7 @@
 
 from math import isfinite
 
+from specgen.core.quantity import Range
 from specgen.design.types import DecidedLoop
 from specgen.sizing.candidate import Unsized
 from specgen.sizing.settings import ContinuousSettings, OnOffSettings, ProportionedSettings, ThreePointSettings
@@ -77,13 +78,16 @@ def _held(decided: DecidedLoop, short: Summary, writer: Writer) -> str:
     return f"expected to hold {value} within ±{leaves} of the ±{allowed} allowed, {included}"
 
 
-def kicker(decided: DecidedLoop) -> str:
+def kicker(decided: DecidedLoop, writer: Writer) -> str:
     """Say what the loop is for, where, and what it acts with."""
     loop = decided.loop
     element = loop.element
     facts = [capital(element.kind.replace("_", " "))]
     for name in ("power", "current", "capacity", "voltage"):
-        text = getattr(getattr(element, name, None), "text", "")
+        value = getattr(element, name, None)
+        text = getattr(value, "text", "")
+        if isinstance(value, Range) and name == "power" and not decided.traits.electric_heat and value.low == value.high:
+            text = writer.say(value.low, "motor_power")
         if text:
             facts.append(text)
     phases = getattr(element, "phases", None)

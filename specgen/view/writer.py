@@ -4,22 +4,14 @@ import re
 from dataclasses import dataclass
 from math import ceil, floor, inf, isfinite, log10
 
+from specgen.core.printed import SYSTEMS, SystemName, own_unit, system_named
 from specgen.core.quantity import Range, Unit
 from specgen.core.say import THIN, Phrasing, Said, Words, digits, join, to_step
 from specgen.design.types import DecidedLoop
 from specgen.model.panel import Panel
 
-CELSIUS = Phrasing(Unit("degC"), Unit("K"))
-FAHRENHEIT = Phrasing(Unit("degF", 1.8, 32.0), Unit("degF", 1.8))
-_PRINTED = {"degC": "°C", "degF": "°F", "percent": "%", "ohm": "\u03a9", "m3/h": "m³/h"}
-# below the first number a quantity is written in the smaller unit
-_SMALL = {
-    "area": (1e-3, 1e6, "mm²"),
-    "current": (0.1, 1e3, "mA"),
-    "resistance": (0.1, 1e3, "m\u03a9"),
-    "voltage": (0.1, 1e3, "mV"),
-    "length": (0.1, 1e3, "mm"),
-}
+CELSIUS, KELVIN = Unit("degC"), Unit("K")
+_PRINTED = {"degC": "°C", "degF": "°F", "percent": "%", "ohm": "\u03a9", "m3/h": "m³/h", "inch": "in"}
 _BEFORE_WORDS = re.compile(f"{THIN}(?=(?:percent|years?|days|an? [hy]|operations))")
 _IN_WORDS = frozenset({"time", "years", "per_hour", "per_year", "operations"})
 KILO = 1e3
@@ -212,9 +204,9 @@ class Writer:
             return join(digits(value / self.phrasing.change.scale, significant), f"1/{self.change_unit}")
         if dimension == "current" and abs(value) >= KILO:
             return join(digits(value / KILO, significant), "kA")
-        if dimension in _SMALL and 0 < abs(value) < _SMALL[dimension][0]:
-            _, scale, unit = _SMALL[dimension]
-            return join(digits(value * scale, significant), unit)
+        small = SYSTEMS[self.phrasing.system].small.get(dimension)
+        if small is not None and 0 < abs(value) < small[0]:
+            return join(digits(value * small[1].scale, significant), small[1].symbol)
         said = self.phrasing.say(Said(value, dimension), significant)
         return _BEFORE_WORDS.sub("\u00a0", said) if dimension in _IN_WORDS else said
 
@@ -248,13 +240,21 @@ def step_for(tolerance: float) -> float:
 
 def panel_phrasing(panel: Panel | None) -> Phrasing:
     """Return what writes the panel's numbers, in the units it asks its pages to show."""
-    return FAHRENHEIT if panel is not None and panel.show == "us" else CELSIUS
+    return phrasing_in(CELSIUS, KELVIN, system_of(panel))
 
 
-def writer_for(decided: DecidedLoop, show: str = "si") -> Writer:
-    """Return the writer of a loop, in the units the panel asks its pages to show."""
-    phrasing = decided.phrasing
-    if show == "us" and phrasing.value.symbol == "degC":
-        phrasing = FAHRENHEIT
+def system_of(panel: Panel | None) -> SystemName:
+    """Return the system of units that the pages of a panel print in."""
+    return "si" if panel is None else system_named(panel.show, panel.code_basis)
+
+
+def phrasing_in(value: Unit, change: Unit, system: SystemName) -> Phrasing:
+    """Return what writes numbers of a loop's own units in those of a system."""
+    return Phrasing(own_unit(value, system), own_unit(change, system, change=True), system)
+
+
+def writer_for(decided: DecidedLoop, system: SystemName = "si") -> Writer:
+    """Return the writer of a loop, in the units of a system."""
+    phrasing = phrasing_in(decided.loop.unit, decided.loop.difference_unit, system)
     tolerance = decided.loop.need.tolerance
     return Writer(phrasing, step_for(min(float(tolerance.above), float(tolerance.below)) * phrasing.change.scale))

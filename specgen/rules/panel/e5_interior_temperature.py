@@ -36,7 +36,7 @@ def examine(case: PanelCase) -> Finding:
         words["needed"] = Said(heat.surface_needed, "area")
     if heat.air is not None:
         ways.append("{air} of air from outside")
-        words["air"] = Said(heat.air, "flow_volume")
+        words["air"] = Said(heat.air, "air_flow")
     return rule.judge(holds=False, margin=margin, text=text + ": it takes " + ", or ".join(ways) + ".", **words)
 
 
