@@ -10,7 +10,7 @@ from specgen.view.words import counted
 
 CIRCUITS = {
     "power": "power", "switching": "power", "control": "control", "demand": "demand for heat", "chain": "safety chain",
-    "valves": "burner", "output": "output", "sensor": "sensor", "limiter": "sensor of the limiter",
+    "valves": "burner", "alarm": "alarm", "output": "output", "sensor": "sensor", "limiter": "sensor of the limiter",
 }  # fmt: skip
 _NOTES = (
     Note("Numbers", "count within a loop: power first, then control, output and sensors. No other loop renumbers them."),

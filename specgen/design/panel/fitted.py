@@ -39,15 +39,17 @@ def suppressors_fitted(decided: DecidedLoop, switch: DeviceChoice | None) -> tup
                     fit(f"{load_letter(decided)}1", part)
                 continue
             name = part.across.removeprefix(COIL)
-            target = next((item for item in targets if item[1] == name), targets[0] if targets else ("Q1", name))
-            if target in targets:
-                targets.remove(target)
+            target = next((item for item in targets if item[1] == name), None)
+            if target is None:
+                # of a relay that only a contactor of its own output would need
+                continue
+            targets.remove(target)
             fit(target[0], part)
             if pair and target[0] == "K1":
                 fit("K2", part)
     for part in switch.suppressors if switch is not None else ():
-        # the load, where it is a coil, has its own already
-        if part.across != "the element":
+        # the chain drives its contactor itself: no relay stands between; a load that is a coil has its own already
+        if switch is not None and part.across == f"{COIL}{switch.name}":
             fit("Q2", part)
     return tuple(made)
 

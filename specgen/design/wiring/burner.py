@@ -1,10 +1,11 @@
 """Around a burner control: the chain into its safety input, the demand for heat, and the valves it opens itself."""
 
+from specgen.design.panel.fitted import suppressors_fitted
 from specgen.design.wiring.chain import chain_steps
 from specgen.design.wiring.draft import Draft
 from specgen.design.wiring.facts import Facts
 from specgen.design.wiring.load import load_element
-from specgen.design.wiring.power import draws_power, switch_element
+from specgen.design.wiring.power import draws_power, suppressor, switch_element
 from specgen.design.wiring.types import Joint, Path, Step
 
 TOP, OUT, CHAIN, BACK, END = 0, 1, 2, 70, 80
@@ -50,4 +51,9 @@ def _demand(draft: Draft, facts: Facts, own: str) -> None:
             Step(load, "burner", "stage 2", "", END),
         ]  # fmt: skip
         paths.append(draft.path(second, Joint(0, CHAIN)))
-    draft.circuit("demand", "Demand for heat", paths)
+    across = [item for item in suppressors_fitted(facts.decided, facts.switch) if item.across == f"{facts.load}1"]
+    if across:
+        # the control's own return comes to the panel for the suppressor alone
+        paths.append(draft.path([Step(own, "box", "", "N", TOP), draft.terminal(BACK, "above")], base="N of -K9"))
+    last = Joint(len(paths) - 1, BACK)
+    draft.circuit("demand", "Demand for heat", paths, [suppressor(draft, facts, item, Joint(0, BACK), last) for item in across])

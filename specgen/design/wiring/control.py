@@ -7,8 +7,8 @@ from specgen.design.wiring.chain import chain_steps
 from specgen.design.wiring.draft import Draft
 from specgen.design.wiring.facts import Facts
 from specgen.design.wiring.load import load_element
-from specgen.design.wiring.power import suppressor_symbol, switch_element
-from specgen.design.wiring.types import Across, Joint, Path, Rail, Step
+from specgen.design.wiring.power import suppressor, switch_element
+from specgen.design.wiring.types import Joint, Path, Rail, Step
 
 END = 80
 """The row in which every control path ends: coils, inputs and supplies stand side by side."""
@@ -42,17 +42,21 @@ class _Control:
         self._valve_drive()
         self._limiter()
         self._locks()
-        across = []
-        for item in suppressors_fitted(facts.decided, facts.switch):
-            if item.across in self.coils:
-                name, part = draft.element(facts.own(item.product), item.part.part), item.part.part
-                across.append(Across(name, suppressor_symbol(part), Joint(self.coils[item.across], END)))
+        fitted = [item for item in suppressors_fitted(facts.decided, facts.switch) if item.across in self.coils]
+        across = [suppressor(draft, facts, item, Joint(self.coils[item.across], END)) for item in fitted]
         draft.circuit("control", "Control", self.paths, across, supply)
+        _alarm(draft, facts)
 
     def _add(self, steps: Sequence[Step], feed: Rail | Joint | None = None) -> int:
         back = self.facts.ground(bus=True) if steps[-1].leave else None
         self.paths.append(self.draft.path(steps, feed or self.facts.control(bus=True), back))
         return len(self.paths) - 1
+
+    def _earth(self, product: str) -> None:
+        """Say that a control supply above extra-low voltage asks for protective earth at what it feeds in the field."""
+        if self.facts.touchable:
+            volts = self.facts.control_names[0]
+            self.draft.leave_open(f"-{product} stands in the field on {volts}: the machine's own conductor earths its exposed metal.")
 
     def _coil(self, product: str, before: Sequence[Step], feed: Rail | Joint | None = None, symbol: str = "coil") -> None:
         pins = ("A1", "A2")
@@ -75,6 +79,7 @@ class _Control:
             valve = draft.element(facts.own("Q2"), "safety shut-off valve")
             steps = [*chain_steps(draft, facts, 0), draft.terminal(END - 1, "below"), Step(valve, "valve_coil", "A1", "A2", END)]
             self._add([*steps, draft.terminal(AFTER, "above")])
+            self._earth("Q2")
         elif end == "M1":
             self._field_box("EN" if not facts.decided.traits.valve else "L+", chain_steps(draft, facts, 0))
         elif end == "Q1" and facts.kind == "power_controller":
@@ -87,6 +92,7 @@ class _Control:
         text = "enable" if pin == "EN" else "supply"
         steps = [*before, self.draft.terminal(END - 1, "below"), Step(name, "box", pin, "M", END, text=text)]
         self._add([*steps, self.draft.terminal(AFTER, "above")])
+        self._earth(f"{self.facts.load}1")
 
     def _valve_drive(self) -> None:
         traits = self.facts.decided.traits
@@ -142,7 +148,7 @@ class _Control:
         self._coil(product, [contact], place, symbol)
 
     def _limiter(self) -> None:
-        """Draw the supply and the reset of the limiter, and the alarm that depends on neither of them."""
+        """Draw the supply and the reset of the limiter."""
         draft, facts = self.draft, self.facts
         safety = facts.decided.safety
         if safety is None:
@@ -155,13 +161,6 @@ class _Control:
             if "S2" in products:
                 button = draft.element(facts.own("S2"), "reset of the limiter")
                 self._add([Step(button, "push_button", "13", "14", 0), Step(name, "box", "R", "", END, text="reset")])
-        if safety.alarm is not None:
-            value = safety.alarm.set
-            figures = (("at", value, "value"),) if value is not None else ()
-            sensor = draft.element(facts.own("B3"), f"independent alarm, {safety.alarm.side}", *figures)
-            lamp = draft.element(facts.own("P1"), "alarm lamp and horn")
-            steps = [draft.terminal(0, "below"), Step(sensor, "sensing_contact", "1", "2", 1), draft.terminal(2, "above")]
-            self._add([*steps, Step(lamp, "alarm", "1", "2", END)])
 
     def _locks(self) -> None:
         """Draw the relay whose contacts stop the loops that must never be on together with this one."""
@@ -176,3 +175,18 @@ class _Control:
         controller = draft.element(facts.own("A1"), "controller")
         draft.leave_open("-K8 is driven by a further relay output of the controller that is on while this loop's output is.")
         self._coil("K8", [Step(controller, "output_contact", "O9.1", "O9.2", 0)])
+
+
+def _alarm(draft: Draft, facts: Facts) -> None:
+    """Draw the alarm that depends neither on the loop nor on its limiter."""
+    alarm = facts.decided.safety.alarm if facts.decided.safety is not None else None
+    if alarm is None:
+        return
+    figures = (("at", alarm.set, "value"),) if alarm.set is not None else ()
+    sensor = draft.element(facts.own("B3"), f"independent alarm, {alarm.side}", *figures)
+    lamp = draft.element(facts.own("P1"), "alarm lamp and horn")
+    steps = [
+        draft.terminal(0, "below"), Step(sensor, "sensing_contact", "1", "2", 1), draft.terminal(2, "above"),
+        Step(lamp, "alarm", "1", "2", END),
+    ]  # fmt: skip
+    draft.circuit("alarm", "Alarm", [draft.path(steps, facts.control(), facts.ground())])

@@ -19,7 +19,7 @@ from specgen.design.wiring.types import (
     Wiring,
 )
 
-_DRAWN = ("switching", "power", "demand", "output", "sensor", "limiter", "control", "chain", "valves")
+_DRAWN = ("switching", "power", "demand", "output", "sensor", "limiter", "alarm", "control", "chain", "valves")
 
 
 class Draft:

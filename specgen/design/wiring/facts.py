@@ -19,6 +19,8 @@ from specgen.sizing.connection import connect, connect_coil
 from specgen.sizing.device import DeviceChoice
 from specgen.sizing.feeder import Branch, Feeder
 
+HIGHEST_ALTERNATING, HIGHEST_DIRECT = 50.0, 120.0  # V, of extra-low voltage
+
 
 @dataclass(frozen=True, slots=True)
 class Facts:
@@ -108,6 +110,17 @@ class Facts:
         if self.feeder is not None:
             return self.feeder.load.connection.way == "control"
         return self.place[:1] == (self.control_names[0],)
+
+    @property
+    def touchable(self) -> bool:
+        """Tell whether the control supply lies above extra-low voltage: 50 V a.c., 120 V d.c. (IEC 61140, from memory)."""
+        supply = self.panel.control_supply
+        return float(supply.voltage) > (HIGHEST_DIRECT if supply.kind == "dc" else HIGHEST_ALTERNATING)
+
+    @property
+    def earthed(self) -> bool:
+        """Tell whether the load takes protective earth."""
+        return not self.on_control or self.touchable
 
     @property
     def control_names(self) -> tuple[str, str]:

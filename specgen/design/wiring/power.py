@@ -2,7 +2,7 @@
 
 from collections.abc import Sequence
 
-from specgen.design.panel.fitted import suppressors_fitted
+from specgen.design.panel.fitted import Fitted, suppressors_fitted
 from specgen.design.panel.schedules import numbered
 from specgen.design.wiring.chain import chain_steps
 from specgen.design.wiring.draft import Draft, behind
@@ -134,7 +134,7 @@ def _branch(draft: Draft, facts: Facts, number: int, rails: Sequence[Rail], retu
         paths.append(draft.path(steps, facts.rail(conductor)))
     across = _across_load(draft, facts) if len(paths) == 2 else []  # noqa: PLR2004  there and back
     _second_stage(draft, facts, paths, load, drawn)
-    if not facts.on_control:
+    if facts.earthed:
         earth = [draft.terminal(X1, "below"), Step(load, drawn, "PE", "", LOAD)]
         paths.append(draft.path(earth, facts.rail("PE")))
     words = "Power" if len(facts.branches) < 2 else f"Power, circuit {number + 1}"  # noqa: PLR2004  the first of several
@@ -143,11 +143,14 @@ def _branch(draft: Draft, facts: Facts, number: int, rails: Sequence[Rail], retu
 
 def _across_load(draft: Draft, facts: Facts) -> list[Across]:
     target = f"{facts.load}1"
-    return [
-        Across(draft.element(facts.own(item.product), item.part.part), suppressor_symbol(item.part.part), Joint(0, X1), Joint(1, X1))
-        for item in suppressors_fitted(facts.decided, facts.switch)
-        if item.across == target
-    ]
+    fitted = [item for item in suppressors_fitted(facts.decided, facts.switch) if item.across == target]
+    return [suppressor(draft, facts, item, Joint(0, X1), Joint(1, X1)) for item in fitted]
+
+
+def suppressor(draft: Draft, facts: Facts, item: Fitted, first: Joint, last: Joint | None = None) -> Across:
+    """Enter a suppressor and lay it across a coil, or between two conductors."""
+    name = draft.element(facts.own(item.product), item.part.part)
+    return Across(name, suppressor_symbol(item.part.part), first, last)
 
 
 def suppressor_symbol(part: str) -> str:

@@ -86,7 +86,7 @@ def sensors(draft: Draft, facts: Facts) -> None:
     if safety is not None and safety.limiter is not None:
         limiter = facts.own("F2")
         words = safety.limiter.sensor
-        own = draft.element(facts.own("B2"), f"sensor of the limiter, {words}")
+        own = draft.element(facts.own("B2"), f"sensor of the limiter, {words.replace('pt', 'Pt').replace('ntc', 'thermistor')}")
         measured = words.partition(" ")[0]
         _sensor(draft, facts, ("limiter", "Sensor of the limiter"), (own, measured, _THREE if measured.startswith("pt") else 2),
                 (limiter, "input"))  # fmt: skip
@@ -105,7 +105,7 @@ def sensor_words(sensor: Sensor) -> str:
     if isinstance(sensor, Transmitter):
         return f"{said}, {sensor.signal}" if sensor.signal else said
     if isinstance(sensor, Thermistor):
-        return said
+        return "thermistor"
     return said.replace("pt", "Pt")
 
 
@@ -149,5 +149,5 @@ def _transmitter(draft: Draft, facts: Facts, circuit: tuple[str, str], name: str
     else:
         back = facts.ground() if direct else None
         steps = [pin("I1−")] if direct else [pin("I1−"), Step(reader[0], "jumper", "T−", "", X1)]
-        paths.append(draft.path(steps, None, back, base=f"{own} signal −"))
+        paths.append(draft.path(steps, None, back, base=f"{own} −"))
     draft.circuit(*circuit, [*paths, _shield(draft, facts, name)], shielded=SHIELD)

@@ -5,8 +5,8 @@ from specgen.design.wiring.chain import chain_steps
 from specgen.design.wiring.draft import Draft
 from specgen.design.wiring.facts import Facts
 from specgen.design.wiring.load import load_element, load_symbol
-from specgen.design.wiring.power import CHAIN, LOAD, PLAIN, SWITCH, X1, F, protection, suppressor_symbol, switch_element
-from specgen.design.wiring.types import Across, Joint, Step
+from specgen.design.wiring.power import CHAIN, LOAD, PLAIN, SWITCH, X1, F, protection, suppressor, switch_element
+from specgen.design.wiring.types import Joint, Step
 
 LOCK = SWITCH - 1
 
@@ -40,11 +40,8 @@ def travel(draft: Draft, facts: Facts) -> None:
     common = conductors[-1]
     paths.append(draft.path([draft.terminal(X1, "below"), Step(motor, drawn, "common", "", LOAD)], facts.rail(common)))
     fitted = [item for item in suppressors_fitted(facts.decided, facts.switch) if item.across == f"{facts.load}1"]
-    across = [
-        Across(draft.element(facts.own(item.product), item.part.part), suppressor_symbol(item.part.part), Joint(at, X1), Joint(2, X1))
-        for at, item in enumerate(fitted)
-    ]
-    if not facts.on_control:
+    across = [suppressor(draft, facts, item, Joint(at, X1), Joint(2, X1)) for at, item in enumerate(fitted)]
+    if facts.earthed:
         paths.append(draft.path([draft.terminal(X1, "below"), Step(motor, drawn, "PE", "", LOAD)], facts.rail("PE")))
     if facts.own_relay:
         draft.leave_open(

@@ -85,7 +85,7 @@ class _Pen:
 
     def dot(self, x: float, y: float) -> None:
         """Mark a joint."""
-        self.dots.append(p(x - 2.2, y, "a2.2 2.2 0 1 0 4.4 0a2.2 2.2 0 1 0 -4.4 0"))
+        self.dots.append(p(x - 2, y, "a2 2 0 1 0 4 0 2 2 0 1 0-4 0"))
 
 
 @dataclass(slots=True)
@@ -236,7 +236,7 @@ class _Circuit:
         strokes = "".join(p(x + dx, centre + dy, rest) for dx, dy, rest in symbol.strokes)
         dashed = "".join(p(x + dx, centre + dy, rest) for dx, dy, rest in symbol.dashed)
         if step.symbol == TERMINAL:
-            label = Label("pin", n(x + symbol.right + 4), n(centre + 3.6), step.enter)
+            label = Label("", n(x + symbol.right + 4), n(centre + 3.6), step.enter)
             self.pen.add(step.top, strokes, dashed, [label])
             return
         labels = [Label("letter", n(x + dx), n(centre + dy), text) for dx, dy, text in ([symbol.letter] if symbol.letter else [])]
@@ -252,7 +252,7 @@ class _Circuit:
             if boxed:
                 labels += _pins(step, self.x(at), centre, mark.half, boxed=True)
             else:
-                labels.append(Label("pin", n(self.x(at) + 4), n(centre - mark.half + 3), step.enter))
+                labels.append(Label("", n(self.x(at) + 4), n(centre - mark.half + 3), step.enter))
         self.pen.add(mark.element.designation, "".join(drawn.strokes), "".join(drawn.dashed), labels)
 
     def _across(self, item: Across, number: int) -> None:
@@ -287,7 +287,7 @@ _LYING = {
 def _pins(step: Step, x: float, centre: float, half: float, *, boxed: bool) -> Iterator[Label]:
     """Say the connection points from ``x`` on; those of a box in its middle."""
     enter, leave = (centre - half + 11, centre + half - 4) if boxed else (centre - half + 8, centre + half - 1)
-    place, kind = x, "pin-middle" if boxed else "pin"
+    place, kind = x, "pin-middle" if boxed else ""
     if step.enter:
         yield Label(kind, n(place), n(enter), step.enter)
     if step.leave:
