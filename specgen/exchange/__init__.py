@@ -1,1 +1,1 @@
-
+"""Files that come and go: recordings to identify, exports."""

@@ -41,7 +41,7 @@ def remembered(function: Callable[Concatenate[F, P], R]) -> Callable[Concatenate
     """
     memory: OrderedDict[object, tuple[F, tuple[object, ...], R]] = OrderedDict()
 
-    def asked(first: F, *args: P.args, **kwargs: P.kwargs) -> R:
+    def asked(first: F, /, *args: P.args, **kwargs: P.kwargs) -> R:
         key = (id(first), *(id(arg) if isinstance(arg, Box) else arg for arg in args), *kwargs.items())
         known = memory.get(key)
         if known is not None:

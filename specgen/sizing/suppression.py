@@ -57,7 +57,8 @@ def suppressors(drawn: Iterable[Drawn], load: LoadCurrent, panel: Panel) -> tupl
     Common practice, no source.
     """
     control, frequency = panel.control_supply, float(panel.supply.frequency)
-    found = [_across(coil.what, control.kind, float(control.voltage), frequency, coil.hold) for coil in drawn if coil.what.startswith(COILS)]
+    coils = [coil for coil in drawn if coil.what.startswith(COILS)]
+    found = [_across(coil.what, control.kind, float(control.voltage), frequency, coil.hold) for coil in coils]
     if load.category in COIL_SHARES:
         found.append(_across("the element", load.connection.kind, load.connection.voltage, frequency, load.current))
     return tuple(found)
