@@ -88,7 +88,7 @@ def inside(spots: Sequence[Spot], low: Spot, high: Spot) -> list[list[Spot]]:
     pieces: list[list[Spot]] = []
     piece: list[Spot] = []
     for a, b in pairwise(spots):
-        cut = _clipped(a, b, low, high)
+        cut = (a, b) if _holds(a, low, high) and _holds(b, low, high) else _clipped(a, b, low, high)
         if cut is None:
             piece = []
             continue
@@ -97,6 +97,10 @@ def inside(spots: Sequence[Spot], low: Spot, high: Spot) -> list[list[Spot]]:
             pieces.append(piece)
         piece.append(cut[1])
     return pieces
+
+
+def _holds(spot: Spot, low: Spot, high: Spot) -> bool:
+    return low[0] <= spot[0] <= high[0] and low[1] <= spot[1] <= high[1]
 
 
 def _clipped(a: Spot, b: Spot, low: Spot, high: Spot) -> tuple[Spot, Spot] | None:
@@ -117,6 +121,18 @@ def _clipped(a: Spot, b: Spot, low: Spot, high: Spot) -> tuple[Spot, Spot] | Non
         return None
     made = [(a[0] + t * (b[0] - a[0]), a[1] + t * (b[1] - a[1])) for t in (first, last)]
     return made[0], made[1]
+
+
+def _crosses(line: Sequence[Spot], low: Spot, high: Spot) -> bool:
+    """Tell whether a curve that runs to the right enters a window."""
+    for a, b in pairwise(line):
+        if b[0] < low[0]:
+            continue
+        if a[0] > high[0]:
+            return False
+        if min(a[1], b[1]) <= high[1] and max(a[1], b[1]) >= low[1] and _clipped(a, b, low, high) is not None:
+            return True
+    return False
 
 
 @dataclass(slots=True)
@@ -192,12 +208,7 @@ class Panels:
         bad = 100.0 * sum(overlap((left, top, right, bottom), rectangle(other)) for other in self.labels)
         bad += 100.0 * (left < LEFT + 2) + 50.0 * (right > RIGHT) + 100.0 * (right > WIDTH) + 100.0 * (top < 0)
         bad += 4.0 * sum(top < y < bottom for y in self.levels)
-        for line in self.curves:
-            for a, b in pairwise(line):
-                if _clipped(a, b, (left - 1, top - 1), (right + 1, bottom + 1)) is not None:
-                    bad += 10.0
-                    break
-        return bad
+        return bad + 10.0 * sum(_crosses(line, (left - 1, top - 1), (right + 1, bottom + 1)) for line in self.curves)
 
 
 def tick_texts(at: Sequence[float]) -> list[str]:

@@ -14,6 +14,7 @@ from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 from math import isfinite, log10
 
+from specgen.core.say import MINUS
 from specgen.design.trade_off import TradeOff
 from specgen.design.trade_point import TradePoint
 from specgen.view.axes import Scale, place, ticks
@@ -74,13 +75,18 @@ class Trade:
         """Return a setting in the unit of the axis."""
         return self.writer.shown_change(at) if self.differential else at
 
+    def _margin(self, point: TradePoint) -> str:
+        """Write what is left of the tolerance, below nothing wherever the excursion is written beyond it."""
+        left = self.allowed - self.excursion(point)
+        return self.writer.excursion(left) if left >= 0 else f"{MINUS}{self.writer.excursion(-left, 0.0)}"
+
     def said(self, point: TradePoint) -> dict[str, str]:
         """Write every reading of a point."""
         writer = self.writer
         found = {
             self.it.setting: self.setting(point.at),
             "excursion": writer.excursion(self.excursion(point), self.allowed),
-            "margin": writer.excursion(self.allowed - self.excursion(point)),
+            "margin": self._margin(point),
             "swing": writer.fine_change(point.swing),
             "shortest pulse": writer.time(point.pulse),
             "operations an hour": writer.bare(point.operations_per_hour),

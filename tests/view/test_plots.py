@@ -173,6 +173,8 @@ def test_the_data_of_the_slider_are_the_points_of_the_table(sheets):
             assert point["at"] == pytest.approx(computed.at, rel=1e-8)
             assert point["said"][data["setting"]] == row.cells[0].text
             assert point["said"]["excursion"] == row.cells[1].text
+            over = computed.above > trade.allowed_above and computed.below > trade.allowed_below
+            assert point["said"]["margin"].startswith("\u2212") or not over
         xs = [point["x"] for point in data["points"]]
         assert all(a < b for a, b in pairwise(xs))
         chosen = data["points"][data["chosen"]]
