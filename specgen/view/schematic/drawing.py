@@ -1,7 +1,7 @@
 """The schematic of a loop as a drawing: circuits put side by side, every element a group with its designation."""
 
-from collections.abc import Iterator
-from dataclasses import dataclass, field, replace
+from collections.abc import Iterable, Iterator, Mapping
+from dataclasses import dataclass, field
 from math import ceil
 
 from specgen.design.wiring.types import TERMINAL, Across, Joint, Path, Rail, Step, Wiring
@@ -60,28 +60,34 @@ def schematic(wiring: Wiring, writer: Writer, notes: tuple[Note, ...] = ()) -> D
         height=n(height + 2 * EDGE),
         paths=(Stroke("wire", "".join(pen.wires)), Stroke("dot", "".join(pen.dots)), Stroke("frame", "".join(pen.dashes))),
         labels=tuple(pen.labels),
-        groups=tuple(replace(group, potential=carries.get(group.designation, "")) for group in pen.groups.values()),
+        groups=tuple(pen.groups(carries)),
         notes=notes,
         kind="schematic",
     )
 
 
 class _Pen:
-    """Gathers strokes, words and the groups of the elements."""
+    """Gathers strokes, words and what belongs to each element."""
 
     def __init__(self) -> None:
         self.wires: list[str] = []
         self.dots: list[str] = []
         self.dashes: list[str] = []
         self.labels: list[Label] = []
-        self.groups: dict[str, Group] = {}
+        self._strokes: dict[str, tuple[list[str], list[str], list[Label]]] = {}
 
-    def add(self, designation: str, strokes: str, dashed: str, labels: list[Label]) -> None:
+    def add(self, designation: str, strokes: str, dashed: str, labels: Iterable[Label]) -> None:
         """Add symbols to an element's group."""
-        before = self.groups.get(designation)
-        old = {path.kind: path.d for path in before.paths} if before else {}
-        paths = tuple(Stroke(kind, d) for kind, new in (("symbol", strokes), ("link", dashed)) if (d := old.get(kind, "") + new))
-        self.groups[designation] = Group(identifier(designation), designation, paths, (*(before.labels if before else ()), *labels))
+        symbols, links, words = self._strokes.setdefault(designation, ([], [], []))
+        symbols.append(strokes)
+        links.append(dashed)
+        words += labels
+
+    def groups(self, carries: Mapping[str, str]) -> Iterator[Group]:
+        """Yield the group of every element; ``carries`` are the potentials of the terminals."""
+        for designation, (symbols, links, words) in self._strokes.items():
+            paths = tuple(Stroke(kind, d) for kind, parts in (("symbol", symbols), ("link", links)) if (d := "".join(parts)))
+            yield Group(identifier(designation), designation, paths, tuple(words), carries.get(designation, ""))
 
     def dot(self, x: float, y: float) -> None:
         """Mark a joint."""

@@ -40,7 +40,11 @@ class Line:
 
 @dataclass(slots=True)
 class Mark:
-    """Symbols of one element in one row: the paths they stand in, and the lines to the left of the first."""
+    """Symbols of one element in one row: the paths they stand in, and the lines to the left of the first.
+
+    ``spans`` tells that it is drawn over its paths as one; ``half`` is half its height, ``left`` and ``right`` how far it reaches beyond
+    its first and last path.
+    """
 
     element: Element
     symbol: str
@@ -49,33 +53,24 @@ class Mark:
     lines: tuple[Line, ...] = ()
     below: str = ""
     numbers: list[int] = field(default_factory=list)
+    spans: bool = False
+    half: float = 0.0
+    left: float = 0.0
+    right: float = 0.0
 
-    @property
-    def spans(self) -> bool:
-        """Tell whether it is drawn over its paths as one."""
-        if self.symbol not in SPANS:
-            return False
-        return len(self.steps) > 1 or self.symbol not in SYMBOLS
+    def measure(self) -> None:
+        """Take the symbol's size, once every path it stands in is known."""
+        self.spans = self.symbol in SPANS and (len(self.steps) > 1 or self.symbol not in SYMBOLS)
+        if self.spans:
+            _, self.half, self.left = SPANS[self.symbol]
+            self.right = self.left
+        else:
+            self.half, self.left, self.right = self.single.half, self.single.left, self.single.right
 
     @property
     def single(self) -> Symbol:
         """Return the symbol of one path."""
         return SYMBOLS[self.symbol]
-
-    @property
-    def half(self) -> float:
-        """Return half its height."""
-        return SPANS[self.symbol][1] if self.spans else self.single.half
-
-    @property
-    def left(self) -> float:
-        """Return how far it reaches to the left of its first path."""
-        return SPANS[self.symbol][2] if self.spans else self.single.left
-
-    @property
-    def right(self) -> float:
-        """Return how far it reaches to the right of its last path."""
-        return SPANS[self.symbol][2] if self.spans else self.single.right
 
     @property
     def beside(self) -> float:
@@ -134,6 +129,7 @@ class Marking:
         return mark
 
     def _write(self, mark: Mark) -> None:
+        mark.measure()
         element = mark.element
         shared = "" if element.designation.startswith(self._own) else element.designation
         lines = [Line("name", shared or element.product)]
