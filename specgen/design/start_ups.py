@@ -25,6 +25,7 @@ from specgen.sizing.starting_values import hardest_case
 
 CYCLES = 3  # of an on-off loop after the first rise
 RISING = 60
+FADED = 4.0  # time constants after which a rise is as good as settled
 NOWHERE = Unsized("this form of plant does not say where the loop rests")
 
 
@@ -116,11 +117,13 @@ def extra_delay(case: Case) -> float:
 
 
 def _warm(box: Box, cold: FaultCase) -> Start:
-    """Return the first rise with every body counted, up to the band."""
+    """Return the first rise with every body counted, up to the band; towards where it settles if that is short of the band."""
     start, load, plant = _coldest(box, cold.point)
-    times = (*(cold.value * index / RISING for index in range(RISING)), cold.value)
+    reaches = cold.value < inf
+    end = cold.value if reaches else FADED * plant.tau
+    times = (*(end * index / RISING for index in range(RISING)), end)
     course = StartCourse(times, rising(plant, start, load, times), ((0.0, 1.0),))
-    return Start(course, cold.text, None, 0.0, cold.value, every_body=True)
+    return Start(course, cold.text, None, 0.0, cold.value if reaches else None, every_body=True)
 
 
 def _coldest(box: Box, point: Point) -> tuple[float, float, Dynamics]:

@@ -191,6 +191,7 @@ def _caption(lively: Start, slow: Start | None) -> str:
     text = f"Start from rest, the true value{most}: {lively.case}{counted}."
     if slow is not None:
         text += f" Thin: the slowest case{', every body counted, at full output' if slow.every_body else ''}: {slow.case}."
+        text += "" if slow.in_band is not None else " It does not come into the band."
     return text
 
 

@@ -101,6 +101,15 @@ def test_a_start_enters_the_band_when_it_is_said_to_and_peaks_where_it_is_marked
                 assert max(start.course.values) + start.ripple == pytest.approx(start.highest, rel=0.02, abs=1e-3), loop.tag
 
 
+def test_a_coldest_case_that_full_output_does_not_bring_into_the_band_is_drawn_without_a_time():
+    """60 W/K from 65 degC down to 8 with 1 kW of load takes 4.4 kW, at 80 degC 5.3 kW; 5 kW at -10 % supply is 4.05 kW."""
+    loop = decide_text(SUDDEN.replace("power: 7.5 kW", "power: 5 kW"))
+    starts = start_ups(case_of(loop))
+    assert case_of(loop).settings.tuning.time_to_band is None
+    assert starts.slow.in_band is None
+    assert max(starts.slow.course.values) < -starts.band.below
+
+
 def test_loops_without_plant_or_rest_say_why(loops):
     assert all(found.because for loop in loops for found in (start_ups(case_of(loop)),) if isinstance(found, Unsized))
     text = SUDDEN.split("plant:", 1)[0] + "sensor:" + SUDDEN.split("sensor:", 1)[1]
