@@ -223,9 +223,9 @@ def _title(trade: Trade) -> str:
 
 def _caption(trade: Trade) -> str:
     if trade.differential:
-        return "What a wider differential costs the product and gains for what switches; thick where every rule allows it."
+        return "What a wider differential costs the product and gains for what switches; thick where the rules' window and the tolerance allow it."
     gains = "and gains for the contacts" if trade.it.choice.life is not None else "where nothing wears"
-    return f"What a longer cycle costs the product {gains}; thick where every rule allows it."
+    return f"What a longer cycle costs the product {gains}; thick where the rules' window and the tolerance allow it."
 
 
 def _held(trade: Trade) -> str:
