@@ -7,7 +7,7 @@ from specgen.design.wiring.chain import chain_steps
 from specgen.design.wiring.draft import Draft
 from specgen.design.wiring.facts import Facts
 from specgen.design.wiring.load import load_element
-from specgen.design.wiring.power import suppressor, switch_element
+from specgen.design.wiring.power import chain_switch, suppressor, switch_element
 from specgen.design.wiring.types import Joint, Path, Rail, Step
 
 END = 80
@@ -72,8 +72,7 @@ class _Control:
         if not facts.chain or facts.decided.traits.burner:
             return
         if end == "Q2" and facts.switches_in_panel:
-            draft.element(facts.own("Q2"), facts.switch.name if facts.switch is not None else "contactor of the interlock chain",
-                          unknown="" if facts.switch is not None else "not sized")  # fmt: skip
+            chain_switch(draft, facts)
             self._coil("Q2", chain_steps(draft, facts, 0))
         elif end == "Q2":
             valve = draft.element(facts.own("Q2"), "safety shut-off valve")

@@ -73,7 +73,7 @@ def _switching(draft: Draft, facts: Facts, at: int, count: int) -> list[Step]:
     if facts.device is not None and facts.device.isolator:
         made.append(Step(draft.element(facts.own("Q3"), f"isolates: {facts.device.isolator}"), "pole", *POLES[at], Q3))
     if facts.switches_in_panel:
-        made.append(Step(_chain_switch(draft, facts), "pole", *POLES[at], Q2))
+        made.append(Step(chain_switch(draft, facts), "pole", *POLES[at], Q2))
     if facts.own_relay and facts.chain_end == "K1" and at == 0:
         made += chain_steps(draft, facts, CHAIN)
     if facts.kind in _SWITCHES and at in _switched(facts, count):
@@ -89,9 +89,12 @@ def _switched(facts: Facts, count: int) -> tuple[int, ...]:
     return tuple(range(min(poles, count)))
 
 
-def _chain_switch(draft: Draft, facts: Facts) -> str:
-    what = facts.switch.name if facts.switch is not None else "contactor of the interlock chain"
-    return draft.element(facts.own("Q2"), what, unknown="" if facts.switch is not None else "not sized")
+def chain_switch(draft: Draft, facts: Facts) -> str:
+    """Enter the contactor of the interlock chain and return its designation."""
+    if facts.switch is not None:
+        return draft.element(facts.own("Q2"), facts.switch.name)
+    draft.leave_open("-Q2 is not sized: no listed contactor is rated for this load in its utilisation category.")
+    return draft.element(facts.own("Q2"), "contactor of the interlock chain", unknown="not sized")
 
 
 def switch_element(draft: Draft, facts: Facts) -> str:
