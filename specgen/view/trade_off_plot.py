@@ -26,6 +26,7 @@ from specgen.view.writer import Writer, inward, upward
 TOP, TALL, BETWEEN = 44.0, 92.0, 34.0
 HEADROOM = 1.12
 SEEN = 2.0  # how far beyond its limit a curve is followed, in limits
+_THICK = "thick where the rules' window and the tolerance allow it"
 SERIES_TICKS = (1.0, 2.0, 5.0, 10.0, 20.0, 60.0, 120.0, 300.0, 600.0, 1800.0)
 
 
@@ -223,9 +224,9 @@ def _title(trade: Trade) -> str:
 
 def _caption(trade: Trade) -> str:
     if trade.differential:
-        return "What a wider differential costs the product and gains for what switches; thick where the rules' window and the tolerance allow it."
+        return f"What a wider differential costs the product and gains for what switches; {_THICK}."
     gains = "and gains for the contacts" if trade.it.choice.life is not None else "where nothing wears"
-    return f"What a longer cycle costs the product {gains}; thick where the rules' window and the tolerance allow it."
+    return f"What a longer cycle costs the product {gains}; {_THICK}."
 
 
 def _held(trade: Trade) -> str:
