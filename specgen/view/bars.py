@@ -11,6 +11,7 @@ WIDTH = 640
 LEFT, RIGHT = 150.0, 560.0
 ROW, THICK = 25.0, 15.0
 LINE = 15.0  # between words that stand one above the other
+NOTHING = 1e-9  # an axis shorter than this shows nothing
 LETTER = 6.9  # a letter of the drawings' sans, on the wide side
 
 
@@ -70,7 +71,7 @@ def bar_drawing(chart: BarChart) -> Drawing:
     ends = [end for bar in chart.bars for end in (bar.start, bar.end)] + [limit.at for limit in chart.limits]
     ends += [at for at, _ in chart.ticks]
     low, high = min(0.0, *ends), max(0.0, *ends)
-    x = Scale(low, high if high > low else low + 1.0, chart.left, chart.right)
+    x = Scale(low, high if high - low > NOTHING else low + 1.0, chart.left, chart.right)
     top = 8.0 + LINE * len(chart.limits)
     bottom = top + ROW * len(chart.bars)
     boxes: list[Box] = []
@@ -145,7 +146,7 @@ def _axis(chart: BarChart, x: Scale, bottom: float, labels: list[Label]) -> list
 
 
 def _beside(at: float, y: float, text: str) -> Label:
-    """Write a limit's words on the side of its line where there is room."""
-    if at + LETTER * len(text) <= WIDTH:
-        return Label("plain", place(at), place(y), text)
-    return Label("end", place(at), place(y), text)
+    """Write a limit's words before its line, where no line of a larger limit crosses them; behind it where there is no room."""
+    if at - LETTER * len(text) >= 0:
+        return Label("end", place(at), place(y), text)
+    return Label("plain", place(at), place(y), text)

@@ -61,7 +61,7 @@ def conductors_table(dossier: Dossier, place: Place) -> Table:
     for row in panel.conductors if panel else ():
         rows.append(_row(writer, place, row, linked=row.loop != before))
         before = row.loop
-    return Table("", columns, tuple(rows), wide=True, empty="No loop is fed from this panel.")
+    return Table("", columns, tuple(rows), wide=True, whole=True, empty="No loop is fed from this panel.")
 
 
 def _row(writer: Writer, place: Place, row: ConductorRow, *, linked: bool) -> Row:
@@ -70,7 +70,7 @@ def _row(writer: Writer, place: Place, row: ConductorRow, *, linked: bool) -> Ro
             word(row.loop, place.sheet(row.loop, "hardware") if linked else ""),
             word(row.start),
             word(row.end),
-            word(row.designation) if row.designation else Cell("wiring inside", export=""),
+            word(row.designation) if row.designation else Cell("inside", export=""),
             word(size_of(writer, row.size, row.gauge)),
             word(size_of(writer, row.earth, row.gauge)),
             word(_method(row.method)),

@@ -45,7 +45,7 @@ def _lead(dossier: Dossier, place: Place, every: tuple[tuple[DecidedLoop, Firm],
     spans = (
         Span(f"{counts}; nearest is the {firm.words} of "),
         Span(loop.tag, place.sheet(loop.tag, "firmness")),
-        Span(f", declared as {declared(writer, firm)}, which at {at} makes it: {side[1]}."),
+        Span(f", declared as {declared(writer, firm)}; at {at}: {side[1]}."),
     )
     return Sentence(spans, lead=True)
 

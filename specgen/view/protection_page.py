@@ -103,8 +103,8 @@ def _row(writer: Writer, place: Place, row: ProtectionRow, capacity: float, serv
     setting = NO_NUMBER if row.setting is None else number(writer.bare(row.setting), row.setting)
     return Row(
         (
-            word(row.designation),
-            word(row.loop, place.sheet(row.loop, "hardware"), service),
+            word(row.designation, place.sheet(row.loop, "hardware")),
+            word(row.loop, aside=service),
             word(f"{KINDS[row.kind]}{curve}", aside=_range(writer, row)),
             number(writer.bare(row.design_current), row.design_current),
             number(writer.bare(row.rating, 4), row.rating),

@@ -96,7 +96,10 @@ class Row:
 
 @dataclass(frozen=True, slots=True)
 class Table:
-    """A table; ``wide`` ones run across the column of side notes. ``empty`` says so where there is no row."""
+    """A table; ``wide`` ones run across the column of side notes. ``empty`` says so where there is no row.
+
+    ``whole`` keeps each cell on one line: designations have hyphens, at which a line may break.
+    """
 
     shape: ClassVar[str] = "table"
     caption: str
@@ -105,6 +108,7 @@ class Table:
     wide: bool = False
     empty: str = ""
     notes: tuple[Note, ...] = ()
+    whole: bool = False
 
     @property
     def across(self) -> str:

@@ -191,8 +191,8 @@ def test_the_register_orders_the_inputs_of_all_loops(dossier, loop):
     ]
     said = "".join(span.text for span in page.lead.spans)
     assert said == (
-        "2 inputs of 3 would change a decision within a factor of ten; nearest is the dead time of TIC-2, declared as 40 s, "
-        "which at 44\u202fs makes it: time-proportioned."
+        "2 inputs of 3 would change a decision within a factor of ten; nearest is the dead time of TIC-2, declared as 40 s; "
+        "at 44\u202fs: time-proportioned."
     )
     assert [(item.label, item.spans[0].text) for item in blocks(page, List)[0].items] == [("TIC-1", "load")]
 
