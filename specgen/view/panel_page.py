@@ -10,7 +10,7 @@ from specgen.view.cells import says
 from specgen.view.dossier import Dossier
 from specgen.view.frame import Place, frame
 from specgen.view.grounds import grounds, in_order, sources
-from specgen.view.panel_rules import panel_writer
+from specgen.view.panel_rules import RULE_PAGES, holding, panel_writer
 from specgen.view.shapes import List, PageView, Section, Sentence, Shape
 from specgen.view.sheet_basis import figure_lines
 
@@ -26,8 +26,11 @@ def sections_of(parts: Parts) -> tuple[Section, ...]:
 
 
 def panel_page(dossier: Dossier, place: Place, title: str, kicker: str, parts: Parts, lead: Sentence | None = None) -> PageView:
-    """Build a page of the panel."""
-    return frame(dossier, place, title, sections_of(parts), kicker=kicker, lead=lead)
+    """Build a page of the panel; what of its rules holds the panel stands first."""
+    panel = dossier.design.panel_design
+    own = tuple(rule for rule, path in RULE_PAGES.items() if path == place.path)
+    notices = holding(dossier, place, panel, own) if panel is not None else ()
+    return frame(dossier, place, title, sections_of(parts), kicker=kicker, lead=lead, notices=notices)
 
 
 def unread_page(dossier: Dossier, place: Place, title: str) -> PageView:

@@ -1,14 +1,14 @@
 """What the rules of the panel as a whole found, and the page that each of them belongs to."""
 
-from collections.abc import Mapping
+from collections.abc import Collection, Mapping
 
 from specgen.design.panel.types import PanelDesign
 from specgen.view.basis_index import basis_index
 from specgen.view.cells import says
 from specgen.view.dossier import Dossier
 from specgen.view.frame import PAGE_ROWS, Place
-from specgen.view.grounds import grounds, in_order, sources
-from specgen.view.shapes import Item, List, Shape, Span
+from specgen.view.grounds import finding_text, grounds, in_order, sources
+from specgen.view.shapes import Item, List, Notice, Shape, Span
 from specgen.view.words import capital, with_stop
 from specgen.view.writer import Writer, panel_phrasing
 
@@ -32,7 +32,19 @@ def panel_blocks(dossier: Dossier, place: Place, panel: PanelDesign) -> tuple[Sh
     items = grounds(dossier, place, panel_writer(dossier), bore, basis_index(()))
     titles = {row.path: row.title for row in PAGE_ROWS}
     linked = tuple(_linked(place, item, titles) for item in items)
-    return (List(linked, numbered=True, empty="No rule of the panel bore.", notes=sources(bore)),)
+    return (*holding(dossier, place, panel), List(linked, numbered=True, empty="No rule of the panel bore.", notes=sources(bore)))
+
+
+def holding(dossier: Dossier, place: Place, panel: PanelDesign, codes: Collection[str] = tuple(RULE_PAGES)) -> tuple[Notice, ...]:
+    """Say which must-rules, of those named, hold the panel or leave it open, each in its own sentence; nothing where none does."""
+    writer = panel_writer(dossier)
+    found: list[Notice] = []
+    for outcome, kind, head in (("broken", "held", "The panel is held:"), ("unanswered", "open", "The panel is open:")):
+        reasons = [f for f in panel.findings if f.outcome == outcome and f.weight == "must" and f.rule in codes]
+        items = tuple(Item(says(finding_text(writer, f)), f.rule, place.rule(dossier, f.rule)) for f in reasons)
+        if items:
+            found.append(Notice(kind, head, (), items))
+    return tuple(found)
 
 
 def _linked(place: Place, item: Item, titles: Mapping[str, str]) -> Item:

@@ -117,6 +117,18 @@ def test_a_panel_too_hot_says_what_would_do(dossier, design, panel):
     assert "600\u202fW of cooling, or 20.5\u202fm² of effective surface, or 180\u202fm³/h of air from outside" in said
 
 
+def test_a_held_panel_says_by_what_where_it_belongs(dossier, design, panel):
+    """E5 alone is broken: the overview and the page of heat say so first, the page of the load does not."""
+    broken = tuple(replace(f, outcome="broken" if f.rule == "E5" else "holds", weight="must") for f in panel.findings)
+    pages = {page.path: page for page in page_views(replace(dossier, design=replace(design, panel_design=replace(panel, findings=broken))))}
+    section = next(section for section in pages["index.html"].sections if section.anchor == "panel")
+    for notice in (section.blocks[0], *pages["heat.html"].notices):
+        assert (notice.kind, notice.head) == ("held", "The panel is held:")
+        assert [item.label for item in notice.items] == ["E5"]
+        assert "effective surface" in notice.items[0].spans[0].text
+    assert pages["load.html"].notices == ()
+
+
 def test_the_control_supply_adds_up(dossier, panel):
     rows = control_supply_table(dossier).rows
     assert sum(float(row.cells[2].plain) for row in rows) == pytest.approx(panel.control.continuous)
