@@ -12,6 +12,7 @@ from specgen.view.writer import Writer
 
 ROOM = 10.0  # around names and values
 LEAST_APART = 34.0  # of two ticks
+LEAST_AXIS = 120.0
 MOST = 12  # inputs that are drawn; the table has all
 FACTORS = (1, 1.02, 1.05, 1.1, 1.2, 1.5, 2, 3, 5, 10)
 Drawn = tuple[str, Writer, Firm]
@@ -22,10 +23,11 @@ def firmness_drawing(drawn: Sequence[Drawn], caption: str) -> Drawing | None:
     kept = [one for one in drawn if isfinite(one[2].nearness)][:MOST]
     if not kept:
         return None
-    bars = tuple(Bar(name, 0.0, firm.nearness, nearest_change(writer, firm)) for name, writer, firm in kept)
-    left = max(LETTER * len(bar.name) for bar in bars) + ROOM
+    left = max(LETTER * len(name) for name, _, _ in kept) + ROOM
+    letters = int((WIDTH - left - LEAST_AXIS - ROOM) / LETTER)
+    bars = tuple(Bar(name, 0.0, firm.nearness, shortened(nearest_change(writer, firm), letters)) for name, writer, firm in kept)
     right = WIDTH - max(LETTER * len(bar.value) for bar in bars) - ROOM
-    told = "; ".join(f"{bar.name} {bar.value}" for bar in bars)
+    told = "; ".join(f"{name} {nearest_change(writer, firm)}" for name, writer, firm in kept)
     chart = BarChart(
         anchor="firm",
         title=f"Nearest changes: {told}.",
@@ -41,6 +43,19 @@ def firmness_drawing(drawn: Sequence[Drawn], caption: str) -> Drawing | None:
         right=right,
     )  # fmt: skip
     return bar_drawing(chart)
+
+
+def shortened(text: str, letters: int) -> str:
+    """Return a text cut at a comma where it is longer than its place; the table beside has the whole.
+
+    Examples
+    --------
+    >>> shortened("2 kW: analogue, power controller, held", 34), shortened("2 kW: held", 34)
+    ('2 kW: analogue, power controller …', '2 kW: held')
+    """
+    while len(text.removesuffix(" …")) > letters and ", " in text:
+        text = text.removesuffix(" …").rpartition(", ")[0] + " …"
+    return text
 
 
 def _ticks(longest: float, room: float) -> Iterator[tuple[float, str]]:
