@@ -4,7 +4,7 @@ from pathlib import Path
 
 import pytest
 
-from specgen.core.say import _FIXED, _LADDERS
+from specgen.core.printed import SI
 from specgen.design.project import load_design
 from specgen.design.record import record_of
 from specgen.model.traits import TRAITS
@@ -97,7 +97,7 @@ def test_no_formula_is_left_empty(record):
 
 
 def test_units_of_the_record_are_units_and_not_dimensions(record):
-    dimensions = {"value", "change", "change_per_second", "share_per_change", *_FIXED, *_LADDERS}
+    dimensions = {"value", "change", "change_per_second", "share_per_change", *SI.fixed, *SI.ladders}
     for row in record["loops"]:
         for figure in row["basis"]:
             assert figure["unit"] not in dimensions, figure
