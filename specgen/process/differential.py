@@ -99,11 +99,20 @@ def _least(setting: Setting, figure: CycleFigure, limit: float, start: float) ->
             except NoCycle:
                 return limit  # past this the case rests or is not reached: nothing switches too fast there
 
-        wide = differential * 2
-        while short(wide) < 0:
-            wide *= 2
+        wide = _first_doubling(short, differential)
         differential = float(brentq(short, differential, wide, xtol=1e-12 * wide, rtol=1e-9)) * (1 + 1e-9)
     return differential
+
+
+def _first_doubling(short: Callable[[float], float], differential: float) -> float:
+    """Return a differential doubled until it is wide enough, which a wider one then is too: its place is halved in on."""
+    low, high = 0, 1
+    while short(differential * 2.0**high) < 0:
+        low, high = high, 2 * high
+    while high - low > 1:
+        middle = (low + high) // 2
+        low, high = (middle, high) if short(differential * 2.0**middle) < 0 else (low, middle)
+    return float(differential * 2.0**high)
 
 
 def widest_differential(

@@ -13,9 +13,10 @@ from math import exp, expm1, inf, isfinite, log
 
 from scipy.optimize import brentq
 
+from specgen.core.postponed import Postponed
 from specgen.process.follow import Relay, attracts, follow
 from specgen.process.limit_cycle import Cycle, NoCycle, relay_cycle
-from specgen.process.periodic import Mode, after_off, after_on, crest, full_at_end, modes_of, ramp_crest
+from specgen.process.periodic import Mode, after_off, after_on, crest, modes_of, ramp_crest
 
 CLOSE = 1e-12
 RATTLE = 1e-7
@@ -124,12 +125,22 @@ def lagged_cycle(
         found, _ = follow(Relay(true_modes, chain.modes, high_share, low_share, theta, min_run, min_rest))
         return scaled(found, gain, y_off)
     on, off = times
-    peak = y_off + gain * crest(true_modes, on, off)
-    trough = y_on - gain * crest(true_modes, off, on)
-    mean = y_off + gain * on / (on + off)
-    if sensor_lag <= 0:
-        return Cycle(peak, trough, on, off, mean, peak, trough)
-    return Cycle(peak, trough, on, off, mean, y_off + gain * crest(chain.modes, on, off), y_on - gain * crest(chain.modes, off, on))
+
+    def extreme(name: str) -> float:
+        modes = chain.modes if name in _MEASURED else true_modes
+        return y_off + gain * crest(modes, on, off) if name in _HIGH else y_on - gain * crest(modes, off, on)
+
+    return _LateCycle.after({"t_on": on, "t_off": off, "mean": y_off + gain * on / (on + off)}, extreme)
+
+
+class _LateCycle(Postponed, Cycle):
+    """A cycle whose extremes are found when they are asked for: most searches look at its times alone."""
+
+    __slots__ = ("_later",)
+
+
+_MEASURED = ("measured_peak", "measured_trough")
+_HIGH = ("peak", "measured_peak")
 
 
 def scaled(cycle: Cycle, height: float, zero: float) -> Cycle:
@@ -196,7 +207,8 @@ def _newton(chain: _Chain, start: tuple[float, float], run: float | None, rest: 
         # never past the dead time, never more than threefold at once
         shrink = 1.0
         for step, at in ((step_a, a - theta), (step_b, b - theta)):
-            shrink = min(shrink, 0.7 * at / -step if step < 0 else 1.0, 2 * (at + theta) / step if step > 0 else 1.0)
+            most = 0.7 * at / -step if step < 0 else 2 * (at + theta) / step if step > 0 else 1.0
+            shrink = min(shrink, most)
         a += shrink * step_a
         b += shrink * step_b
         size, before = max(abs(step_a) / a, abs(step_b) / b), size
@@ -208,11 +220,13 @@ def _newton(chain: _Chain, start: tuple[float, float], run: float | None, rest: 
 
 def _genuine(chain: _Chain, a: float, b: float, run: float | None, rest: float | None) -> bool:
     """Tell whether the measurement passes the upper point rising and the lower point falling."""
-
-    def going(on: float, off: float) -> float:
-        return sum(c / t * full_at_end(t, off, on) * exp(-(on - chain.theta) / t) for c, t in chain.modes)
-
-    return (run is not None or going(a, b) > 0) and (rest is not None or going(b, a) > 0)
+    up = down = 0.0
+    theta = chain.theta
+    for c, t in chain.modes:
+        share = c / (t * expm1(-(a + b) / t))
+        up += share * expm1(-b / t) * exp(-(a - theta) / t)
+        down += share * expm1(-a / t) * exp(-(b - theta) / t)
+    return (run is not None or up > 0) and (rest is not None or down > 0)
 
 
 def lagged_integrating_cycle(
@@ -270,8 +284,14 @@ def lagged_integrating_cycle(
     modes = modes_of((lag, sensor_lag)) if max(lag, sensor_lag) > 0 else ()
 
     def behind(on: float) -> float:
+        # after_on less after_off of each mode
         off = on * ratio
-        return sum(c * t * (after_on(((1.0, t),), on, off, on - theta) - after_off(((1.0, t),), on, off, off - theta)) for c, t in modes)
+        gathered = 0.0
+        for c, t in modes:
+            whole = expm1(-(on + off) / t)
+            rises, falls = expm1(-off / t) / whole * exp(-(on - theta) / t), expm1(-on / t) / whole * exp(-(off - theta) / t)
+            gathered += c * t * (1 - rises - falls)
+        return gathered
 
     def distance(on: float) -> float:
         return r_on * on - span * (theta + behind(on)) - (high - low)
@@ -295,10 +315,12 @@ def lagged_integrating_cycle(
         start = low - r_off * theta + sum(c * t * (span * after_off(((1.0, t),), on, off, off - theta) - r_off) for c, t in modes)
     true_modes = modes_of((lag,)) if lag > 0 else ()
     mean = start + r_on * on / 2
-    peak, trough = mean + span * ramp_crest(true_modes, on, off), mean - span * ramp_crest(true_modes, off, on)
-    if sensor_lag <= 0:
-        return Cycle(peak, trough, on, off, mean, peak, trough)
-    return Cycle(peak, trough, on, off, mean, mean + span * ramp_crest(modes, on, off), mean - span * ramp_crest(modes, off, on))
+
+    def extreme(name: str) -> float:
+        own = modes if name in _MEASURED else true_modes
+        return mean + span * ramp_crest(own, on, off) if name in _HIGH else mean - span * ramp_crest(own, off, on)
+
+    return _LateCycle.after({"t_on": on, "t_off": off, "mean": mean}, extreme)
 
 
 def _last_root(distance: Callable[[float], float], least: float, most: float) -> float:

@@ -7,7 +7,7 @@ times are what counts.
 
 from collections.abc import Sequence
 from dataclasses import dataclass
-from math import exp, inf, log
+from math import exp, inf, log, sqrt
 
 import numpy as np
 from scipy.optimize import brentq
@@ -59,7 +59,10 @@ class _Track:
 
     def at(self, s: float, share: float | None) -> float:
         """Return the value a time ``s`` into a phase with full input."""
-        return self.seen(s, share)[0]
+        value, settled = (0.0, 1.0) if share is None else (self.level + (1 - share) * s, 1 - share)
+        for weight, constant, state in zip(self.weights, self.constants, self.states, strict=True):
+            value += weight * settled - weight * (1 - state) * exp(-s / constant)
+        return value
 
     def slope(self, s: float, share: float | None) -> float:
         """Return the slope of the value a time ``s`` into a phase with full input."""
@@ -260,10 +263,39 @@ def attracts(relay: Relay, a: float, b: float, *, run_fixed: bool, rest_fixed: b
     from rest falls into.
     """
     share = None if relay.duty is None else a / (a + b)
+    if share is None and len(relay.measured) == 2:  # noqa: PLR2004  a matrix of two by two: its larger multiplier in closed form
+        return _of_two(_rows(relay, b, a, fixed=run_fixed), _rows(relay, a, b, fixed=rest_fixed)) < FIRM
     through = _through(relay, b, a, share, fixed=run_fixed)
     back = _through(relay, a, b, None if share is None else 1 - share, fixed=rest_fixed)
     multipliers = np.abs(np.linalg.eigvals(back @ through))
     return bool(multipliers.max() < FIRM)
+
+
+Rows = tuple[tuple[float, float], tuple[float, float]]
+
+
+def _of_two(first: Rows, then: Rows) -> float:
+    """Return the larger multiplier, in size, of two phases one after the other."""
+    (a, b), (c, d) = first
+    (e, f), (g, h) = then
+    trace, whole = e * a + f * c + g * b + h * d, (a * d - b * c) * (e * h - f * g)
+    half = trace / 2
+    apart = half * half - whole
+    return abs(half) + sqrt(apart) if apart >= 0 else sqrt(whole)
+
+
+def _rows(relay: Relay, before: float, length: float, *, fixed: bool) -> Rows:
+    """Return ``_through`` of two modes that settle."""
+    (c1, t1), (c2, t2) = relay.measured
+    d1, d2 = exp(-length / t1), exp(-length / t2)
+    if fixed:
+        return (d1, 0.0), (0.0, d2)
+    crossing = length - relay.theta
+    u1, u2 = full_at_end(t1, before, length) / t1, full_at_end(t2, before, length) / t2
+    h1, h2 = c1 * exp(-crossing / t1), c2 * exp(-crossing / t2)
+    going = h1 * u1 + h2 * u2
+    v1, v2 = u1 * d1 / going, u2 * d2 / going
+    return (d1 - v1 * h1, -v1 * h2), (-v2 * h1, d2 - v2 * h2)
 
 
 Matrix = np.ndarray[tuple[int, int], np.dtype[np.float64]]

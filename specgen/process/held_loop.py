@@ -169,6 +169,7 @@ def simulate_held(
     level = start.level
     quiet = 0.0
     watch.keep(now, weighed(modes.true, states))
+    turns = modes.true[1:2] not in ((), (0.0,))
     for _ in range(int(horizon / step) + 1):
         reading = weighed(modes.measured, states)
         if derivative > 0:
@@ -177,7 +178,7 @@ def simulate_held(
         output = min(max(wanted, 0.0), 1.0)
         pending.append(output)
         level = pending.popleft()
-        turned = turn(modes, states, level, -load, step)
+        turned = turn(modes, states, level, -load, step) if turns else None
         if turned is not None:
             watch.see(now + turned[0], turned[1])
         gathered = 0.0

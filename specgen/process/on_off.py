@@ -4,6 +4,7 @@ from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 from typing import Literal
 
+from specgen.core.postponed import Postponed
 from specgen.process.box import Box, Point
 from specgen.process.box_edges import candidates
 from specgen.process.limit_cycle import SECONDS_AN_HOUR, Cycle, NoCycle
@@ -213,17 +214,22 @@ def predict_on_off(
     natural = enforced if min_run <= 0 and min_rest <= 0 else setting.cycles(differential, timers=False)
     high, low = switch_points(differential, placement, box.sign)
     among = setting.candidates(differential)
-    return OnOffPrediction(
-        differential=differential,
-        placement=placement,
-        switch_off=high * box.sign,
-        switch_on=low * box.sign,
-        above=setting.worst(setting.above, differential, enforced, among),
-        below=setting.worst(setting.below, differential, enforced, among),
-        swing=setting.worst(SWING, differential, enforced, among),
-        starts_per_hour=setting.worst(STARTS, differential, enforced, among),
-        shortest_on=setting.worst(ON, differential, natural, among),
-        shortest_off=setting.worst(OFF, differential, natural, among),
-        min_run=min_run,
-        min_rest=min_rest,
-    )
+    looked_at = {
+        "above": (setting.above, enforced), "below": (setting.below, enforced), "swing": (SWING, enforced),
+        "starts_per_hour": (STARTS, enforced), "shortest_on": (ON, natural), "shortest_off": (OFF, natural),
+    }  # fmt: skip
+
+    def figure(name: str) -> Worst:
+        of, cycle = looked_at[name]
+        return setting.worst(of, differential, cycle, among)
+
+    # a box without a case that switches is told at once
+    known = {"differential": differential, "placement": placement, "switch_off": high * box.sign, "switch_on": low * box.sign,
+             "starts_per_hour": figure("starts_per_hour"), "min_run": min_run, "min_rest": min_rest}  # fmt: skip
+    return _LatePrediction.after(known, figure)
+
+
+class _LatePrediction(Postponed, OnOffPrediction):
+    """A prediction whose figures are looked for when they are asked for."""
+
+    __slots__ = ("_later",)

@@ -6,6 +6,7 @@ from math import inf
 
 from scipy.optimize import brentq
 
+from specgen.core.postponed import Postponed
 from specgen.process.box import Box, Point
 from specgen.process.cycle_ripple import Ripple, carried_over
 from specgen.process.limit_cycle import NoCycle
@@ -100,22 +101,32 @@ def predict_ripple(box: Box, cycle_time: float, least_on: float = 0.0, least_off
     NoCycle
         No case of the box needs a duty between 0 and 1.
     """
-    pattern = _Pattern(cycle_time, least_on, least_off)
+    pattern, asked = _Pattern(cycle_time, least_on, least_off), _Pattern(cycle_time, 0.0, 0.0)
     up, down = _sides(box)
-    asked = _Pattern(cycle_time, 0.0, 0.0)
-    shortest_on = asked.worst(box, lambda r: r.t_on, "smallest")
-    shortest_off = asked.worst(box, lambda r: r.t_off, "smallest")
-    return RipplePrediction(
-        cycle_time=cycle_time,
-        above=pattern.worst(box, up),
-        below=pattern.worst(box, down),
-        swing=pattern.worst(box, lambda r: r.swing),
-        shortest_on=shortest_on,
-        shortest_off=shortest_off,
-        duty_low=box.duty_low[0],
-        duty_high=box.duty_high[0],
-        held_back=shortest_on.value < least_on or shortest_off.value < least_off,
-    )
+
+    def later(name: str) -> Worst | bool:
+        match name:
+            case "below":
+                return pattern.worst(box, down)
+            case "swing":
+                return pattern.worst(box, lambda r: r.swing)
+            case "shortest_on":
+                return asked.worst(box, lambda r: r.t_on, "smallest")
+            case "shortest_off":
+                return asked.worst(box, lambda r: r.t_off, "smallest")
+            case _:
+                return made.shortest_on.value < least_on or made.shortest_off.value < least_off
+
+    # a box without a case that needs a part of full output is told at once
+    known = {"cycle_time": cycle_time, "above": pattern.worst(box, up), "duty_low": box.duty_low[0], "duty_high": box.duty_high[0]}
+    made = _LatePrediction.after(known, later)
+    return made
+
+
+class _LatePrediction(Postponed, RipplePrediction):
+    """A prediction whose other figures are looked for when they are asked for."""
+
+    __slots__ = ("_later",)
 
 
 def longest_cycle(box: Box, allowed_above: float, allowed_below: float) -> float:

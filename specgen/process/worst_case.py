@@ -187,8 +187,25 @@ def _along(judge: Judge, best: Point, name: str) -> Point:
     return best
 
 
+def _rises_throughout(judge: Judge, best: Point, name: str, start: float, end: float) -> bool:
+    """Tell whether a figure with one top on the stretch, as golden section takes it, has it at the very end.
+
+    It then rises to the last point that the section would come to before the end, and from there to the end.
+    """
+    length = end - start
+    last = judge(best)
+    for share in (1 - GOLDEN, GOLDEN, 1 - GOLDEN ** (SECTIONS + 1), 1.0):
+        value = judge(best._replace(**{name: end if share == 1 else start + share * length}))
+        if not value > last:
+            return False
+        last = value
+    return True
+
+
 def _golden(judge: Judge, best: Point, name: str, start: float, end: float) -> Point:
     """Search the stretch from ``start`` to ``end`` by golden section; return the best case met."""
+    if _rises_throughout(judge, best, name, start, end):
+        return best._replace(**{name: end})
     a, b = start, end
     c, d = b - GOLDEN * (b - a), a + GOLDEN * (b - a)
     for _ in range(SECTIONS):
