@@ -1,5 +1,6 @@
 """What the packaged tables other than devices hold, typed: outputs, sensor classes, functions, motors, practice."""
 
+from functools import lru_cache
 from typing import Annotated, Literal
 
 from pydantic import BeforeValidator, Field
@@ -35,6 +36,9 @@ def _signed(given: object) -> float:
 
 Coefficient = Annotated[float, BeforeValidator(_signed)]
 Kelvin = Annotated[Quantity, Written("difference", sign="positive")]
+
+# a figure of a table is asked for at every candidate
+_parsed = lru_cache(maxsize=1024)(parse_quantity)
 
 
 class TypicalOutput(Model):
@@ -132,4 +136,4 @@ class Practice(Model):
     @property
     def quantity(self) -> Quantity:
         """Return the figure in base units."""
-        return parse_quantity(self.value, self.dimension)
+        return _parsed(self.value, self.dimension)

@@ -22,12 +22,13 @@ from specgen.sizing.candidate import CANDIDATES, Assumption, Candidate, Device, 
 from specgen.sizing.continuous import continuous_settings, three_point_settings
 from specgen.sizing.device import DeviceChoice
 from specgen.sizing.device_choice import devices_by_rating
-from specgen.sizing.feeder import feeder_of, surviving
+from specgen.sizing.faults import Faults
+from specgen.sizing.feeder import Feeder, feeder_of, surviving
 from specgen.sizing.injection import inject_values
 from specgen.sizing.lasting import longer_lasting
 from specgen.sizing.measurement import measuring_error
 from specgen.sizing.on_off import on_off_settings
-from specgen.sizing.remembered import same_box
+from specgen.sizing.remembered import remembered_for, same_box
 from specgen.sizing.settings import OnOffSettings, Settings
 from specgen.sizing.stuck import faults_of, with_times
 from specgen.sizing.time_proportioned import proportioned_settings
@@ -102,10 +103,36 @@ def _named_pair(loop: Loop) -> Candidate | None:
     return Candidate(wish.mode, wish.output)
 
 
+def _looked_at(device: Device, loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue) -> tuple[object, ...]:
+    """Return what the devices of a kind depend on: of the loop on element and cable alone."""
+    return device, loop.element, loop.cable, panel, traits, catalogue
+
+
+@remembered_for(_looked_at)
+def _sizes_of(device: Device, loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue) -> Sizes:
+    """Return the devices of a kind that carry the load and survive a fault; they do not depend on the mode."""
+    found = devices_by_rating(Candidate("on_off", device), loop, panel, traits, catalogue)
+    return surviving(device, found, loop, panel, traits, catalogue)
+
+
+def _fed(
+    device: Device, choice: Sized, loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue
+) -> tuple[object, ...]:
+    """Return what a feeder depends on, as the devices."""
+    return choice, *_looked_at(device, loop, panel, traits, catalogue)
+
+
+_feeder_of = remembered_for(_fed)(feeder_of)
+
+
 class Examination:
     """Makes the cases of one loop's candidates; what two of them share is computed once, and nothing before it is asked for."""
 
-    def __init__(self, loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue, fitted: Fitted | None = None) -> None:
+    def __init__(
+        self, loop: Loop, panel: Panel, traits: Traits, catalogue: Catalogue, fitted: Fitted | None = None, *, told: bool = True
+    ) -> None:
+        """Without ``told`` what only the sheet tells is left out."""
+        self._told = told
         box = box_of(loop, panel, fitted.ranges if fitted is not None else None)
         self._loop = loop
         self._panel = panel
@@ -122,18 +149,25 @@ class Examination:
         """Tell whether anybody would wire such a pair."""
         return not isinstance(self._sizes(candidate), NoCandidate)
 
-    def case(self, candidate: Candidate, on_off: OnOffSettings | Unsized | None = None) -> Case:
-        """Return a candidate's case; ``on_off`` takes the place of on-off beside it where that is not wanted."""
+    def case(self, candidate: Candidate) -> Case:
+        """Return a candidate's case."""
         device, settings = self.sized(candidate)
-        timed = with_times(self._faults, self._loop, self.box, settings)
-        beside = self.on_off_beside(candidate) if on_off is None else on_off
-        feeder = feeder_of(candidate.device, device, self._loop, self._panel, self._traits, self._catalogue)
+        timed = self.faults(settings)
+        beside = self.on_off_beside(candidate)
+        feeder = self.feeder(candidate, device)
         return Case(self._loop, self._panel, self._traits, candidate, self.box, device, settings, beside, self.error, timed, feeder)
+
+    def faults(self, settings: Settings | Unsized) -> Faults | Unsized:
+        """Return what a stuck output does to a candidate with these settings."""
+        return with_times(self._faults, self._loop, self.box, settings)
+
+    def feeder(self, candidate: Candidate, device: Sized) -> Feeder | Unsized:
+        """Return what feeds the element through a candidate's device."""
+        return _feeder_of(candidate.device, device, self._loop, self._panel, self._traits, self._catalogue)
 
     def _sizes(self, candidate: Candidate) -> Sizes:
         if candidate.device not in self._devices:
-            found = devices_by_rating(candidate, self._loop, self._panel, self._traits, self._catalogue)
-            self._devices[candidate.device] = surviving(candidate.device, found, self._loop, self._panel, self._traits, self._catalogue)
+            self._devices[candidate.device] = _sizes_of(candidate.device, self._loop, self._panel, self._traits, self._catalogue)
         return self._devices[candidate.device]
 
     def on_off_beside(self, candidate: Candidate) -> OnOffSettings | Unsized:
@@ -163,13 +197,13 @@ class Examination:
             return Unsized("no trade uses this mode with this output")
         match candidate.mode:
             case "on_off":
-                return on_off_settings(self._loop, self._panel, self.box, device, self.error)
+                return on_off_settings(self._loop, self._panel, self.box, device, self.error, told=self._told)
             case "time_proportioned":
-                return proportioned_settings(candidate, self._loop, self._panel, self.box, device, self.error)
+                return proportioned_settings(candidate, self._loop, self._panel, self.box, device, self.error, told=self._told)
             case "analogue":
-                return continuous_settings(candidate, self._loop, self._panel, self.box, device)
+                return continuous_settings(candidate, self._loop, self._panel, self.box, device, told=self._told)
             case "three_point":
-                return three_point_settings(self._loop, self._panel, self.box, device)
+                return three_point_settings(self._loop, self._panel, self.box, device, told=self._told)
 
 
 def verdict_of(findings: tuple[Finding, ...]) -> Verdict:

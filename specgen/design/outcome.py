@@ -18,6 +18,7 @@ from specgen.model.fitted import Fitted
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel
 from specgen.model.traits import traits_of
+from specgen.process.limit_cycle import NoCycle
 from specgen.rules.base import Case, Finding
 from specgen.rules.engine import LoadedRule, all_rules, ask, examine_all, examine_own
 from specgen.sizing.candidate import CANDIDATES, ORDER, Candidate, Unsized
@@ -82,7 +83,15 @@ def standing_of(subject: Subject, catalogue: Catalogue, hint: Standing | None = 
     """
     if subject.loop.choose is not None:
         return _chosen_by_designer(subject, catalogue)
-    asked = _Asked(subject, catalogue)
+    try:
+        return _standing(subject, catalogue, hint, told=False)
+    except NoCycle:
+        # a worst case that is looked for late has none: where all are looked for at once the candidate has no settings
+        return _standing(subject, catalogue, hint, told=True)
+
+
+def _standing(subject: Subject, catalogue: Catalogue, hint: Standing | None, *, told: bool) -> Standing:
+    asked = _Asked(subject, catalogue, told=told)
     order = sorted(CANDIDATES, key=lambda candidate: hint is None or candidate != hint.chosen)
     found: dict[Candidate, tuple[Finding, ...]] = {}
     leader: tuple[float, ...] | None = None
@@ -129,9 +138,9 @@ def margin_of(findings: tuple[Finding, ...]) -> float:
 class _Asked:
     """The rules asked about a loop's candidates, one by one."""
 
-    def __init__(self, subject: Subject, catalogue: Catalogue) -> None:
+    def __init__(self, subject: Subject, catalogue: Catalogue, *, told: bool) -> None:
         traits = traits_of(subject.loop.element)
-        self.examination = Examination(subject.loop, subject.panel, traits, catalogue, subject.fitted)
+        self.examination = Examination(subject.loop, subject.panel, traits, catalogue, subject.fitted, told=told)
         self._known = {
             "loop": subject.loop, "panel": subject.panel, "traits": traits, "box": self.examination.box, "error": self.examination.error,
         }  # fmt: skip
@@ -210,13 +219,21 @@ class _UnmadeCase(Case):
             raise AttributeError(name)
         if not self._may_make:
             raise _NotMadeYetError
-        if name == "on_off":
-            object.__setattr__(self, name, self._beside())
-        else:
-            whole = self._examination.case(self.candidate, _ASIDE)
-            for part in _PARTS - {"on_off"}:
-                object.__setattr__(self, part, getattr(whole, part))
-        return getattr(self, name)
+        made: object
+        match name:
+            case "on_off":
+                made = self._beside()
+            case "faults":
+                made = self._examination.faults(self.settings)
+            case "feeder":
+                made = self._examination.feeder(self.candidate, self.device)
+            case _:
+                device, settings = self._examination.sized(self.candidate)
+                object.__setattr__(self, "device", device)
+                object.__setattr__(self, "settings", settings)
+                return getattr(self, name)
+        object.__setattr__(self, name, made)
+        return made
 
     def _beside(self) -> OnOffSettings | Unsized:
         """Return on-off beside the candidate; of a steady proportional one only M5 looks at it, and only to say what on-off would do."""

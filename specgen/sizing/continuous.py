@@ -13,7 +13,7 @@ from specgen.sizing.device import DeviceChoice
 from specgen.sizing.scan import scan_and_pulse
 from specgen.sizing.settings import ContinuousSettings, ThreePointSettings, Tuning
 from specgen.sizing.signal_table import signal_table
-from specgen.sizing.simulated import load_share, simulated_deviation, tuning_of
+from specgen.sizing.simulated import load_share, simulated_deviation, tuning_later, tuning_of
 from specgen.sizing.starting_values import hardest_case, start_of
 from specgen.sizing.valve_sizing import valve_sizing
 
@@ -23,13 +23,13 @@ USUAL_PULSE = 0.01  # of the travel time: what a motor follows reliably where no
 
 
 def continuous_settings(
-    candidate: Candidate, loop: Loop, panel: Panel, box: Box | Unmodelled, device: DeviceChoice | Unsized
+    candidate: Candidate, loop: Loop, panel: Panel, box: Box | Unmodelled, device: DeviceChoice | Unsized, *, told: bool = True
 ) -> ContinuousSettings | Unsized:
-    """Return signal and tuning of an analogue candidate."""
+    """Return signal and tuning of an analogue candidate; without ``told`` the start-up is simulated when it is asked for."""
     if isinstance(device, Unsized):
         return Unsized(f"no device: {device.because}", device.needs)
     valve = valve_sizing(loop, box) if candidate.device == "signal" and isinstance(box, Box) else None
-    tuned = _tuned(loop, panel, box, with_actuator=candidate.device == "signal", gain_factor=valve.gain_factor if valve else 1.0)
+    tuned = _tuned(loop, panel, box, with_actuator=candidate.device == "signal", gain_factor=valve.gain_factor if valve else 1.0, told=told)
     if isinstance(tuned, Unsized):
         return tuned
     tuning, figures, assumptions, duties = tuned
@@ -43,9 +43,9 @@ def continuous_settings(
 
 
 def three_point_settings(
-    loop: Loop, panel: Panel, box: Box | Unmodelled, device: DeviceChoice | Unsized
+    loop: Loop, panel: Panel, box: Box | Unmodelled, device: DeviceChoice | Unsized, *, told: bool = True
 ) -> ThreePointSettings | Unsized:
-    """Return neutral zone and tuning of a three-point candidate."""
+    """Return neutral zone and tuning of a three-point candidate; ``told`` as `continuous_settings`."""
     if isinstance(device, Unsized):
         return Unsized(f"no device: {device.because}", device.needs)
     if isinstance(box, Unmodelled):
@@ -55,7 +55,7 @@ def three_point_settings(
         return Unsized("the element does not travel")
     if loop.sensor.step is None:
         return Unsized("the measurement's step is not declared", ("sensor.step",))
-    tuned = _tuned(loop, panel, box, with_actuator=True)
+    tuned = _tuned(loop, panel, box, with_actuator=True, told=told)
     if isinstance(tuned, Unsized):
         return tuned
     tuning, figures, assumptions, duties = tuned
@@ -102,7 +102,9 @@ def _highest_gain(box: Box, tuning: Tuning) -> float:
 _Tuned = tuple[Tuning, tuple[Figure, ...], tuple[Assumption, ...], tuple[float, float]]
 
 
-def _tuned(loop: Loop, panel: Panel, box: Box | Unmodelled, *, with_actuator: bool, gain_factor: float = 1.0) -> _Tuned | Unsized:
+def _tuned(
+    loop: Loop, panel: Panel, box: Box | Unmodelled, *, with_actuator: bool, gain_factor: float = 1.0, told: bool
+) -> _Tuned | Unsized:
     if isinstance(box, Unmodelled):
         return Unsized(box.because, box.needs)
     change = load_share(loop, box)
@@ -114,5 +116,5 @@ def _tuned(loop: Loop, panel: Panel, box: Box | Unmodelled, *, with_actuator: bo
     if isinstance(start, Unsized):
         return start
     deviation = simulated_deviation(start, change) if change is not None else None
-    tuning = tuning_of(start, box, loop, deviation)
+    tuning = (tuning_of if told else tuning_later)(start, box, loop, deviation)
     return tuning, figures, assumptions, (start.hardest.duty_low, start.hardest.duty_high)

@@ -29,9 +29,12 @@ NOISES = 2  # D2: a differential is at least this many times the noise
 
 
 def on_off_settings(
-    loop: Loop, panel: Panel, box: Box | Unmodelled, device: DeviceChoice | Unsized, error: MeasuringError | Unsized
-) -> OnOffSettings | Unsized:
+    loop: Loop, panel: Panel, box: Box | Unmodelled, device: DeviceChoice | Unsized, error: MeasuringError | Unsized,
+    *, told: bool = True,
+) -> OnOffSettings | Unsized:  # fmt: skip
     """Choose the differential of an on-off loop and predict its worst cases.
+
+    Without ``told`` figures and assumptions are left out, and worst cases are looked for when they are asked for.
 
     Returns
     -------
@@ -47,14 +50,15 @@ def on_off_settings(
     if step is None:
         return Unsized("neither a setting step nor the measurement's step is declared", ("sensor.step",))
     try:
-        return _settled(loop, panel, box, device, error, placement, step)
+        return _settled(loop, panel, box, device, error, placement, step, told=told)
     except NoCycle as none:
         return Unsized(f"the loop cannot switch: {none}", ())
 
 
 def _settled(
-    loop: Loop, panel: Panel, box: Box, device: DeviceChoice | Unsized, error: MeasuringError | Unsized, placement: Placement, step: float
-) -> OnOffSettings:
+    loop: Loop, panel: Panel, box: Box, device: DeviceChoice | Unsized, error: MeasuringError | Unsized, placement: Placement, step: float,
+    *, told: bool,
+) -> OnOffSettings:  # fmt: skip
     run, rest = _least_times(loop)
     bounds = _least_bounds(loop, panel, box, device, placement)
     least = max((bound.limit for bound in bounds if isfinite(bound.limit)), default=step)
@@ -62,35 +66,30 @@ def _settled(
     chosen = loop.choose.differential if loop.choose else None
     differential = float(chosen) if chosen is not None else chosen_differential(least, most, step, even=placement == "centred")
     enforced = _predict_on_off(box, differential, placement, run, rest)
-    natural = replace(enforced, min_run=0.0, min_rest=0.0)
-    if enforced.shortest_on.value < run or enforced.shortest_off.value < rest:
-        natural = _predict_on_off(box, differential, placement)
+    natural = enforced
+    if run > 0 or rest > 0:
+        acts = enforced.shortest_on.value < run or enforced.shortest_off.value < rest
+        natural = _predict_on_off(box, differential, placement) if acts else replace(enforced, min_run=0.0, min_rest=0.0)
     starts = enforced.starts_per_hour.value + _defrosts(loop)
     operations = starts * hours_per_year(loop, panel)
     last = weakest(device)
     life = life_in_years(last.operations, operations) if last else None
     setpoint = float(loop.need.setpoint)
+    made = OnOffSettings(
+        differential=differential, placement=placement, switch_on=setpoint + enforced.switch_on, switch_off=setpoint + enforced.switch_off,
+        least=least, most=most, least_bounds=bounds, most_bound=most_bound, natural=natural, enforced=enforced, starts_per_hour=starts,
+        operations_per_year=operations, contact_life=life, weakest=last.contact.what if last else "",
+        chosen_by="choose" if chosen is not None else "computed",
+    )  # fmt: skip
+    if not told:
+        return made
     near = loop.need.tolerance.below if loop.raises else loop.need.tolerance.above
     cold = warm_up(box, float(near))
     lights = flicker_of(loop, panel)
     seen = lights if isinstance(lights, Flicker) and starts > 0 else None
     placed = () if placement != "centred" or (loop.choose and loop.choose.placement) else (_CENTRED,)
-    return OnOffSettings(
-        differential=differential,
-        placement=placement,
-        switch_on=setpoint + enforced.switch_on,
-        switch_off=setpoint + enforced.switch_off,
-        least=least,
-        most=most,
-        least_bounds=bounds,
-        most_bound=most_bound,
-        natural=natural,
-        enforced=enforced,
-        starts_per_hour=starts,
-        operations_per_year=operations,
-        contact_life=life,
-        weakest=last.contact.what if last else "",
-        chosen_by="choose" if chosen is not None else "computed",
+    return replace(
+        made,
         warm_up=cold.value if cold is not None and isfinite(cold.value) else None,
         figures=(
             *_window_figures(bounds, least, most_bound, step, differential, "choose.differential" if chosen is not None else ""),

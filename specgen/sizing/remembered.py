@@ -55,3 +55,43 @@ def remembered(function: Callable[Concatenate[F, P], R]) -> Callable[Concatenate
 
     update_wrapper(asked, function)
     return asked
+
+
+def remembered_for(parts: Callable[P, tuple[object, ...]]) -> Callable[[Callable[P, R]], Callable[P, R]]:
+    """Return what gives a pure function a memory of its last results, told apart by the parts of its arguments that it looks at.
+
+    Parts are told apart by being the same objects, strings by what they say: variations of one loop share every part that is not
+    varied, and to compare them would cost more than is won. The memory holds the parts, so that their identity cannot pass to another.
+
+    Examples
+    --------
+    >>> asked = []
+    >>> @remembered_for(lambda words, more: (words,))
+    ... def length(words: list[str], more: str) -> int:
+    ...     asked.append(more)
+    ...     return len(words)
+    >>> words = ["a", "b"]
+    >>> length(words, "x"), length(words, "y"), length(["a", "b"], "z"), asked
+    (2, 2, 2, ['x', 'z'])
+    """
+
+    def with_memory(function: Callable[P, R]) -> Callable[P, R]:
+        memory: OrderedDict[object, tuple[tuple[object, ...], R]] = OrderedDict()
+
+        def asked(*args: P.args, **kwargs: P.kwargs) -> R:
+            held = parts(*args, **kwargs)
+            key = tuple([part if isinstance(part, str) else id(part) for part in held])
+            known = memory.get(key)
+            if known is not None:
+                memory.move_to_end(key)
+                return known[1]
+            result = function(*args, **kwargs)
+            memory[key] = (held, result)
+            if len(memory) > KEPT:
+                memory.popitem(last=False)
+            return result
+
+        update_wrapper(asked, function)
+        return asked
+
+    return with_memory

@@ -4,6 +4,7 @@ from dataclasses import dataclass, replace
 from math import inf, isfinite
 
 from specgen.core.figure import Figure
+from specgen.core.postponed import Postponed
 from specgen.model.loop import Loop
 from specgen.model.traits import traits_of
 from specgen.process.box import Box, Point
@@ -135,6 +136,24 @@ def tuning_of(start: Start, box: Box, loop: Loop, deviation: float | None, *, si
         _delay(start) - start.charged, found.gain, found.phase, found.sensitivity, start.stable, deviation, overshoot,
         time_to_band if time_to_band is not None and isfinite(time_to_band) else None, tuple(figures), start.assumptions,
     )  # fmt: skip
+
+
+def tuning_later(start: Start, box: Box, loop: Loop, deviation: float | None) -> Tuning:
+    """Return the tuning as ``tuning_of`` does, its start-up simulated when it is asked for and its figures left out."""
+    settings, found = start.settings, start.margins
+    known = {
+        "gain": settings.gain, "proportional_band": settings.proportional_band, "integral_time": settings.integral_time,
+        "derivative_time": settings.derivative_time, "effective_delay": _delay(start), "delay_without_cycle": _delay(start) - start.charged,
+        "gain_margin": found.gain, "phase_margin": found.phase, "peak_sensitivity": found.sensitivity, "stable": start.stable,
+        "load_deviation": deviation, "figures": (), "assumptions": (),
+    }  # fmt: skip
+    return _LateTuning.after(known, lambda name: getattr(tuning_of(start, box, loop, deviation), name))
+
+
+class _LateTuning(Postponed, Tuning):
+    """A tuning whose start-up is simulated when it is asked for."""
+
+    __slots__ = ("_later",)
 
 
 def _delay(start: Start) -> float:

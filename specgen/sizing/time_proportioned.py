@@ -18,7 +18,7 @@ from specgen.sizing.remembered import remembered
 from specgen.sizing.rounding import SLACK, down_in_series, up_in_series
 from specgen.sizing.scan import scan_and_pulse
 from specgen.sizing.settings import Bound, ProportionedSettings
-from specgen.sizing.simulated import SuddenLoad, estimated_deviation, load_share, simulated_deviation, tuning_of
+from specgen.sizing.simulated import SuddenLoad, estimated_deviation, load_share, simulated_deviation, tuning_later, tuning_of
 from specgen.sizing.starting_values import Hardest, Start, hardest_case, start_of
 from specgen.sizing.wear import HOUR, hours_per_year, life_in_years, weakest
 
@@ -44,12 +44,16 @@ class _Job:
     scan: float
     pulse: Pulse
     load: SuddenLoad | None
+    told: bool
 
 
 def proportioned_settings(
-    candidate: Candidate, loop: Loop, panel: Panel, box: Box | Unmodelled, device: DeviceChoice | Unsized, error: MeasuringError | Unsized
-) -> ProportionedSettings | Unsized:
+    candidate: Candidate, loop: Loop, panel: Panel, box: Box | Unmodelled, device: DeviceChoice | Unsized, error: MeasuringError | Unsized,
+    *, told: bool = True,
+) -> ProportionedSettings | Unsized:  # fmt: skip
     """Choose the cycle time of a time-proportioned loop, its tuning, and predict its ripple.
+
+    Without ``told`` figures and assumptions are left out, and ripple and start-up are looked for when they are asked for.
 
     Returns
     -------
@@ -64,7 +68,7 @@ def proportioned_settings(
     if isinstance(load, Unsized):
         return load
     scan, pulse = scan_and_pulse(panel)
-    job = _Job(loop, panel, box, device, error, hardest_case(box), candidate.device == "ssr", scan, pulse, load)
+    job = _Job(loop, panel, box, device, error, hardest_case(box), candidate.device == "ssr", scan, pulse, load, told)
     try:
         return _settled(job)
     except NoCycle as none:
@@ -95,7 +99,7 @@ def _settled(job: _Job) -> ProportionedSettings | Unsized:
     if isinstance(start, Unsized):
         return start
     made = _result(job, cycle, start, (least, most), (least_bounds, most_bounds), by_designer=chosen is not None)
-    if not isinstance(lights, Flicker):
+    if not (job.told and isinstance(lights, Flicker)):
         return made
     return replace(made, figures=(*made.figures, *lights.figures_at(cycle)), assumptions=(*made.assumptions, *lights.assumptions))
 
@@ -232,19 +236,19 @@ def _result(
     ripple = _predict_ripple(job.box, cycle, pulse, pulse)
     low, high = asked_duties(job.box)
     deviation = simulated_deviation(start, job.load) if job.load is not None else None
-    tuning = tuning_of(start, job.box, job.loop, deviation)
+    tuning = (tuning_of if job.told else tuning_later)(start, job.box, job.loop, deviation)
     operations = hours_per_year(job.loop, job.panel) * HOUR / cycle
     last = weakest(job.device)
     life = life_in_years(last.operations, operations) if last else None
     hours = hours_per_year(job.loop, job.panel)
-    figures = (
+    figures = () if not job.told else (
         *bound_figures(bounds),
         cycle_figure(cycle, bounds, wears=last is not None, by_designer=by_designer),
         *ripple_figures(cycle, ripple, (low, high)),
         *wear_figures(cycle, hours, operations, life, last.operations if last else None),
     )
     assumptions: tuple[Assumption, ...] = ()
-    if job.solid_state:
+    if job.solid_state and job.told:
         assumptions = (
             Assumption(
                 "controllers.scan", "timed in half-cycles", "a logic output times its pulses itself, not once a scan (common practice)"
