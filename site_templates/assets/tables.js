@@ -4,7 +4,7 @@
   const { make, tag, counted } = window.dossier;
   const SORTED_FROM = 5, FILTERED_FROM = 8;
   const ORDER = ["held", "open", "deviates", "meets"];
-  const FACTOR = { s: 1, min: 60, h: 3600, day: 86400, days: 86400, year: 31557600, years: 31557600 };
+  const FACTOR = { ms: 1e-3, s: 1, min: 60, h: 3600, day: 86400, days: 86400, year: 31557600, years: 31557600 };
   const PREFIX = { m: 1e-3, k: 1e3, M: 1e6 };
   const collator = new Intl.Collator("en", { numeric: true, sensitivity: "base" });
 

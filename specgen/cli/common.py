@@ -11,13 +11,14 @@ from specgen.design.project import load_design
 from specgen.design.types import Design
 from specgen.source.excerpt import excerpt
 
+TROUBLE = 2  # exit code
 folder_argument = click.argument("folder", default=".", type=click.Path(file_okay=False, path_type=Path), metavar="[DIR]")
 
 
 class Trouble(click.ClickException):
     """What ends a command in one line; its exit code is not that of a held loop."""
 
-    exit_code = 2
+    exit_code = TROUBLE
 
     def show(self, file: IO[Any] | None = None) -> None:
         """Print the line."""
@@ -47,7 +48,7 @@ def _on_terminal() -> bool:
 def exit_code(design: Design) -> int:
     """Return 2 with any input problem, else 1 with anything held, else 0."""
     if any(problem.severity == "error" for problem in design.problems):
-        return 2
+        return TROUBLE
     return 1 if design.verdict == "held" else 0
 
 

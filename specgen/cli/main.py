@@ -10,6 +10,7 @@ from specgen.cli.build import build
 from specgen.cli.check import check
 from specgen.cli.explain import explain
 from specgen.cli.fit import fit
+from specgen.cli.preview import preview
 from specgen.cli.schema import schema
 from specgen.cli.start import start
 
@@ -23,7 +24,7 @@ def commands() -> None:
     """Decide the control loops of a panel and write the design dossier."""
 
 
-for command in (start, check, explain, build, fit, schema):
+for command in (start, check, explain, build, preview, fit, schema):
     commands.add_command(command)
 
 

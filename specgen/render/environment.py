@@ -50,11 +50,11 @@ class _Environment(Environment):
     getattr = staticmethod(getattr)  # type: ignore[assignment]  # Jinja's own falls back on items, and takes twice the time
 
 
-class PageTemplate(Protocol):
-    """What draws a page."""
+class Template(Protocol):
+    """What draws a page, or the part of it between head and foot."""
 
-    def render(self, *, view: PageView, prose: Markup) -> str:
-        """Return the page's text."""
+    def render(self, *, view: PageView, prose: Markup = ..., article: Markup = ...) -> str:
+        """Return the text."""
 
 
 @lru_cache(maxsize=1)
@@ -71,10 +71,9 @@ def environment() -> Environment:
     return made
 
 
-@lru_cache(maxsize=1)
-def page_template() -> PageTemplate:
-    """Return the template of a whole page."""
-    return environment().get_template("dossier.html")
+@lru_cache(maxsize=2)
+def _template(name: str) -> Template:
+    return environment().get_template(name)
 
 
 def page(view: PageView) -> bytes:
@@ -82,13 +81,21 @@ def page(view: PageView) -> bytes:
     return page_text(view).encode()
 
 
-def page_text(view: PageView) -> str:
+def page_text(view: PageView, article: str | None = None) -> str:
     """Draw a page.
 
     Parameters
     ----------
     view : PageView
         The page; its ``prose`` alone is taken as ready HTML, everything else is escaped.
+    article : str, optional
+        What ``article_text`` has drawn of it already.
     """
+    # the article comes from our own template, which has escaped everything
+    return _template("dossier.html").render(view=view, article=Markup(article_text(view) if article is None else article))  # noqa: S704
+
+
+def article_text(view: PageView) -> str:
+    """Draw what stands between a page's head and its foot."""
     # prose is what MkDocs made of the user's own Markdown page
-    return page_template().render(view=view, prose=Markup(view.prose))  # noqa: S704
+    return _template("article.html").render(view=view, prose=Markup(view.prose))  # noqa: S704

@@ -7,26 +7,28 @@ from pathlib import Path, PurePosixPath
 from specgen.design.record import dump, record_of
 from specgen.design.types import Design
 from specgen.render.csv_files import csv_bytes
-from specgen.render.environment import TEMPLATES, page
+from specgen.render.environment import TEMPLATES, article_text, page_text
+from specgen.render.print_file import Part, part_of, print_text
 from specgen.render.search_index import Sections, search_files, sections_of
 from specgen.render.workbook import workbook
 from specgen.view.conductors_page import conductors_table
 from specgen.view.dossier import Dossier, OwnPage, dossier_of
 from specgen.view.firmness_page import firmness_table
-from specgen.view.frame import Place
+from specgen.view.frame import PRINT, Place
 from specgen.view.heat_page import control_supply_table, losses_table
 from specgen.view.instruments_page import instruments_table
 from specgen.view.load_page import contributions_table
 from specgen.view.pages import page_views
 from specgen.view.parts_page import parts_table
+from specgen.view.print_page import printed_paths
 from specgen.view.protection_page import protection_table
 from specgen.view.registers import assumptions_table, loops_table, open_points_table
 from specgen.view.schedules import outputs_table
-from specgen.view.shapes import Table
+from specgen.view.shapes import PageView, Table
 from specgen.view.terminals_page import terminals_table
 
 ASSETS = "assets"
-SUFFIXES = (".css", ".js")
+SUFFIXES = (".css", ".js", ".svg")
 UNDATED = datetime.date(1980, 1, 1)  # of a workbook whose panel could not be read
 
 
@@ -52,10 +54,21 @@ def files_of(dossier: Dossier) -> dict[str, bytes]:
     """Write every file of a gathered dossier."""
     files: dict[str, bytes] = {}
     sheets: list[Sections] = []
+    printed = dict.fromkeys(printed_paths(dossier))
+    parts: list[Part] = []
+    whole: PageView | None = None
     for view in page_views(dossier):
-        files[view.path] = page(view)
+        if view.path == PRINT:
+            whole = view
+            continue
+        article = article_text(view)
+        files[view.path] = page_text(view, article).encode()
+        if view.path in printed:
+            parts.append(part_of(view, article, printed))
         if view.tag:
             sheets.append(sections_of(view))
+    if whole is not None:
+        files[PRINT] = print_text(whole, tuple(parts)).encode()
     files |= asset_files()
     files |= search_files(dossier, sheets)
     files |= data_files(dossier)
@@ -63,7 +76,7 @@ def files_of(dossier: Dossier) -> dict[str, bytes]:
 
 
 def asset_files() -> dict[str, bytes]:
-    """Return the style sheets and scripts as they stand."""
+    """Return style sheets, scripts and the icon as they stand."""
     folder = Path(TEMPLATES) / ASSETS
     return {f"{ASSETS}/{file.name}": file.read_bytes() for file in sorted(folder.iterdir()) if file.suffix in SUFFIXES}
 

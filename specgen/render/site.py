@@ -3,7 +3,7 @@
 import os
 import shutil
 import tempfile
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
 from contextlib import contextmanager
 from importlib.metadata import entry_points
 from pathlib import Path
@@ -26,7 +26,7 @@ class SiteError(Exception):
     """The site could not be written; the one before it, if any, stands as it was."""
 
 
-def write_site(project: Path, design: Design, site: Path | None = None) -> Path:
+def write_site(project: Path, design: Design, site: Path | None = None, finish: Callable[[Path], None] | None = None) -> Path:
     """Build a dossier's site as ``mkdocs build`` does and swap it in.
 
     Parameters
@@ -37,6 +37,8 @@ def write_site(project: Path, design: Design, site: Path | None = None) -> Path:
         The decided panel.
     site : pathlib.Path, optional
         Where the site is wanted; ``site_dir`` of ``mkdocs.yml`` where absent.
+    finish : callable, optional
+        Called with the new site's folder before it takes the place of the old one.
 
     Returns
     -------
@@ -65,6 +67,8 @@ def write_site(project: Path, design: Design, site: Path | None = None) -> Path:
                 build(config)
             finally:
                 config.plugins.on_shutdown()
+            if finish is not None:
+                finish(fresh)
             swap(fresh, target)
         finally:
             shutil.rmtree(fresh, ignore_errors=True)

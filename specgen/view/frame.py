@@ -9,6 +9,7 @@ from specgen.view.shapes import Item, Link, Mark, Notice, PageView, Section, Sen
 from specgen.view.words import counted, listed
 
 MOST_NAMED = 6
+PRINT = "print.html"
 SCRIPTS = ("dossier.js", "tables.js", "search.js", "notes.js", "reading.js")
 
 
@@ -46,6 +47,7 @@ PAGE_ROWS = (
     PageRow("site-checks.html", "Site checks", "Panel", "what to measure and watch on site, in order", "installer", "Site checks"),
     PageRow("cautions.html", "Cautions", "Panel", "what can hurt someone, and who decides", "installer"),
     PageRow("guide.html", "Guide", "Panel", "how to use this dossier, and what its signs mean", "installer"),
+    PageRow(PRINT, "Print", "Panel", "the whole dossier on one page, for paper and PDF", "reviewer"),
 )
 
 

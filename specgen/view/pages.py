@@ -14,6 +14,7 @@ from specgen.view.instruments_page import instruments_page
 from specgen.view.load_page import load_page
 from specgen.view.overview import overview_page
 from specgen.view.parts_page import parts_page
+from specgen.view.print_page import print_page
 from specgen.view.protection_page import protection_page
 from specgen.view.registers import assumptions_page, deviations_page, loops_page, open_points_page
 from specgen.view.rule_book import rule_book_page
@@ -43,6 +44,7 @@ BUILDERS: Mapping[str, Callable[[Dossier, Place], PageView]] = {
     "site-checks.html": site_checks_page,
     "cautions.html": cautions_page,
     "guide.html": guide_page,
+    "print.html": print_page,
 }
 
 

@@ -12,7 +12,7 @@ from specgen.design.project import load_design
 from specgen.render import site as site_module
 from specgen.render.site import SiteError, swap, write_site
 
-NAME_OWN_PAGES = {"index.html", "assets/search-0.js"}
+NAME_OWN_PAGES = {"index.html", "print.html", "assets/search-0.js"}
 
 
 def contents(folder):
@@ -47,7 +47,7 @@ def test_mkdocs_alone_gives_the_same_site_also_where_it_is_strict(project):
 
 def test_pages_written_without_mkdocs_are_the_same(site, files):
     built = contents(site)
-    # the overview and the search name the user's own pages, which only the host knows
+    # overview, print and search name the user's own pages, which only the host knows
     assert {name for name, content in files.items() if built.get(name) != content} == NAME_OWN_PAGES
 
 

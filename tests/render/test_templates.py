@@ -13,7 +13,7 @@ ALLOWED = (
     nodes.Template, nodes.Output, nodes.TemplateData, nodes.If, nodes.For, nodes.Name, nodes.Getattr, nodes.Macro, nodes.Call,
     nodes.FromImport, nodes.Or, nodes.Getitem,
 )  # fmt: skip
-CALLABLE = {"draw", "mark", "side", "spans"}
+CALLABLE = {"draw", "mark", "side", "spans", "standing", "symbols"}
 NAMES = sorted(path.relative_to(TEMPLATES).as_posix() for path in Path(TEMPLATES).rglob("*.html"))
 
 
