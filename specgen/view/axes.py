@@ -34,6 +34,16 @@ class Scale:
     at_low: float
     at_high: float
 
+    def over(self, size: float) -> "Scale":
+        """Return the scale whose numbers are in a unit of another size.
+
+        Examples
+        --------
+        >>> Scale(0.0, 120.0, 48.0, 506.0).over(60.0)
+        Scale(low=0.0, high=2.0, at_low=48.0, at_high=506.0)
+        """
+        return Scale(self.low / size, self.high / size, self.at_low, self.at_high)
+
     def __call__(self, value: float) -> float:
         """Return the place of a number."""
         return self.at_low + (value - self.low) / (self.high - self.low) * (self.at_high - self.at_low)

@@ -78,7 +78,7 @@ def cycle_drawing(plot: CyclePlot) -> Drawing:
         points=(Point(_n(worst_x), _n(worst_y)),),
         labels=tuple(labels),
         notes=plot.notes,
-        data=reading_data([_readable(plot, Scale(0.0, end / unit_size, LEFT, RIGHT), unit, y)]),
+        data=reading_data([_readable(plot, x.over(unit_size), unit, y)]),
     )
 
 

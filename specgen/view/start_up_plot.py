@@ -6,6 +6,7 @@ from specgen.core.say import MINUS
 from specgen.design.start_ups import Start, StartUps
 from specgen.view.axes import Scale, place
 from specgen.view.panels import LEFT, RIGHT, WIDTH, Panels, Spot, TimeUnit, inside, time_unit
+from specgen.view.reading import Readable, reading_data
 from specgen.view.shapes import Box, Drawing, Label, Note, Path
 from specgen.view.writer import Writer
 
@@ -35,8 +36,7 @@ def start_up_drawing(writer: Writer, starts: StartUps, up: int) -> Drawing:
     """Draw a start; ``up`` is +1 where more output raises the value, -1 where it lowers it."""
     frame, panels = _Frame(writer, up), Panels()
     lively, slow = starts.lively, starts.slow
-    _whole(panels, frame, starts)
-    _arrival(panels, frame, starts)
+    readable = [_whole(panels, frame, starts), _arrival(panels, frame, starts)]
     notes = [Note("Reading it", _reading(writer, starts))]
     return Drawing(
         anchor="start-up",
@@ -49,10 +49,15 @@ def start_up_drawing(writer: Writer, starts: StartUps, up: int) -> Drawing:
         points=tuple(panels.points),
         labels=tuple(panels.labels),
         notes=tuple(notes),
+        data=reading_data(readable),
     )
 
 
-def _whole(panels: Panels, frame: _Frame, starts: StartUps) -> None:
+def _readable(frame: _Frame, x: Scale, y: Scale, unit: TimeUnit, curves: tuple[tuple[str, str], ...]) -> Readable:
+    return Readable(x.over(unit.size), unit.word, y, frame.writer.change_unit, curves)
+
+
+def _whole(panels: Panels, frame: _Frame, starts: StartUps) -> Readable:
     writer, lively, slow = frame.writer, starts.lively, starts.slow
     late = slow or lively
     end = max(LATER * (late.in_band or late.course.times[-1]), min(lively.course.times[-1], LATER * _settles(lively)))
@@ -76,6 +81,8 @@ def _whole(panels: Panels, frame: _Frame, starts: StartUps) -> None:
     if late.in_band is not None:
         where = frame.spot(x, y, late.in_band, _at(late, late.in_band))
         panels.mark(*where, f"{'slowest case: ' if slow else ''}in the band after {writer.time(late.in_band)}", upwards=frame.up > 0)
+    slowest = (("thin", "slowest case"),) if slow is not None else ()
+    return _readable(frame, x, y, time_unit(end), (("value", "liveliest case" if slow else "from the setpoint"), *slowest))
 
 
 def _settles(start: Start) -> float:
@@ -89,7 +96,7 @@ def _course(panels: Panels, frame: _Frame, x: Scale, y: Scale, start: Start, kin
         panels.curve(kind, piece)
 
 
-def _arrival(panels: Panels, frame: _Frame, starts: StartUps) -> None:
+def _arrival(panels: Panels, frame: _Frame, starts: StartUps) -> Readable:
     writer, lively, band = frame.writer, starts.lively, starts.band
     highest = lively.highest or 0.0
     low = -BELOW * band.below
@@ -121,6 +128,7 @@ def _arrival(panels: Panels, frame: _Frame, starts: StartUps) -> None:
         where = frame.spot(x, y, lively.in_band, _at(lively, lively.in_band))
         panels.mark(*where, f"in the band after {writer.time(lively.in_band)}", upwards=frame.up < 0)
     _output(panels, x, lively, unit)
+    return _readable(frame, x, y, unit, (("value", "from the setpoint"),))
 
 
 def _output(panels: Panels, x: Scale, start: Start, unit: TimeUnit) -> None:

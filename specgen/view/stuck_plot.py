@@ -3,6 +3,7 @@
 from specgen.design.stuck_on import Course, StuckOn
 from specgen.view.axes import Scale, place
 from specgen.view.panels import LEFT, RIGHT, WIDTH, Panels, inside, time_unit
+from specgen.view.reading import Readable, reading_data
 from specgen.view.shapes import Drawing, Note
 from specgen.view.writer import Writer
 
@@ -58,6 +59,7 @@ def stuck_drawing(writer: Writer, stuck: StuckOn, quantity: str) -> Drawing:
     panels.mark(x(0.0), y(writer.shown_value(stuck.start)), f"end of normal running {writer.value(stuck.start)}", upwards=up < 0)
     if stuck.danger_time is not None and stuck.danger is not None:
         panels.mark(x(stuck.danger_time), y(writer.shown_value(stuck.danger)), f"after {writer.time(stuck.danger_time)}", upwards=up > 0)
+    curves = (("value", "true value"), *((("rest", "without the limiter"),) if stopped else ()))
     return Drawing(
         anchor="stuck-on",
         title=_title(writer, stuck),
@@ -69,6 +71,7 @@ def stuck_drawing(writer: Writer, stuck: StuckOn, quantity: str) -> Drawing:
         points=tuple(panels.points),
         labels=tuple(panels.labels),
         notes=(Note("Reading it", _reading(writer, stuck)),),
+        data=reading_data([Readable(x.over(time_unit(end).size), time_unit(end).word, y, writer.value_unit, curves)]),
     )
 
 
