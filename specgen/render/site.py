@@ -56,6 +56,8 @@ def write_site(project: Path, design: Design, site: Path | None = None, finish: 
         target = (site or Path(config.site_dir)).resolve()
         if project.resolve().is_relative_to(target):
             raise SiteError(f"{target} holds the project itself; the site needs a folder of its own")
+        if target.exists() and not target.is_dir():
+            raise SiteError(f"{target} is a file; the site needs a folder of that name, so move the file away")
         target.parent.mkdir(parents=True, exist_ok=True)
         fresh = Path(tempfile.mkdtemp(prefix=f"{target.name}.new-", dir=target.parent))
         try:

@@ -176,3 +176,11 @@ def test_a_file_of_the_dossiers_name_is_left_out_and_said(project, design, caplo
     folder = write_site(project, design)
     assert "display: none }" not in (folder / "assets" / "dossier.css").read_text(encoding="utf-8")
     assert "assets/dossier.css of the loops folder is left out" in caplog.text
+
+
+def test_a_file_of_the_site_s_name_is_left_alone(project):
+    (project / "site").write_text("precious")
+    with pytest.raises(SiteError, match="is a file"):
+        write_site(project, load_design(project))
+    assert (project / "site").read_text() == "precious"
+    assert left_behind(project) == []
