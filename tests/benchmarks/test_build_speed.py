@@ -55,11 +55,11 @@ def plain_mkdocs(folder, site):
 
 @pytest.mark.parametrize("count", [100, 1000, 3000])
 def test_check_and_build(tmp_path, count):
-    """Cold decisions, firmness included as the commands do it, then a build with warm ones."""
+    """Cold decisions over every processor, firmness apart, then a build with remembered ones."""
     folder = project(tmp_path / "many", count)
     reading, _ = timed(lambda: plain_loader(folder))
-    cold, design = timed(lambda: load_design(folder))
-    warm, design = timed(lambda: load_design(folder))
+    cold, design = timed(lambda: load_design(folder, workers=0, remember=True))
+    warm, design = timed(lambda: load_design(folder, workers=0, remember=True))
     writing, site = timed(lambda: write_site(folder, design))
     print(f"\n{count} loops: plain loader {reading:.2f} s; check cold {cold:.1f} s ({cold / reading:.0f} times), warm {warm:.2f} s; "
           f"pages {writing:.1f} s; build cold {cold + writing:.1f} s, warm {warm + writing:.1f} s")
