@@ -20,7 +20,7 @@ from specgen.view.instruments_page import instruments_table
 from specgen.view.load_page import contributions_table
 from specgen.view.pages import page_views
 from specgen.view.parts_page import parts_table
-from specgen.view.print_page import printed_paths
+from specgen.view.print_page import SITE_CHECKS, panels_own_checks, printed_paths, sheets_are_printed
 from specgen.view.protection_page import protection_table
 from specgen.view.registers import assumptions_table, loops_table, open_points_table
 from specgen.view.schedules import outputs_table
@@ -64,7 +64,8 @@ def files_of(dossier: Dossier) -> dict[str, bytes]:
         article = article_text(view)
         files[view.path] = page_text(view, article).encode()
         if view.path in printed:
-            parts.append(part_of(view, article, printed))
+            shown = panels_own_checks(dossier) if view.path == SITE_CHECKS and not sheets_are_printed(dossier) else view
+            parts.append(part_of(shown, article if shown is view else article_text(shown), printed))
         if view.tag:
             sheets.append(sections_of(view))
     if whole is not None:

