@@ -56,15 +56,18 @@
   /* What a row is called: its own id, else its section and first words; the same from revision to revision. */
   const said = (row) => {
     const first = row.matches("tr") ? row.cells[0] : row.querySelector(".label") || row.querySelector("b") || row;
-    const copy = first.cloneNode(true);
-    for (const part of copy.querySelectorAll(".aside, button, form, .note")) part.remove();
-    return copy.textContent.replace(/\s+/g, " ").trim().slice(0, 120);
+    let text = "";
+    for (const part of first.childNodes) {
+      if (part.nodeType !== Node.ELEMENT_NODE || !part.matches(".aside, button, form, .note")) text += part.textContent;
+    }
+    return text.replace(/\s+/g, " ").trim().slice(0, 120);
   };
   const names = new Map(), taken = new Map();
   const nameOf = (row) => {
+    if (row.id) return row.id;
     const section = row.closest("section");
     const slug = said(row).toLowerCase().replace(/[^\p{L}\p{N}.]+/gu, "-").slice(0, 60);
-    const name = row.id || `${section ? section.getAttribute("aria-labelledby") : "top"}/${slug}`;
+    const name = `${section ? section.getAttribute("aria-labelledby") : "top"}/${slug}`;
     const count = (taken.get(name) || 0) + 1;
     taken.set(name, count);
     return count === 1 ? name : `${name}~${count}`;
@@ -72,22 +75,47 @@
   const rows = [...document.querySelectorAll("main section tbody tr:not(.group), main section .grounds > li, main section .plain > li, main section .f")];
   for (const row of rows) names.set(row, nameOf(row));
 
-  /* As-left fields: a check has one entry wherever it is shown. */
+  /* As-left fields: a check has one entry wherever it is shown. A page of very many checks gets its fields as they come near. */
+  const MOST_AT_ONCE = 4000;
   const fields = [];
-  for (const cell of document.querySelectorAll("td[data-entry]")) {
-    const row = cell.parentElement, what = cell.dataset.entry, key = keyOf("left", "", row.id);
-    const field = make("input", { type: "text", "aria-label": `${what}: ${said(row)}`, autocomplete: "off", maxlength: "200" });
-    const change = () => {
-      const entry = { tag: row.id.split(".")[0], row: row.id, about: said(row), ...get(key), [what]: field.value.trim() };
-      put(key, entry.reading || entry.initials ? entry : null);
-    };
-    field.addEventListener("input", change);
-    cell.append(field);
-    fields.push({ field, key, what });
+  const keyOfCheck = (row) => keyOf("left", "", row.id);
+  const equip = (row) => {
+    if (row.equipped) return;
+    row.equipped = true;
+    const key = keyOfCheck(row), about = said(row);
+    for (const cell of row.querySelectorAll("[data-entry]")) {
+      const what = cell.dataset.entry;
+      const field = make("input", { type: "text", "aria-label": `${what}: ${about}`, autocomplete: "off", maxlength: "200" });
+      const change = () => {
+        const entry = { tag: row.id.split(".")[0], row: row.id, about, ...get(key), [what]: field.value.trim() };
+        put(key, entry.reading || entry.initials ? entry : null);
+      };
+      field.addEventListener("input", change);
+      cell.append(field);
+      fields.push({ field, key, what });
+    }
+  };
+  const checks = rows.filter((row) => row.lastElementChild?.matches("[data-entry]"));
+  if (checks.length * 2 <= MOST_AT_ONCE) checks.forEach(equip);
+  else {
+    const near = new IntersectionObserver((seen) => {
+      for (const one of seen) {
+        if (!one.isIntersecting) continue;
+        near.unobserve(one.target);
+        equip(one.target);
+      }
+      show();
+    }, { rootMargin: "1500px" });
+    for (const row of checks) near.observe(row);
   }
-  const fill = () => {
+  const fill = (entries) => {
+    for (const entry of entries.values()) {
+      const row = entry.row && !entry.page ? document.getElementById(entry.row) : null;
+      if (row && row.querySelector("[data-entry]")) equip(row);
+    }
     for (const { field, key, what } of fields) {
-      if (document.activeElement !== field) field.value = (get(key) || {})[what] || "";
+      const text = (entries.get(key) || {})[what] || "";
+      if (document.activeElement !== field && field.value !== text) field.value = text;
     }
   };
 
@@ -192,16 +220,18 @@
     const entries = every(), fresh = entries.filter((one) => !one.entry.exported);
     exporter.hidden = entries.length === 0;
     exporter.textContent = fresh.length ? `Export ${fresh.length} unexported` : "Export notes";
-    const mine = fresh.filter((one) => (tag ? one.entry.tag === tag : one.entry.page === page || fields.some((field) => field.key === one.key)));
+    const mine = fresh.filter(({ entry }) => (tag ? entry.tag === tag : entry.page ? entry.page === page : document.getElementById(entry.row)));
     const notes = mine.filter((one) => one.kind === "note").length, readings = mine.length - notes;
     const parts = [notes && counted(notes, "note"), readings && counted(readings, "reading")].filter(Boolean);
     const words = parts.length ? `Not exported yet from this page: ${parts.join(" and ")}.` : "";
     if (mark.textContent !== words) mark.textContent = words;
   };
   const show = () => {
-    fill();
+    const entries = new Map(every().map(({ key, entry }) => [key, entry]));
+    fill(entries);
     for (const row of rows) {
-      if (!homes.has(row) || !homes.get(row).querySelector("form")) draw(row);
+      const box = homes.get(row);
+      if (box ? !box.querySelector("form") : entries.size && entries.has(keyFor(row))) draw(row);
     }
     tell();
   };

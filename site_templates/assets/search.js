@@ -21,8 +21,8 @@
     shared = part.shared || shared;
     for (const [name, rows] of Object.entries(part.rows)) index[name] = index[name].concat(rows);
     loaded += 1;
-    if (loaded < files) load(loaded);
-    show();
+    if (part.files) for (let number = 1; number < files; number += 1) load(number);
+    if (loaded === 1 || loaded === files) show();
   };
   const load = (number) => {
     const failed = () => { status.textContent = "The index of this dossier could not be read."; };
