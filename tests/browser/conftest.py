@@ -28,7 +28,7 @@ def browser_path():
         pytest.skip(str(error))
 
 
-@pytest.fixture(scope="session")
+@pytest.fixture(scope="module")  # two of these cannot be open at once, and other folders have one of their own
 def chromium(browser_path):
     from playwright.sync_api import sync_playwright  # noqa: PLC0415  an extra of the developers
 
