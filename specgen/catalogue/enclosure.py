@@ -5,9 +5,8 @@ from dataclasses import dataclass
 from functools import cache
 from typing import Annotated, TypeVar
 
-from specgen.catalogue.load import Known
 from specgen.catalogue.rows import Practice
-from specgen.catalogue.table import CatalogueError, table
+from specgen.catalogue.table import CatalogueError, Known, known_rows
 from specgen.core.quantity import Quantity
 from specgen.model.fields import Length, Model, Number, Text, Written
 
@@ -98,11 +97,7 @@ def enclosure_tables() -> EnclosureTables:
     CatalogueError
         A table is broken.
     """
-    air = sorted(_known("air_factors", AirFactor), key=lambda known: known.value.up_to)
+    air = sorted(known_rows("air_factors", AirFactor), key=lambda known: known.value.up_to)
     return EnclosureTables(
-        _known("enclosure_surfaces", Faces), _known("enclosure_walls", Wall), tuple(air), _known("panel_practice", Practice)
+        known_rows("enclosure_surfaces", Faces), known_rows("enclosure_walls", Wall), tuple(air), known_rows("panel_practice", Practice)
     )
-
-
-def _known(name: str, model: type[M]) -> tuple[Known[M], ...]:
-    return tuple(Known(row.typed(model), row) for row in table(name))

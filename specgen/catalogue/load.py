@@ -4,7 +4,7 @@ from collections.abc import Iterator
 from dataclasses import dataclass, replace
 from functools import cache, lru_cache
 from itertools import pairwise
-from typing import Generic, TypeVar
+from typing import TypeVar
 
 from specgen.catalogue.rows import (
     Converter,
@@ -18,7 +18,7 @@ from specgen.catalogue.rows import (
     Practice,
     TypicalOutput,
 )
-from specgen.catalogue.table import CatalogueError, Row, catalogue_digest, table, table_names
+from specgen.catalogue.table import CatalogueError, Known, Row, catalogue_digest, known_rows, row_named, table, table_names
 from specgen.catalogue.wiring import Wiring, read_wiring
 from specgen.core.diagnostic import Diagnostic
 from specgen.model.devices import Contactor, Devices, PowerController, Relay, SolidState
@@ -29,14 +29,6 @@ __all__ = ["Catalogue", "CatalogueError", "Known", "catalogue_digest", "load_cat
 
 M = TypeVar("M", bound=Model)
 CLASSES = ("contactors", "relays", "ssrs", "power_controllers")
-
-
-@dataclass(frozen=True, slots=True)
-class Known(Generic[M]):
-    """A typed row with the row it came from, so that a figure can name its source."""
-
-    value: M
-    row: Row
 
 
 @dataclass(frozen=True, slots=True)
@@ -78,10 +70,7 @@ class Catalogue:
         >>> load_catalogue().practice("relay_coil_share_ac").value.quantity
         0.2
         """
-        for known in self.practices:
-            if known.row.id == f"practice/{name}":
-                return known
-        raise CatalogueError(f"there is no practice/{name}")
+        return row_named(self.practices, f"practice/{name}")
 
     def converter(self, kind: str) -> Known[Converter]:
         """Return the typical error of a controller's input.
@@ -192,25 +181,21 @@ def _packaged() -> Catalogue:
         relays=_devices("relays", Relay),
         ssrs=_devices("ssrs", SolidState),
         power_controllers=_devices("power_controllers", PowerController),
-        outputs=_known("controller_outputs", TypicalOutput),
-        platinum_classes=_known("platinum_classes", PlatinumClass),
-        platinum_ranges=_known("platinum_ranges", PlatinumRange),
-        platinum=_known("platinum_functions", PlatinumFunction)[0],
-        couple_classes=_known("couple_classes", CoupleClass),
-        couple_functions=_known("couple_functions", CoupleFunction),
-        motors=_known("motors", MotorProduct),
-        converters=_known("converters", Converter),
-        flicker=_known("flicker", FlickerPoint),
-        practices=_known("practice", Practice),
+        outputs=known_rows("controller_outputs", TypicalOutput),
+        platinum_classes=known_rows("platinum_classes", PlatinumClass),
+        platinum_ranges=known_rows("platinum_ranges", PlatinumRange),
+        platinum=known_rows("platinum_functions", PlatinumFunction)[0],
+        couple_classes=known_rows("couple_classes", CoupleClass),
+        couple_functions=known_rows("couple_functions", CoupleFunction),
+        motors=known_rows("motors", MotorProduct),
+        converters=known_rows("converters", Converter),
+        flicker=known_rows("flicker", FlickerPoint),
+        practices=known_rows("practice", Practice),
         wiring=read_wiring(),
         rows=tuple(row for name in table_names() for row in table(name)),
     )
 
 
-def _known(name: str, model: type[M]) -> tuple[Known[M], ...]:
-    return tuple(Known(row.typed(model), row) for row in table(name))
-
-
 def _devices(name: str, model: type[M]) -> tuple[M, ...]:
     # a device keeps its source for the schedules; the row's standing is part of it
-    return tuple(known.value.model_copy(update={"source": f"{known.row.source}: {known.row.id}"}) for known in _known(name, model))
+    return tuple(known.value.model_copy(update={"source": f"{known.row.source}: {known.row.id}"}) for known in known_rows(name, model))

@@ -1,13 +1,13 @@
 """Packaged tables: rows of YAML with their source, edition and standing, checked on loading."""
 
 import re
-from collections.abc import Mapping
+from collections.abc import Iterable, Mapping
 from dataclasses import dataclass
 from functools import cache
 from hashlib import sha256
 from importlib.resources import files
 from importlib.resources.abc import Traversable
-from typing import Literal, TypeVar, get_args
+from typing import Generic, Literal, TypeVar, get_args
 
 from specgen.model.fields import Model
 from specgen.model.reader import read_model
@@ -158,3 +158,36 @@ def catalogue_digest() -> str:
 
 def _folder() -> Traversable:
     return files("specgen.catalogue").joinpath("data")
+
+
+@dataclass(frozen=True, slots=True)
+class Known(Generic[M]):
+    """A typed row with the row it came from, so that a figure can name its source."""
+
+    value: M
+    row: Row
+
+
+def known_rows(name: str, model: type[M]) -> tuple[Known[M], ...]:
+    """Return every row of a table, typed.
+
+    Raises
+    ------
+    CatalogueError
+        As :func:`table` and :meth:`Row.typed`.
+    """
+    return tuple(Known(row.typed(model), row) for row in table(name))
+
+
+def row_named(rows: Iterable[Known[M]], name: str) -> Known[M]:
+    """Return the row of a name.
+
+    Raises
+    ------
+    CatalogueError
+        There is none: a mistake in specgen itself.
+    """
+    for known in rows:
+        if known.row.id == name:
+            return known
+    raise CatalogueError(f"there is no {name}")

@@ -2,10 +2,10 @@
 
 from collections.abc import Iterable
 from dataclasses import dataclass
-from typing import Annotated, Generic, Literal, TypeVar
+from typing import Annotated, Literal, TypeVar
 
 from specgen.catalogue.rows import Practice
-from specgen.catalogue.table import CatalogueError, Row, table
+from specgen.catalogue.table import Known, known_rows, row_named
 from specgen.core.quantity import Quantity
 from specgen.model.fields import Count, Current, Model, Number, Temperature, Text, Written
 
@@ -74,27 +74,19 @@ class SemiconductorFuse(Model):
 
 
 @dataclass(frozen=True, slots=True)
-class Listed(Generic[M]):
-    """A typed row with the row it came from."""
-
-    value: M
-    row: Row
-
-
-@dataclass(frozen=True, slots=True)
 class Wiring:
     """Everything that is looked up for conductors and protection, each table in rising order."""
 
-    conductors: tuple[Listed[ConductorRow], ...]
-    ambient: tuple[Listed[AmbientFactor], ...]
-    grouping: tuple[Listed[GroupingFactor], ...]
-    ratings: tuple[Listed[ProtectiveRating], ...]
-    curves: tuple[Listed[TripCurve], ...]
-    starters: tuple[Listed[MotorStarter], ...]
-    semiconductor_fuses: tuple[Listed[SemiconductorFuse], ...]
-    figures: tuple[Listed[Practice], ...]
+    conductors: tuple[Known[ConductorRow], ...]
+    ambient: tuple[Known[AmbientFactor], ...]
+    grouping: tuple[Known[GroupingFactor], ...]
+    ratings: tuple[Known[ProtectiveRating], ...]
+    curves: tuple[Known[TripCurve], ...]
+    starters: tuple[Known[MotorStarter], ...]
+    semiconductor_fuses: tuple[Known[SemiconductorFuse], ...]
+    figures: tuple[Known[Practice], ...]
 
-    def figure(self, name: str) -> Listed[Practice]:
+    def figure(self, name: str) -> Known[Practice]:
         """Return a single figure.
 
         Raises
@@ -107,12 +99,9 @@ class Wiring:
         >>> read_wiring().figure("voltage_drop").value.quantity
         0.05
         """
-        for listed in self.figures:
-            if listed.row.id == f"wiring/{name}":
-                return listed
-        raise CatalogueError(f"there is no wiring/{name}")
+        return row_named(self.figures, f"wiring/{name}")
 
-    def sizes(self, method: Method) -> tuple[Listed[ConductorRow], ...]:
+    def sizes(self, method: Method) -> tuple[Known[ConductorRow], ...]:
         """Return the conductors of a method, the smallest first.
 
         Examples
@@ -122,7 +111,7 @@ class Wiring:
         """
         return tuple(listed for listed in self.conductors if listed.value.method == method)
 
-    def preferred(self, device: ProtectiveDevice) -> tuple[Listed[ProtectiveRating], ...]:
+    def preferred(self, device: ProtectiveDevice) -> tuple[Known[ProtectiveRating], ...]:
         """Return the rated currents of a kind of protective device, the smallest first."""
         return tuple(listed for listed in self.ratings if listed.value.device == device)
 
@@ -136,20 +125,16 @@ def read_wiring() -> Wiring:
         A table is broken.
     """
     return Wiring(
-        conductors=_rising((*_listed("conductors", ConductorRow), *_listed("conductors_awg", ConductorRow)), "size"),
-        ambient=_rising(_listed("ambient_factors", AmbientFactor), "up_to"),
-        grouping=_rising(_listed("grouping_factors", GroupingFactor), "circuits"),
-        ratings=_rising(_listed("protective_ratings", ProtectiveRating), "rating"),
-        curves=_rising(_listed("trip_curves", TripCurve), "holds"),
-        starters=_rising(_listed("motor_starters", MotorStarter), "highest"),
-        semiconductor_fuses=_rising(_listed("semiconductor_fuses", SemiconductorFuse), "rating"),
-        figures=_listed("wiring", Practice),
+        conductors=_rising((*known_rows("conductors", ConductorRow), *known_rows("conductors_awg", ConductorRow)), "size"),
+        ambient=_rising(known_rows("ambient_factors", AmbientFactor), "up_to"),
+        grouping=_rising(known_rows("grouping_factors", GroupingFactor), "circuits"),
+        ratings=_rising(known_rows("protective_ratings", ProtectiveRating), "rating"),
+        curves=_rising(known_rows("trip_curves", TripCurve), "holds"),
+        starters=_rising(known_rows("motor_starters", MotorStarter), "highest"),
+        semiconductor_fuses=_rising(known_rows("semiconductor_fuses", SemiconductorFuse), "rating"),
+        figures=known_rows("wiring", Practice),
     )
 
 
-def _listed(name: str, model: type[M]) -> tuple[Listed[M], ...]:
-    return tuple(Listed(row.typed(model), row) for row in table(name))
-
-
-def _rising(rows: Iterable[Listed[M]], field: str) -> tuple[Listed[M], ...]:
+def _rising(rows: Iterable[Known[M]], field: str) -> tuple[Known[M], ...]:
     return tuple(sorted(rows, key=lambda listed: float(getattr(listed.value, field))))

@@ -9,11 +9,12 @@ from specgen.process.loop_dynamics import Dynamics
 from specgen.process.time_proportioned import predict_ripple
 from specgen.process.tuning import NothingLimitsTheGainError, Settings, cycle_delay, simc
 from specgen.rules.base import Case
+from specgen.sizing.contact_life import years_of_life
 from specgen.sizing.scan import scan_and_pulse
 from specgen.sizing.settings import ProportionedSettings
 from specgen.sizing.simulated import LoadCase
 from specgen.sizing.starting_values import Hardest, hardest_case, with_choice
-from specgen.sizing.wear import HOUR, hours_per_year, life_in_years, weakest
+from specgen.sizing.wear import HOUR, hours_per_year, weakest
 
 HALF = 0.5  # a cycle's delay is at least half of it
 Sudden = tuple[LoadCase, float, float]
@@ -53,7 +54,7 @@ class Pulsed:
             return None
         more = error_of(self._case) + deviation
         above, below, swing = self._ripples(cycle)
-        life = None if self._lasts is None else life_in_years(self._lasts, self._hours * HOUR / cycle)
+        life = None if self._lasts is None else years_of_life(self._lasts, self._hours * HOUR / cycle)
         return TradePoint(
             cycle, above + more, below + more, swing, settings.lowest_duty * cycle,
             (1 - settings.highest_duty) * cycle, HOUR / cycle, life,

@@ -8,8 +8,9 @@ from specgen.process.limit_cycle import Cycle, NoCycle
 from specgen.process.on_off import STARTS, Setting, switch_points
 from specgen.process.plant import ProcessModel
 from specgen.rules.base import Case
+from specgen.sizing.contact_life import years_of_life
 from specgen.sizing.settings import OnOffSettings
-from specgen.sizing.wear import hours_per_year, life_in_years, weakest
+from specgen.sizing.wear import hours_per_year, weakest
 
 
 def _worst_at(box: Box, settings: OnOffSettings, differential: float) -> list[ProcessModel]:
@@ -65,7 +66,7 @@ class Switched:
         up, down = max(0.0, *(c.peak for c in cycles)), max(0.0, *(-c.trough for c in cycles))
         above, below = (up, down) if self._box.sign > 0 else (down, up)
         starts = max(c.starts_per_hour for c in cycles) + self._defrosts
-        life = None if self._lasts is None else life_in_years(self._lasts, starts * self._hours)
+        life = None if self._lasts is None else years_of_life(self._lasts, starts * self._hours)
         return TradePoint(
             differential, above + error, below + error, max(c.swing for c in cycles), min(c.t_on for c in bare), min(c.t_off for c in bare),
             starts, life,

@@ -3,8 +3,8 @@
 from dataclasses import dataclass
 
 from specgen.catalogue.load import Catalogue
-from specgen.catalogue.table import Row
-from specgen.catalogue.wiring import AmbientFactor, ConductorRow, GroupingFactor, Listed, Method
+from specgen.catalogue.table import Known, Row
+from specgen.catalogue.wiring import AmbientFactor, ConductorRow, GroupingFactor, Method
 from specgen.core.figure import Figure
 from specgen.sizing.candidate import Unsized
 from specgen.sizing.connection import Connection
@@ -105,7 +105,7 @@ def conductor_for(duty: Duty, installed: Installed, part: str, catalogue: Catalo
     return Unsized(f"no conductor listed carries {duty.carry:.3g} A by method {installed.method} at {installed.ambient:g} °C{ruled_out}")
 
 
-def corrections(installed: Installed, catalogue: Catalogue) -> tuple[Listed[AmbientFactor], Listed[GroupingFactor] | None] | Unsized:
+def corrections(installed: Installed, catalogue: Catalogue) -> tuple[Known[AmbientFactor], Known[GroupingFactor] | None] | Unsized:
     """Return the rows that correct for ambient and grouping; between two rows the worse one. No grouping row for a single circuit."""
     basis = "north_america" if installed.method == "awg" else "iec"
     warm = next((f for f in catalogue.wiring.ambient if f.value.basis == basis and f.value.up_to >= installed.ambient), None)
@@ -121,8 +121,8 @@ def corrections(installed: Installed, catalogue: Catalogue) -> tuple[Listed[Ambi
 
 
 def _made(
-    listed: Listed[ConductorRow], capacity: float, drop: Figure | None, installed: Installed, part: str, warm: Listed[AmbientFactor],
-    group: Listed[GroupingFactor] | None, catalogue: Catalogue,
+    listed: Known[ConductorRow], capacity: float, drop: Figure | None, installed: Installed, part: str, warm: Known[AmbientFactor],
+    group: Known[GroupingFactor] | None, catalogue: Catalogue,
 ) -> Conductor:  # fmt: skip
     row = listed.value
     given = {"I_0": (float(row.capacity), "current"), "k_t": (float(warm.value.factor), "number")}

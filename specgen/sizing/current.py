@@ -3,8 +3,9 @@
 from dataclasses import dataclass
 from math import sqrt
 
-from specgen.catalogue.load import Catalogue, Known
+from specgen.catalogue.load import Catalogue
 from specgen.catalogue.rows import MotorProduct
+from specgen.catalogue.table import Known
 from specgen.core.figure import Figure
 from specgen.core.quantity import Range
 from specgen.model.element import (

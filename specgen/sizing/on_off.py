@@ -12,13 +12,14 @@ from specgen.process.fault_cases import FaultCase, warm_up
 from specgen.process.limit_cycle import SECONDS_AN_HOUR, NoCycle
 from specgen.process.on_off import OnOffPrediction, predict_on_off
 from specgen.sizing.candidate import Assumption, Unsized
+from specgen.sizing.contact_life import years_of_life
 from specgen.sizing.device import DeviceChoice
 from specgen.sizing.flicker import Flicker, flicker_of
 from specgen.sizing.measurement import MeasuringError
 from specgen.sizing.remembered import remembered
 from specgen.sizing.rounding import chosen_differential
 from specgen.sizing.settings import Bound, OnOffSettings, Placement
-from specgen.sizing.wear import allowed_per_hour, hours_per_year, life_in_years, weakest
+from specgen.sizing.wear import allowed_per_hour, hours_per_year, weakest
 
 CYCLE = "settled on-off cycle in the worst case of the declared ranges; compared with numerical integration in tests/process"
 _widest_differential = remembered(widest_differential)
@@ -73,7 +74,7 @@ def _settled(
     starts = enforced.starts_per_hour.value + _defrosts(loop)
     operations = starts * hours_per_year(loop, panel)
     last = weakest(device)
-    life = life_in_years(last.operations, operations) if last else None
+    life = years_of_life(last.operations, operations) if last else None
     setpoint = float(loop.need.setpoint)
     made = OnOffSettings(
         differential=differential, placement=placement, switch_on=setpoint + enforced.switch_on, switch_off=setpoint + enforced.switch_off,

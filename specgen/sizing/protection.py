@@ -4,8 +4,8 @@ from dataclasses import dataclass
 from typing import Literal
 
 from specgen.catalogue.load import Catalogue
-from specgen.catalogue.table import Row
-from specgen.catalogue.wiring import Basis, Listed, ProtectiveDevice, TripCurve
+from specgen.catalogue.table import Known, Row
+from specgen.catalogue.wiring import Basis, ProtectiveDevice, TripCurve
 from specgen.core.figure import Figure
 from specgen.model.traits import Traits
 from specgen.sizing.candidate import Assumption, Unsized
@@ -109,7 +109,7 @@ def _breaker(
     return Unsized(f"no circuit breaker carries {sized_for:.3g} A")
 
 
-def _curves(load: LoadCurrent, traits: Traits, catalogue: Catalogue) -> tuple[Listed[TripCurve], ...]:
+def _curves(load: LoadCurrent, traits: Traits, catalogue: Catalogue) -> tuple[Known[TripCurve], ...]:
     """Return the curves worth trying: from B for plain resistance, C for coils and drives, D for transformers and lamps."""
     first = 0 if traits.resistive_power else 1
     if load.category in _TRANSFORMER_LIKE:

@@ -17,17 +17,6 @@ def up_to_step(value: float, step: float) -> float:
     return max(1, ceil(value / step - SLACK)) * step
 
 
-def nearest_step(value: float, step: float) -> float:
-    """Round to the nearest multiple of a setting step.
-
-    Examples
-    --------
-    >>> round(nearest_step(88.04, 0.1), 9), nearest_step(-1.26, 0.5)
-    (88.0, -1.5)
-    """
-    return round(round(value / step) * step, 12)
-
-
 def chosen_differential(least: float, most: float, step: float, *, even: bool) -> float:
     """Return the geometric mean of least and most on the setting step, never outside the two.
 

@@ -2,8 +2,9 @@
 
 from dataclasses import dataclass
 
-from specgen.catalogue.load import Catalogue, Known
+from specgen.catalogue.load import Catalogue
 from specgen.catalogue.rows import Converter, CoupleClass
+from specgen.catalogue.table import Known
 from specgen.core.figure import Figure
 from specgen.core.quantity import Range
 from specgen.model.sensor import ResistanceSensor, Sensor, Thermistor, Thermocouple, Transmitter

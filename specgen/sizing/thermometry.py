@@ -2,8 +2,9 @@
 
 from math import exp
 
-from specgen.catalogue.load import Catalogue, Known
+from specgen.catalogue.load import Catalogue
 from specgen.catalogue.rows import CoupleFunction
+from specgen.catalogue.table import Known
 from specgen.sizing.candidate import Unsized
 
 ZERO_KELVIN = -273.15  # degC

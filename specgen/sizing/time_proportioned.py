@@ -10,6 +10,7 @@ from specgen.process.limit_cycle import NoCycle
 from specgen.process.time_proportioned import longest_cycle, predict_ripple
 from specgen.process.tuning import Pulse
 from specgen.sizing.candidate import Assumption, Candidate, Unsized
+from specgen.sizing.contact_life import years_of_life
 from specgen.sizing.device import DeviceChoice
 from specgen.sizing.flicker import Flicker, OutOfScope, flicker_of
 from specgen.sizing.measurement import MeasuringError
@@ -20,7 +21,7 @@ from specgen.sizing.scan import scan_and_pulse
 from specgen.sizing.settings import Bound, ProportionedSettings
 from specgen.sizing.simulated import SuddenLoad, estimated_deviation, load_share, simulated_deviation, tuning_later, tuning_of
 from specgen.sizing.starting_values import Hardest, Start, hardest_case, start_of
-from specgen.sizing.wear import HOUR, hours_per_year, life_in_years, weakest
+from specgen.sizing.wear import HOUR, hours_per_year, weakest
 
 LOW, HIGH = 0.05, 0.95  # C4 looks at these where the declared duties do not go as far
 RESOLUTION = 0.01  # a duty below this is carried over and not asked of the device
@@ -239,7 +240,7 @@ def _result(
     tuning = (tuning_of if job.told else tuning_later)(start, job.box, job.loop, deviation)
     operations = hours_per_year(job.loop, job.panel) * HOUR / cycle
     last = weakest(job.device)
-    life = life_in_years(last.operations, operations) if last else None
+    life = years_of_life(last.operations, operations) if last else None
     hours = hours_per_year(job.loop, job.panel)
     figures = () if not job.told else (
         *bound_figures(bounds),

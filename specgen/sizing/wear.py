@@ -1,7 +1,6 @@
 """How long the contacts of a chain last, and which of them ends first."""
 
 from dataclasses import dataclass
-from math import inf
 
 from specgen.model.loop import Loop
 from specgen.model.panel import Panel
@@ -30,11 +29,6 @@ def weakest(device: DeviceChoice | Unsized) -> Weakest | None:
 def hours_per_year(loop: Loop, panel: Panel) -> float:
     """Return the running time of the loop in a year [h]."""
     return (loop.need.duty or panel.duty).seconds_per_year / HOUR
-
-
-def life_in_years(operations: float, operations_per_year: float) -> float:
-    """Return how long a contact lasts [year]; infinite where it never operates."""
-    return operations / operations_per_year if operations_per_year > 0 else inf
 
 
 def allowed_per_hour(operations: float, panel: Panel, loop: Loop) -> float:

@@ -173,10 +173,6 @@ class Writer:
         """Write a predicted difference; never rounded back to a limit that it passes."""
         return join(self.excursion_number(change, limit), self.change_unit)
 
-    def allowed_number(self, change: float) -> str:
-        """Write a declared difference without its unit."""
-        return digits(change * self.phrasing.change.scale, 4)
-
     def bare(self, value: float, significant: int = 3) -> str:
         """Write any number without a unit."""
         return digits(value, significant)

@@ -5,8 +5,9 @@ from math import inf
 import pytest
 
 from specgen.sizing.candidate import Unsized
+from specgen.sizing.contact_life import years_of_life
 from specgen.sizing.device import Contact, DeviceChoice
-from specgen.sizing.wear import allowed_per_hour, hours_per_year, life_in_years, weakest
+from specgen.sizing.wear import allowed_per_hour, hours_per_year, weakest
 
 
 def contact(what, life):
@@ -34,8 +35,8 @@ def test_hours_of_the_loop_or_the_panel(loop, panel):
 
 
 def test_a_million_operations_at_100000_a_year_are_ten_years():
-    assert life_in_years(1e6, 1e5) == pytest.approx(10)
-    assert life_in_years(1e6, 0.0) == inf
+    assert years_of_life(1e6, 1e5) == pytest.approx(10)
+    assert years_of_life(1e6, 0.0) == inf
 
 
 @pytest.mark.parametrize(("operations", "years"), [(1e5, 10), (2.5e6, 15), (4e4, 1)])
@@ -43,4 +44,4 @@ def test_what_is_allowed_an_hour_gives_the_life_asked_for(loop, panel, operation
     """ISO 13849-1 annex C: n_op from hours, days and the time between operations; the same arithmetic backwards."""
     rate = allowed_per_hour(operations, panel(house={"contact_life": f"{years} year"}), loop())
     assert rate == pytest.approx(operations / years / 4000)
-    assert life_in_years(operations, rate * 4000) == pytest.approx(years)
+    assert years_of_life(operations, rate * 4000) == pytest.approx(years)

@@ -40,10 +40,6 @@ class Layout:
         """Tell whether the circuit has a bus of its own."""
         return self.feed is not None
 
-    def top_of(self, mark: Mark) -> float:
-        """Return where a mark begins."""
-        return self.centres[mark.row] - mark.half
-
     def foot_of(self, mark: Mark) -> float:
         """Return where a mark ends."""
         return self.centres[mark.row] + mark.half
